@@ -1,0 +1,1 @@
+"""Quantum-chemistry engines, records, the runner."""

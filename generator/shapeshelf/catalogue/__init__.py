@@ -1,0 +1,1 @@
+"""YAML files to frozen entries, every problem with file and line."""

@@ -1,0 +1,1 @@
+"""Lewis count, delocalisation, electron domains, placement, repulsion."""

@@ -1,0 +1,1 @@
+"""Projection, palette, drawing: the one room that speaks matplotlib."""

@@ -1,0 +1,1 @@
+"""Vectors, polyhedra, three-dimensional assembly, point group."""

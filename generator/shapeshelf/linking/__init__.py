@@ -1,0 +1,1 @@
+"""Permanent addresses, protocol checks, releases."""

@@ -1,0 +1,1 @@
+"""Report to HTML, JSON, CSV and the lookup index."""

@@ -1,0 +1,1 @@
+"""Hybridisation, polarity, expected spectra."""

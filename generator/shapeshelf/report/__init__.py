@@ -1,0 +1,1 @@
+"""Entry to one frozen report: everything known about a compound."""

@@ -1,0 +1,115 @@
+"""The report: one frozen record that pages, figures and JSON read and nothing computes twice."""
+
+from dataclasses import dataclass
+from enum import StrEnum
+
+from shapeshelf.catalogue.model import Entry, Measurement
+from shapeshelf.domains.model import Centre, LewisCount
+from shapeshelf.geometry.model import ShapeDeviation, Structure, Symmetry
+from shapeshelf.properties.model import DipoleModel, ExpectedSpectra, Hybridisation
+from shapeshelf.structure.molecule import Molecule
+
+
+class Basis(StrEnum):
+    """What a shown value rests on, best first."""
+
+    MEASURED = "measured"
+    CALCULATED = "calculated"
+    MODEL = "model"
+
+
+@dataclass(frozen=True, slots=True)
+class Value:
+    """A number with every basis it has; ``value`` is the best of them."""
+
+    value: float
+    uncertainty: float | None
+    basis: Basis
+    model: float | None
+    model_uncertainty: float | None
+    calculated: float | None
+    calculated_uncertainty: float | None
+    measured: float | None
+    measured_uncertainty: float | None
+    source: str | None
+    """Key of the measured value's source, the calculation's method, or the model's name."""
+    measurement: Measurement | None = None
+
+
+@dataclass(frozen=True, slots=True)
+class AngleRow:
+    """One set of symmetry-equivalent angles at a centre."""
+
+    of: str
+    """``F(ax)-S-F(ax)``, the label that measured values refer to."""
+    atoms: tuple[int, int, int]
+    """One member of the set."""
+    members: tuple[tuple[int, int, int], ...]
+    ideal_degrees: float | None
+    degrees: Value
+
+
+@dataclass(frozen=True, slots=True)
+class LengthRow:
+    """One set of symmetry-equivalent bonds."""
+
+    of: str
+    """``S-F(ax)``."""
+    atoms: tuple[int, int]
+    members: tuple[tuple[int, int], ...]
+    bond_order: float
+    angstrom: Value
+
+
+@dataclass(frozen=True, slots=True)
+class CentreReport:
+    """One centre, with all that any room knows of it."""
+
+    centre: Centre
+    atom_label: str
+    ligand_labels: dict[int, str]
+    """Label of each neighbour as printed in ``of``: ``F(ax)``."""
+    shape: str | None
+    polyhedral_symbol: str | None
+    angles: tuple[AngleRow, ...]
+    hybridisation: Hybridisation | None
+    deviation: ShapeDeviation | None
+    equivalent: tuple[int, ...]
+    """Atoms whose centres are equivalent to this one, itself included."""
+
+
+@dataclass(frozen=True, slots=True)
+class Caution:
+    """One line of safety: an H-statement, or a rule that the structure triggers."""
+
+    code: str | None
+    text: str
+
+
+@dataclass(frozen=True, slots=True)
+class CompoundReport:
+    """Everything known about one compound."""
+
+    id: str | None
+    name: str
+    entry: Entry | None
+    molecule: Molecule
+    lewis: LewisCount
+    structure: Structure
+    symmetry: Symmetry
+    centres: tuple[CentreReport, ...]
+    shape: str | None
+    point_group: str
+    point_group_basis: Basis
+    lengths: tuple[LengthRow, ...]
+    dipole_model: DipoleModel
+    dipole_debye: Value | None
+    """``None`` for an ion."""
+    spectra: ExpectedSpectra
+    molar_mass_g_mol: float
+    topological_polar_surface_area: float | None
+    """Å², organics only."""
+    crippen_log_p: float | None
+    cautions: tuple[Caution, ...]
+    unmatched: tuple[Measurement, ...] = ()
+    """Measured values whose label fits nothing in the structure."""

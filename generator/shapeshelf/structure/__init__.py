@@ -1,0 +1,1 @@
+"""Entry to molecule: the one room that speaks RDKit."""
