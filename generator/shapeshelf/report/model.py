@@ -15,6 +15,8 @@ class Basis(StrEnum):
 
     MEASURED = "measured"
     CALCULATED = "calculated"
+    SUPPLIED = "supplied"
+    """Read off the coordinates that the entry supplies."""
     MODEL = "model"
 
 
@@ -34,6 +36,7 @@ class Value:
     source: str | None
     """Key of the measured value's source, the calculation's method, or the model's name."""
     measurement: Measurement | None = None
+    supplied: float | None = None
 
 
 @dataclass(frozen=True, slots=True)
@@ -47,6 +50,8 @@ class AngleRow:
     members: tuple[tuple[int, int, int], ...]
     ideal_degrees: float | None
     degrees: Value
+    labels: tuple[str, ...]
+    """Every spelling that means this row, ``of`` first."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -59,6 +64,7 @@ class LengthRow:
     members: tuple[tuple[int, int], ...]
     bond_order: float
     angstrom: Value
+    labels: tuple[str, ...]
 
 
 @dataclass(frozen=True, slots=True)

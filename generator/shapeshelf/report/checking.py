@@ -1,0 +1,77 @@
+"""A whole catalogue worked out: every report, and every problem only chemistry can see.
+
+The catalogue room finds what is wrong in the text; here structures are read, formulas held
+against them and measured labels against the angles and bonds that exist.
+"""
+
+from difflib import get_close_matches
+from pathlib import Path
+
+from shapeshelf.catalogue.model import Catalogue, Entry, Measurement, Quantity
+from shapeshelf.catalogue.problems import problem_at
+from shapeshelf.catalogue.reading import read_catalogue
+from shapeshelf.errors import AnalysisError, CatalogueError, Problem, StructureError
+from shapeshelf.report.building import report_on_entry
+from shapeshelf.report.model import CompoundReport
+from shapeshelf.structure.formulas import formulas_agree
+
+
+def report_on_catalogue(root: Path) -> tuple[Catalogue, tuple[CompoundReport, ...]]:
+    """Return the catalogue below ``root`` and one report an entry, in order of id.
+
+    Raises CatalogueError with every problem of the run, of text and of chemistry alike.
+    """
+    catalogue, problems = read_catalogue_with_problems(root)
+    reports = []
+    for entry in catalogue.entries:
+        found = _report_or_problems(entry)
+        if isinstance(found, CompoundReport):
+            reports.append(found)
+        else:
+            problems += found
+    if problems:
+        raise CatalogueError(tuple(problems))
+    return catalogue, tuple(reports)
+
+
+def _report_or_problems(entry: Entry) -> CompoundReport | list[Problem]:
+    try:
+        report = report_on_entry(entry)
+    except (StructureError, AnalysisError) as error:
+        return [problem_at(entry, "structure", str(error))]
+    problems = _formula_problems(entry, report) + _label_problems(entry, report)
+    return problems or report
+
+
+def _formula_problems(entry: Entry, report: CompoundReport) -> list[Problem]:
+    if entry.formula is None or formulas_agree(entry.formula, report.molecule):
+        return []
+    return [
+        problem_at(
+            entry,
+            "formula",
+            f"{entry.formula} disagrees with the structure, which is {report.molecule.formula}",
+        )
+    ]
+
+
+def _label_problems(entry: Entry, report: CompoundReport) -> list[Problem]:
+    return [_label_problem(entry, report, item) for item in report.unmatched]
+
+
+def _label_problem(entry: Entry, report: CompoundReport, item: Measurement) -> Problem:
+    labels = _labels(report, item.quantity)
+    near = get_close_matches(item.of or "", labels, n=1, cutoff=0.0) or ["none"]
+    number = entry.measured.index(item)
+    return problem_at(
+        entry,
+        f"measured[{number}].of",
+        f"{item.of} names no {item.quantity} of this structure; nearest is {near[0]} "
+        f"(all: {', '.join(labels) or 'none'})",
+    )
+
+
+def _labels(report: CompoundReport, quantity: Quantity) -> list[str]:
+    if quantity is Quantity.LENGTH:
+        return [row.of for row in report.lengths]
+    return [row.of for centre in report.centres for row in centre.angles]

@@ -1,0 +1,192 @@
+"""Angles and lengths of a molecule, gathered into rows of equivalent ones.
+
+* E1  Two angles (or bonds) share a row where an operation of the point group carries one onto
+  the other.
+* E2  So do two of the same label that the model cannot tell apart: the hydrogens of a methyl
+  group differ only by a rotation that is free.
+* E3  Ligands are alike as seen from their centre where the bond graph gives them one class and
+  they make the same angles there.
+* E4  Rows of one label that stay apart: the smallest angle keeps the bare label, an angle whose
+  ideal is straight is marked ``(trans)``, any other ``(far)``.
+"""
+
+from collections import defaultdict
+from collections.abc import Iterable, Mapping, Sequence
+from dataclasses import dataclass, replace
+from itertools import combinations
+from typing import TypeVar
+
+from shapeshelf.domains.model import Centre
+from shapeshelf.geometry.model import Symmetry
+from shapeshelf.geometry.vectors import angle_degrees, distance
+from shapeshelf.report.labels import angle_label
+from shapeshelf.structure.molecule import Molecule, Vector
+
+ALIKE_DEGREES = 1.0
+"""Wider than the noise of assembly, narrower than any difference a reader would act on."""
+ALIKE_ANGSTROM = 0.01
+STRAIGHT_DEGREES = 170.0
+
+Triple = tuple[int, int, int]
+Item = TypeVar("Item", bound=tuple[int, ...])
+
+
+@dataclass(frozen=True, slots=True)
+class AngleSet:
+    """Equivalent angles at one centre and their mean."""
+
+    of: str
+    members: tuple[Triple, ...]
+    mean_degrees: float
+
+
+@dataclass(frozen=True, slots=True)
+class BondSet:
+    """Equivalent bonds and their mean length."""
+
+    of: str
+    members: tuple[int, ...]
+    """Indices into the molecule's bonds."""
+    mean_angstrom: float
+
+
+def ligand_sets(
+    molecule: Molecule, centre: Centre, symmetry: Symmetry
+) -> tuple[frozenset[int], ...]:
+    """Return the neighbours of ``centre`` in sets of alike ones (rules E1 and E3)."""
+    merged: dict[object, set[int]] = {}
+    for group in _orbits_of_neighbours(molecule, centre, symmetry):
+        merged.setdefault(_outlook(molecule, centre, min(group)), set()).update(group)
+    return tuple(sorted((frozenset(group) for group in merged.values()), key=min))
+
+
+def angle_sets(
+    centre: Centre,
+    centre_name: str,
+    names: Mapping[int, str],
+    symmetry: Symmetry,
+    coordinates: Sequence[Vector],
+) -> tuple[AngleSet, ...]:
+    """Return the rows of angles at ``centre``, widest first within a label."""
+    neighbours = [d.neighbour for d in centre.domains if d.neighbour is not None]
+    triples = [(first, centre.atom, last) for first, last in combinations(neighbours, 2)]
+    sets = [
+        AngleSet(
+            angle_label(names, centre_name, members[0][0], members[0][2]),
+            tuple(members),
+            _mean(angle_degrees(*(coordinates[atom] for atom in triple)) for triple in members),
+        )
+        for members in _orbits(triples, symmetry)
+    ]
+    return tuple(_distinct_labels(_merge_alike(sets)))
+
+
+def bond_sets(
+    molecule: Molecule,
+    ends: Mapping[int, tuple[str, str]],
+    symmetry: Symmetry,
+    coordinates: Sequence[Vector],
+) -> tuple[BondSet, ...]:
+    """Return the rows of bonds; ``ends`` gives the printed names of each bond's two ends."""
+    pairs = [tuple(sorted((bond.begin, bond.end))) for bond in molecule.bonds]
+    number = {pair: index for index, pair in enumerate(pairs)}
+    gathered: dict[str, list[BondSet]] = defaultdict(list)
+    for orbit in _orbits(pairs, symmetry):
+        members = tuple(number[pair] for pair in orbit)
+        mean = _mean(distance(coordinates[a], coordinates[b]) for a, b in orbit)
+        label = "-".join(ends[members[0]])
+        gathered[label].append(BondSet(label, members, mean))
+    return tuple(row for rows in gathered.values() for row in _merge_bonds(rows))
+
+
+def _orbits_of_neighbours(molecule: Molecule, centre: Centre, symmetry: Symmetry) -> list[set[int]]:
+    singles = [(atom,) for atom in molecule.neighbours(centre.atom)]
+    fixing = [op for op in symmetry.operations if op.permutation[centre.atom] == centre.atom]
+    return [
+        {atom for (atom,) in orbit}
+        for orbit in _orbits(singles, replace(symmetry, operations=tuple(fixing)))
+    ]
+
+
+def _outlook(molecule: Molecule, centre: Centre, neighbour: int) -> object:
+    """Return what the centre sees of a neighbour: its class, and the angles it makes."""
+    angles = sorted(
+        (
+            molecule.classes[angle.atoms[2] if angle.atoms[0] == neighbour else angle.atoms[0]],
+            round(angle.model_degrees),
+        )
+        for angle in centre.angles
+        if neighbour in (angle.atoms[0], angle.atoms[2])
+    )
+    return molecule.classes[neighbour], tuple(angles)
+
+
+def _orbits(items: Sequence[Item], symmetry: Symmetry) -> list[list[Item]]:
+    """Return the items in sets that the operations carry onto one another, read either way."""
+    waiting = dict.fromkeys(items)
+    orbits = []
+    while waiting:
+        seed = next(iter(waiting))
+        images = {
+            tuple(operation.permutation[atom] for atom in seed) for operation in symmetry.operations
+        } | {seed}
+        orbit = [item for item in waiting if item in images or item[::-1] in images]
+        orbits.append(orbit)
+        for item in orbit:
+            del waiting[item]
+    return orbits
+
+
+def _merge_alike(sets: Iterable[AngleSet]) -> list[AngleSet]:
+    merged: list[AngleSet] = []
+    for row in sorted(sets, key=lambda row: (row.of, row.mean_degrees)):
+        last = merged[-1] if merged else None
+        if (
+            last is not None
+            and last.of == row.of
+            and row.mean_degrees - last.mean_degrees <= ALIKE_DEGREES
+        ):
+            merged[-1] = _joined(last, row)
+        else:
+            merged.append(row)
+    return merged
+
+
+def _joined(left: AngleSet, right: AngleSet) -> AngleSet:
+    members = left.members + right.members
+    total = left.mean_degrees * len(left.members) + right.mean_degrees * len(right.members)
+    return AngleSet(left.of, tuple(sorted(members)), total / len(members))
+
+
+def _distinct_labels(sets: Sequence[AngleSet]) -> list[AngleSet]:
+    taken: set[str] = set()
+    named = []
+    for row in sets:
+        label, ordinal = row.of, 2
+        if label in taken:
+            label += " (trans)" if row.mean_degrees >= STRAIGHT_DEGREES else " (far)"
+        base = label
+        while label in taken:
+            label, ordinal = f"{base[:-1]} {ordinal})", ordinal + 1
+        taken.add(label)
+        named.append(replace(row, of=label))
+    return named
+
+
+def _merge_bonds(rows: Sequence[BondSet]) -> list[BondSet]:
+    merged: list[BondSet] = []
+    for row in sorted(rows, key=lambda row: row.mean_angstrom):
+        if merged and row.mean_angstrom - merged[-1].mean_angstrom <= ALIKE_ANGSTROM:
+            last = merged[-1]
+            members = tuple(sorted(last.members + row.members))
+            weights = (len(last.members), len(row.members))
+            mean = (last.mean_angstrom * weights[0] + row.mean_angstrom * weights[1]) / sum(weights)
+            merged[-1] = BondSet(last.of, members, mean)
+        else:
+            merged.append(row)
+    return merged
+
+
+def _mean(values: Iterable[float]) -> float:
+    held = list(values)
+    return sum(held) / len(held)
