@@ -1,0 +1,186 @@
+"""What one field cannot know: references, names and ids across entries, files, units.
+
+The checks read documents as they stand, so that a mistake in one field hides none in another.
+"""
+
+import math
+import re
+from collections.abc import Callable, Collection, Iterator, Sequence
+from pathlib import Path
+from typing import Any
+
+from shapeshelf.catalogue.fields import STRUCTURE_SUFFIXES
+from shapeshelf.catalogue.model import Quantity
+from shapeshelf.catalogue.problems import Document, nearest, shown
+from shapeshelf.catalogue.quantities import LIMITS, Limit
+from shapeshelf.errors import Problem
+
+MAX_STRUCTURE_BYTES = 1024 * 1024
+
+RESERVED_IDS = frozenset(
+    # Addresses of the site itself.
+    ["index", "records", "sources", "protocols", "schema", "data"]
+    # Names that a folder cannot bear under Windows (Microsoft, "Naming Files, Paths, and
+    # Namespaces"; recalled from memory).
+    + ["con", "prn", "aux", "nul"]
+    + [f"{port}{number}" for port in ("com", "lpt") for number in range(1, 10)]
+)
+
+_LABEL_DASHES = re.compile(r"[‐‑‒–—−]")
+
+
+def entry_problems(
+    document: Document,
+    root: Path,
+    sources: Collection[str] | None,
+    protocols: Collection[str] | None,
+) -> Iterator[Problem]:
+    """Yield what is wrong with one entry beyond the type of its fields.
+
+    ``sources`` and ``protocols`` are the known keys, ``None`` where their file is unreadable.
+    """
+    yield from _reserved(document)
+    yield from _structure(document, root)
+    for index, item in enumerate(_list(document.data, "measured")):
+        if isinstance(item, dict):
+            yield from _measured(document, f"measured[{index}]", item, sources)
+    yield from _unknown_protocols(document, protocols)
+
+
+def catalogue_problems(documents: Sequence[Document]) -> Iterator[Problem]:
+    """Yield every id and name that stands twice, at its later place."""
+    yield from _repeated(documents, ("id", "formerly"), lambda word: word, "id")
+    yield from _repeated(documents, ("name", "also"), _folded_name, "name")
+
+
+def inside(root: Path, file: Path) -> bool:
+    """Say whether ``file``, its links followed, lies below ``root``."""
+    return file.resolve().is_relative_to(root.resolve())
+
+
+def _repeated(
+    documents: Sequence[Document],
+    fields: tuple[str, ...],
+    fold: Callable[[str], str],
+    what: str,
+) -> Iterator[Problem]:
+    first: dict[str, str] = {}
+    for document in documents:
+        for field, word in _words(document, fields):
+            key = fold(word)
+            if key in first:
+                message = f"the {what} `{word}` is taken in {first[key]}; choose another"
+                yield document.problem(field, message)
+            else:
+                place = f"{shown(document.file)}:{document.lines.get(field, 1)}"
+                first[key] = place
+
+
+def _words(document: Document, fields: tuple[str, ...]) -> Iterator[tuple[str, str]]:
+    """Yield address and text of each non-empty text in ``fields`` and their lists."""
+    for field in fields:
+        value = document.data.get(field)
+        items = [(field, value)]
+        if isinstance(value, list):
+            items = [(f"{field}[{index}]", item) for index, item in enumerate(value)]
+        for address, item in items:
+            if isinstance(item, str) and item.strip():
+                yield address, item.strip()
+
+
+def _folded_name(name: str) -> str:
+    return " ".join(name.casefold().split())
+
+
+def _reserved(document: Document) -> Iterator[Problem]:
+    for field, word in _words(document, ("id", "formerly")):
+        if word in RESERVED_IDS:
+            yield document.problem(field, f"`{word}` is reserved; choose another id")
+
+
+def _structure(document: Document, root: Path) -> Iterator[Problem]:
+    structure = document.data.get("structure")
+    if not isinstance(structure, dict):
+        return
+    given = [form for form in ("smiles", "file") if form in structure]
+    if len(given) != 1:
+        fault = "both `smiles` and `file` are given" if given else "neither is given"
+        yield document.problem("structure", f"{fault}; right would be one of `smiles` and `file`")
+    if isinstance(structure.get("file"), str) and structure["file"].strip():
+        for message in _file_faults(document.file.parent, structure["file"].strip(), root):
+            yield document.problem("structure.file", message)
+
+
+def _file_faults(folder: Path, name: str, root: Path) -> Iterator[str]:
+    file = folder / name
+    if file.suffix.lower() not in STRUCTURE_SUFFIXES:
+        yield f"`{name}` is no structure file; right would be {' or '.join(STRUCTURE_SUFFIXES)}"
+    # Asked before the file is looked for: what lies outside is nobody's to learn here.
+    elif "\0" in name or Path(name).is_absolute() or not inside(root, file):
+        yield f"`{name}` lies outside {root.name}/; right would be a path relative to this entry"
+    elif not file.is_file():
+        yield f"there is no file `{name}` beside this entry"
+    elif file.stat().st_size > MAX_STRUCTURE_BYTES:
+        yield f"`{name}` is larger than {MAX_STRUCTURE_BYTES // 1024} kB"
+
+
+def _measured(
+    document: Document, place: str, item: dict[str, Any], sources: Collection[str] | None
+) -> Iterator[Problem]:
+    quantity = item.get("quantity")
+    if isinstance(quantity, str) and quantity in set(Quantity):
+        limit = LIMITS[Quantity(quantity)]
+        for field, message in _value_faults(item, quantity, limit):
+            yield document.problem(f"{place}.{field}", message)
+    source: Any = item.get("source")
+    named = isinstance(source, str) and bool(source.strip())
+    if named and sources is not None and source.strip() not in sources:
+        message = f"`{source}` is not in sources.yml{nearest(source, sources)}"
+        yield document.problem(f"{place}.source", message)
+
+
+def _value_faults(item: dict[str, Any], quantity: str, limit: Limit) -> Iterator[tuple[str, str]]:
+    unit: Any = item.get("unit")
+    value: Any = item.get("value")
+    known_units = {other.unit for other in LIMITS.values()}
+    if unit in known_units and unit != limit.unit:
+        yield "unit", f"`{unit}` is no unit of {quantity}; right would be {limit.unit}"
+    elif _is_number(value) and not limit.least <= float(value) <= limit.most:
+        span = f"{limit.least:g} to {limit.most:g} {limit.unit}"
+        yield "value", f"{value:g} lies outside what the quantity {quantity} can be, {span}"
+    yield from _label_faults(item.get("of"), quantity, limit)
+
+
+def _is_number(value: Any) -> bool:
+    return isinstance(value, int | float) and not isinstance(value, bool) and math.isfinite(value)
+
+
+def _label_faults(label: Any, quantity: str, limit: Limit) -> Iterator[tuple[str, str]]:
+    if limit.atoms_in_label is None:
+        return
+    right = f"right would be a label such as {limit.example}"
+    if label is None:
+        yield "of", f"is missing: which {quantity}? {right}"
+    elif isinstance(label, str) and label.strip():
+        if _LABEL_DASHES.search(label):
+            yield "of", f"`{label}` holds a dash; join the atoms with the plain hyphen `-`"
+        elif not _joins(label.strip(), limit.atoms_in_label):
+            yield "of", f"`{label}` does not join {limit.atoms_in_label} atoms; {right}"
+
+
+def _joins(label: str, atoms: int) -> bool:
+    """Say whether ``label`` is ``atoms`` labels such as ``F(ax)``, joined with hyphens."""
+    parts = re.split(r"-(?![^(]*\))", label)
+    return len(parts) == atoms and all(re.match(r"[A-Z]", part) for part in parts)
+
+
+def _unknown_protocols(document: Document, protocols: Collection[str] | None) -> Iterator[Problem]:
+    for field, word in _words(document, ("used-in",)) if protocols is not None else ():
+        if protocols is not None and word not in protocols:
+            message = f"`{word}` is not in protocols.yml{nearest(word, protocols)}"
+            yield document.problem(field, message)
+
+
+def _list(data: dict[str, Any], field: str) -> list[Any]:
+    value = data.get(field)
+    return value if isinstance(value, list) else []

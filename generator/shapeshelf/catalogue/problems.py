@@ -1,0 +1,67 @@
+"""How problems are addressed and worded: file, line, field, and the nearest right word."""
+
+import difflib
+import re
+from collections.abc import Iterable
+from dataclasses import dataclass
+from pathlib import Path
+from typing import Any
+
+from shapeshelf.catalogue.model import Entry
+from shapeshelf.errors import Problem
+
+WHOLE_FILE = "file"
+"""The field of a problem that is one of the file and of no field in it."""
+
+
+@dataclass(frozen=True, slots=True)
+class Document:
+    """One YAML file as plain values, before anything is checked."""
+
+    file: Path
+    data: dict[str, Any]
+    lines: dict[str, int]
+    """Line of each field and item, addressed as ``measured[2].value``."""
+    problems: tuple[Problem, ...] = ()
+    """Found while reading: fields that stand twice."""
+
+    def problem(self, field: str, message: str) -> Problem:
+        """Return a problem with ``field``, or with what holds it where it is missing."""
+        return Problem(shown(self.file), line_of(self.lines, field), field or WHOLE_FILE, message)
+
+
+def problem_at(entry: Entry, field: str, message: str) -> Problem:
+    """Return a problem with a field of ``entry``, addressed as ``measured[2].value``.
+
+    Items count from 0. A field that is absent takes the line of what would hold it.
+    """
+    return Problem(shown(entry.file), line_of(entry.lines, field), field, message)
+
+
+def line_of(lines: dict[str, int], field: str) -> int:
+    """Return the line of ``field`` or of the nearest thing around it, else 1."""
+    while field and field not in lines:
+        field = field[: max(field.rfind("."), field.rfind("["), 0)]
+    return lines.get(field, 1)
+
+
+def shown(file: Path) -> Path:
+    """Return ``file`` relative to the current folder where it lies below it."""
+    absolute = Path.cwd() / file
+    return absolute.relative_to(Path.cwd()) if absolute.is_relative_to(Path.cwd()) else file
+
+
+def nearest(word: str, right: Iterable[str]) -> str:
+    """Return the part of a sentence that names the likely word, or what there is.
+
+    ``; did you mean `source`?`` for a near miss, ``; right would be one of: …`` else.
+    """
+    words = list(right)
+    folded = {choice.casefold(): choice for choice in words}
+    key = re.sub(r"[\s_]+", "-", word.strip()).casefold()
+    close = difflib.get_close_matches(key, folded, n=1, cutoff=0.6)
+    if close:
+        return f"; did you mean `{folded[close[0]]}`?"
+    if len(words) > 12:
+        return ""
+    return "; right would be one of: " + ", ".join(words) if words else ""
