@@ -86,7 +86,7 @@ def _complete(
         lengths=lengths,
         dipole_model=dipole_model,
         dipole_debye=_dipole_value(dipole_model, entry),
-        spectra=expect_spectra(molecule, lewis, centres, symmetry, dipole_model),
+        spectra=expect_spectra(molecule, lewis, centres, symmetry),
         molar_mass_g_mol=molar_mass_g_mol(molecule),
         topological_polar_surface_area=(
             topological_polar_surface_area(molecule) if organic else None

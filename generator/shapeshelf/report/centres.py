@@ -10,7 +10,6 @@ from shapeshelf.properties.hybridisation import hybridise
 from shapeshelf.reference.shapes import SHAPES
 from shapeshelf.report.labels import (
     angle_label,
-    atom_labels,
     bond_ends,
     centre_names,
     ligand_names,

@@ -9,7 +9,7 @@ from pathlib import Path
 
 from shapeshelf.catalogue.model import Catalogue, Entry, Measurement, Quantity
 from shapeshelf.catalogue.problems import problem_at
-from shapeshelf.catalogue.reading import read_catalogue
+from shapeshelf.catalogue.reading import read_catalogue_with_problems
 from shapeshelf.errors import AnalysisError, CatalogueError, Problem, StructureError
 from shapeshelf.report.building import report_on_entry
 from shapeshelf.report.model import CompoundReport

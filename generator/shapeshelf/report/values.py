@@ -22,7 +22,12 @@ def best_value(
     measured = measurement.value if measurement else None
     measured_uncertainty = measurement.uncertainty if measurement else None
     ranked = (
-        (Basis.MEASURED, measured, measured_uncertainty, measurement and measurement.source),
+        (
+            Basis.MEASURED,
+            measured,
+            measured_uncertainty,
+            measurement.source if measurement else None,
+        ),
         (Basis.CALCULATED, calculated, calculated_uncertainty, method),
         (Basis.SUPPLIED, supplied, None, "supplied coordinates"),
         (Basis.MODEL, model, model_uncertainty, model_name),

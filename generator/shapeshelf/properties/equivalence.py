@@ -1,0 +1,125 @@
+"""Which nuclei are alike to NMR: by symmetry, or because rotation about single bonds is fast.
+
+* M1  Atoms that an operation of the point group exchanges are alike.
+* M2  So are ligands of one centre that the bond graph and the electron-domain model cannot tell
+  apart, where no multiple bond to another ligand stops the centre from turning: the hydrogens of
+  a methyl group, the two ortho positions of a phenyl group. The axial and equatorial fluorines
+  of PF5 differ to the model and stay apart.
+* M3  What is alike carries on along the bonds: ligands of like centres are alike where each
+  centre holds one set of them.
+
+Source: the usual first-order treatment, H. Guenther, NMR Spectroscopy (1995), recalled from
+memory. Diastereotopic pairs count as one: their difference is small and not foreseen here.
+"""
+
+from collections import defaultdict
+from collections.abc import Hashable, Sequence
+from itertools import combinations
+
+from shapeshelf.domains.model import Centre, LewisCount
+from shapeshelf.geometry.model import Symmetry
+from shapeshelf.structure.molecule import Molecule
+
+FREE_TURNING_ORDER = 1.2
+"""Highest averaged bond order about which rotation at room temperature is fast; the amide C-N
+bond (above) turns slowly (common practice, no source)."""
+
+
+def alike_sets(
+    molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre], symmetry: Symmetry
+) -> tuple[tuple[int, ...], ...]:
+    """Return all atoms in sets of alike ones, each sorted, in order of their first atoms."""
+    parents = list(range(len(molecule.atoms)))
+    for group in symmetry.equivalent_atoms:
+        for atom in group[1:]:
+            _join(parents, group[0], atom)
+    colours = _colours(molecule, centres)
+    neighbours = [molecule.neighbours(atom) for atom in range(len(molecule.atoms))]
+    for centre in centres:
+        _join_turning_ligands(centre.atom, neighbours, colours, molecule, lewis, parents)
+    _carry_along(neighbours, colours, parents)
+    sets: defaultdict[int, list[int]] = defaultdict(list)
+    for atom in range(len(parents)):
+        sets[_root(parents, atom)].append(atom)
+    return tuple(tuple(group) for group in sets.values())
+
+
+def _colours(molecule: Molecule, centres: Sequence[Centre]) -> list[Hashable]:
+    """Return for each atom what graph and domain model know of it: class and angles made."""
+    outlook: defaultdict[int, list[tuple[int, int]]] = defaultdict(list)
+    for centre in centres:
+        for angle in centre.angles:
+            first, _, last = angle.atoms
+            degrees = round(angle.model_degrees)
+            outlook[first].append((molecule.classes[last], degrees))
+            outlook[last].append((molecule.classes[first], degrees))
+    return [
+        (molecule.classes[atom], tuple(sorted(outlook[atom])))
+        for atom in range(len(molecule.atoms))
+    ]
+
+
+def _join_turning_ligands(
+    atom: int,
+    neighbours: Sequence[Sequence[int]],
+    colours: Sequence[Hashable],
+    molecule: Molecule,
+    lewis: LewisCount,
+    parents: list[int],
+) -> None:
+    orders = {
+        bond.end if bond.begin == atom else bond.begin: order
+        for bond, order in zip(molecule.bonds, lewis.bond_orders, strict=True)
+        if atom in (bond.begin, bond.end)
+    }
+    for first, last in combinations(neighbours[atom], 2):
+        others = [order for other, order in orders.items() if other not in (first, last)]
+        if colours[first] == colours[last] and max(others, default=0.0) <= FREE_TURNING_ORDER:
+            _join(parents, first, last)
+
+
+def _carry_along(
+    neighbours: Sequence[Sequence[int]], colours: Sequence[Hashable], parents: list[int]
+) -> None:
+    """Join ligands of joined centres until nothing changes (rule M3)."""
+    changed = True
+    while changed:
+        changed = False
+        sets: defaultdict[int, list[int]] = defaultdict(list)
+        for atom in range(len(parents)):
+            sets[_root(parents, atom)].append(atom)
+        for group in sets.values():
+            changed |= _join_ligands_of(group, neighbours, colours, parents)
+
+
+def _join_ligands_of(
+    group: Sequence[int],
+    neighbours: Sequence[Sequence[int]],
+    colours: Sequence[Hashable],
+    parents: list[int],
+) -> bool:
+    by_colour: defaultdict[Hashable, list[int]] = defaultdict(list)
+    for atom in group:
+        held: defaultdict[Hashable, set[int]] = defaultdict(set)
+        for neighbour in neighbours[atom]:
+            held[colours[neighbour]].add(_root(parents, neighbour))
+        for colour, roots in held.items():
+            if len(roots) == 1:
+                by_colour[colour].append(next(iter(roots)))
+    changed = False
+    for roots_of_colour in by_colour.values():
+        for other in roots_of_colour[1:]:
+            changed |= _join(parents, roots_of_colour[0], other)
+    return changed
+
+
+def _root(parents: list[int], atom: int) -> int:
+    while parents[atom] != atom:
+        atom = parents[atom]
+    return atom
+
+
+def _join(parents: list[int], first: int, last: int) -> bool:
+    low, high = sorted((_root(parents, first), _root(parents, last)))
+    parents[high] = low
+    return low != high
