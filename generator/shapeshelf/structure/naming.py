@@ -5,18 +5,10 @@ from typing import Any
 from rdkit import Chem
 from rdkit.Chem import rdinchi
 
-DOUBLE = Chem.BondType.DOUBLE
-
 
 def canonical_smiles(mol: Chem.Mol) -> str:
     """Return RDKit's canonical SMILES of ``mol`` with hydrogens folded in."""
-    copy = Chem.Mol(mol)
-    # RDKit also calls rings of single bonds aromatic, tetraphosphorus for one.
-    if any(bond.IsInRing() and bond.GetBondType() == DOUBLE for bond in copy.GetBonds()):
-        Chem.SetAromaticity(copy)
-    parameters: Any = Chem.RemoveHsParameters()
-    parameters.showWarnings = False
-    return str(Chem.MolToSmiles(Chem.RemoveHs(copy, parameters, sanitize=False)))
+    return str(Chem.MolToSmiles(without_hydrogens(mol)))
 
 
 def inchikey(mol: Chem.Mol) -> str | None:
@@ -30,3 +22,15 @@ def inchikey(mol: Chem.Mol) -> str | None:
             copy.RemoveBond(bond.GetBeginAtomIdx(), bond.GetEndAtomIdx())
     copy.UpdatePropertyCache(strict=False)
     return str(rdinchi.MolToInchiKey(copy)) or None
+
+
+def without_hydrogens(mol: Chem.Mol) -> Chem.Mol:
+    """Return a copy with aromatic rings marked and ordinary hydrogens folded into counts."""
+    copy = Chem.Mol(mol)
+    # RDKit also calls rings of single bonds aromatic, tetraphosphorus for one.
+    double = Chem.BondType.DOUBLE
+    if any(bond.IsInRing() and bond.GetBondType() == double for bond in copy.GetBonds()):
+        Chem.SetAromaticity(copy)
+    parameters: Any = Chem.RemoveHsParameters()
+    parameters.showWarnings = False
+    return Chem.RemoveHs(copy, parameters, sanitize=False)
