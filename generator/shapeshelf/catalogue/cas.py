@@ -7,6 +7,8 @@ Numbers"; recalled from memory). ISBN: ISO 2108, recalled from memory.
 
 import re
 
+from shapeshelf.catalogue.problems import quoted
+
 _CAS = re.compile(r"(\d{2,7})-(\d{2})-(\d)", re.ASCII)
 
 
@@ -19,7 +21,7 @@ def cas_faults(number: str) -> tuple[str, ...]:
     """Return what is wrong with a CAS number as text, nothing if it is right."""
     match = _CAS.fullmatch(number)
     if match is None:
-        return (f"`{number}` is no CAS number; right would be digits as in 7783-60-0",)
+        return (f"{quoted(number)} is no CAS number; right would be digits as in 7783-60-0",)
     first, second, given = match.groups()
     right = cas_check_digit(first + second)
     if int(given) != right:

@@ -4,6 +4,7 @@ The checks read documents as they stand, so that a mistake in one field hides no
 """
 
 import math
+import os
 import re
 from collections.abc import Callable, Collection, Iterator, Sequence
 from pathlib import Path
@@ -11,7 +12,7 @@ from typing import Any
 
 from shapeshelf.catalogue.fields import STRUCTURE_SUFFIXES
 from shapeshelf.catalogue.model import Quantity
-from shapeshelf.catalogue.problems import Document, nearest, shown
+from shapeshelf.catalogue.problems import Document, nearest, quoted, shown
 from shapeshelf.catalogue.quantities import LIMITS, Limit
 from shapeshelf.errors import Problem
 
@@ -25,6 +26,8 @@ RESERVED_IDS = frozenset(
     + ["con", "prn", "aux", "nul"]
     + [f"{port}{number}" for port in ("com", "lpt") for number in range(1, 10)]
 )
+
+UNITS = tuple(limit.unit for limit in LIMITS.values())
 
 _LABEL_DASHES = re.compile(r"[‐‑‒–—−]")
 
@@ -55,7 +58,14 @@ def catalogue_problems(documents: Sequence[Document]) -> Iterator[Problem]:
 
 def inside(root: Path, file: Path) -> bool:
     """Say whether ``file``, its links followed, lies below ``root``."""
-    return file.resolve().is_relative_to(root.resolve())
+    if "\0" in str(file):
+        return False
+    return Path(os.path.realpath(file)).is_relative_to(os.path.realpath(root))
+
+
+def structure_path(entry_file: Path, name: str) -> Path:
+    """Return the path that the structure file ``name`` of an entry stands for."""
+    return Path(os.path.normpath(entry_file.parent / name))
 
 
 def _repeated(
@@ -64,16 +74,16 @@ def _repeated(
     fold: Callable[[str], str],
     what: str,
 ) -> Iterator[Problem]:
-    first: dict[str, str] = {}
+    first: dict[str, tuple[Document, str]] = {}
     for document in documents:
         for field, word in _words(document, fields):
             key = fold(word)
             if key in first:
-                message = f"the {what} `{word}` is taken in {first[key]}; choose another"
+                taker, place = first[key]
+                where = f"{shown(taker.file)}:{taker.lines[place]}"
+                message = f"the {what} {quoted(word)} is taken in {where}; choose another"
                 yield document.problem(field, message)
-            else:
-                place = f"{shown(document.file)}:{document.lines.get(field, 1)}"
-                first[key] = place
+            first.setdefault(key, (document, field))
 
 
 def _words(document: Document, fields: tuple[str, ...]) -> Iterator[tuple[str, str]]:
@@ -95,7 +105,7 @@ def _folded_name(name: str) -> str:
 def _reserved(document: Document) -> Iterator[Problem]:
     for field, word in _words(document, ("id", "formerly")):
         if word in RESERVED_IDS:
-            yield document.problem(field, f"`{word}` is reserved; choose another id")
+            yield document.problem(field, f"{quoted(word)} is reserved; choose another id")
 
 
 def _structure(document: Document, root: Path) -> Iterator[Problem]:
@@ -107,21 +117,22 @@ def _structure(document: Document, root: Path) -> Iterator[Problem]:
         fault = "both `smiles` and `file` are given" if given else "neither is given"
         yield document.problem("structure", f"{fault}; right would be one of `smiles` and `file`")
     if isinstance(structure.get("file"), str) and structure["file"].strip():
-        for message in _file_faults(document.file.parent, structure["file"].strip(), root):
+        for message in _file_faults(document.file, structure["file"].strip(), root):
             yield document.problem("structure.file", message)
 
 
-def _file_faults(folder: Path, name: str, root: Path) -> Iterator[str]:
-    file = folder / name
+def _file_faults(entry_file: Path, name: str, root: Path) -> Iterator[str]:
+    file = structure_path(entry_file, name)
     if file.suffix.lower() not in STRUCTURE_SUFFIXES:
-        yield f"`{name}` is no structure file; right would be {' or '.join(STRUCTURE_SUFFIXES)}"
+        suffixes = " or ".join(STRUCTURE_SUFFIXES)
+        yield f"{quoted(name)} is no structure file; right would be {suffixes}"
     # Asked before the file is looked for: what lies outside is nobody's to learn here.
-    elif "\0" in name or Path(name).is_absolute() or not inside(root, file):
-        yield f"`{name}` lies outside {root.name}/; right would be a path relative to this entry"
-    elif not file.is_file():
-        yield f"there is no file `{name}` beside this entry"
+    elif Path(name).is_absolute() or not inside(root, file):
+        yield f"{quoted(name)} lies outside {root.name}/; right would be relative to this entry"
+    elif not os.path.isfile(file):
+        yield f"there is no file {quoted(name)} beside this entry"
     elif file.stat().st_size > MAX_STRUCTURE_BYTES:
-        yield f"`{name}` is larger than {MAX_STRUCTURE_BYTES // 1024} kB"
+        yield f"{quoted(name)} is larger than {MAX_STRUCTURE_BYTES // 1024} kB"
 
 
 def _measured(
@@ -132,22 +143,24 @@ def _measured(
         limit = LIMITS[Quantity(quantity)]
         for field, message in _value_faults(item, quantity, limit):
             yield document.problem(f"{place}.{field}", message)
+    elif isinstance(unit := item.get("unit"), str) and unit not in UNITS:
+        yield document.problem(f"{place}.unit", f"{quoted(unit)} is no unit{nearest(unit, UNITS)}")
     source: Any = item.get("source")
     named = isinstance(source, str) and bool(source.strip())
     if named and sources is not None and source.strip() not in sources:
-        message = f"`{source}` is not in sources.yml{nearest(source, sources)}"
+        message = f"{quoted(source)} is not in sources.yml{nearest(source, sources)}"
         yield document.problem(f"{place}.source", message)
 
 
 def _value_faults(item: dict[str, Any], quantity: str, limit: Limit) -> Iterator[tuple[str, str]]:
     unit: Any = item.get("unit")
     value: Any = item.get("value")
-    known_units = {other.unit for other in LIMITS.values()}
-    if unit in known_units and unit != limit.unit:
-        yield "unit", f"`{unit}` is no unit of {quantity}; right would be {limit.unit}"
+    if isinstance(unit, str) and unit.strip() != limit.unit:
+        if unit.strip():
+            yield "unit", f"{quoted(unit)} is no unit for {quantity}; right would be {limit.unit}"
     elif _is_number(value) and not limit.least <= float(value) <= limit.most:
         span = f"{limit.least:g} to {limit.most:g} {limit.unit}"
-        yield "value", f"{value:g} lies outside what the quantity {quantity} can be, {span}"
+        yield "value", f"{value:g} lies outside what this quantity ({quantity}) can be, {span}"
     yield from _label_faults(item.get("of"), quantity, limit)
 
 
@@ -163,9 +176,9 @@ def _label_faults(label: Any, quantity: str, limit: Limit) -> Iterator[tuple[str
         yield "of", f"is missing: which {quantity}? {right}"
     elif isinstance(label, str) and label.strip():
         if _LABEL_DASHES.search(label):
-            yield "of", f"`{label}` holds a dash; join the atoms with the plain hyphen `-`"
+            yield "of", f"{quoted(label)} holds a dash; join the atoms with the plain hyphen `-`"
         elif not _joins(label.strip(), limit.atoms_in_label):
-            yield "of", f"`{label}` does not join {limit.atoms_in_label} atoms; {right}"
+            yield "of", f"{quoted(label)} does not join {limit.atoms_in_label} atoms; {right}"
 
 
 def _joins(label: str, atoms: int) -> bool:
@@ -177,7 +190,7 @@ def _joins(label: str, atoms: int) -> bool:
 def _unknown_protocols(document: Document, protocols: Collection[str] | None) -> Iterator[Problem]:
     for field, word in _words(document, ("used-in",)) if protocols is not None else ():
         if protocols is not None and word not in protocols:
-            message = f"`{word}` is not in protocols.yml{nearest(word, protocols)}"
+            message = f"{quoted(word)} is not in protocols.yml{nearest(word, protocols)}"
             yield document.problem(field, message)
 
 

@@ -21,11 +21,14 @@ from pydantic_core import PydanticCustomError
 
 from shapeshelf.catalogue.cas import cas_faults, isbn_is_valid
 from shapeshelf.catalogue.model import Quantity, SourceKind
-from shapeshelf.catalogue.problems import nearest
+from shapeshelf.catalogue.problems import nearest, quoted
 from shapeshelf.catalogue.quantities import LIMITS
 from shapeshelf.reference.ghs import H_STATEMENTS
 
 ID_PATTERN = r"^[a-z0-9]+(-[a-z0-9]+)*$"
+LINE_PATTERN = r"^[^\x00-\x1f\x7f-\x9f\u2028\u2029]*$"
+TEXT_PATTERN = r"^[^\x00-\x08\x0b-\x1f\x7f-\x9f]*$"
+SMILES_PATTERN = r"^[!-~]+$"
 DOI_PATTERN = r"^10\.\d{4,9}/\S+$"
 PHASES = ("gas", "liquid", "solid", "solution", "matrix")
 STRUCTURE_SUFFIXES = (".xyz", ".mol", ".sdf")
@@ -36,8 +39,7 @@ def _one_of(choices: tuple[str, ...], what: str) -> tuple[Any, ...]:
 
     def check(text: str) -> str:
         if text not in choices:
-            message = f"`{text}` is no {what}{nearest(text, choices)}"
-            raise _fault(message)
+            raise _fault(f"{quoted(text)} is no {what}{nearest(text, choices)}")
         return text
 
     return AfterValidator(check), WithJsonSchema({"type": "string", "enum": list(choices)})
@@ -62,28 +64,33 @@ def _fault(message: str) -> PydanticCustomError:
 def _isbn_faults(number: str) -> tuple[str, ...]:
     if isbn_is_valid(number):
         return ()
-    return (f"`{number}` is no ISBN: its check digit or its length is wrong",)
+    return (f"{quoted(number)} is no ISBN: its check digit or its length is wrong",)
 
 
 def _hazard_faults(code: str) -> tuple[str, ...]:
     if code in H_STATEMENTS:
         return ()
     if code.upper().startswith("EUH"):
-        return (f"`{code}` is not one of the GHS; put it in `notes`",)
+        return (f"{quoted(code)} is not one of the GHS; put it in `notes`",)
     tidy = code.replace(" ", "").upper()
     known = nearest(tidy, H_STATEMENTS) if tidy in H_STATEMENTS else ""
-    return (f"`{code}` is no H-code of the GHS{known or '; right would be one such as H330'}",)
+    return (
+        f"{quoted(code)} is no H-code of the GHS{known or '; right would be one such as H330'}",
+    )
 
 
 Line = Annotated[
     str,
-    StringConstraints(strip_whitespace=True, min_length=1, max_length=300, pattern=r"^[^\n\r]*$"),
+    StringConstraints(strip_whitespace=True, min_length=1, max_length=300, pattern=LINE_PATTERN),
 ]
 Smiles = Annotated[
     str,
-    StringConstraints(strip_whitespace=True, min_length=1, max_length=4000, pattern=r"^\S+$"),
+    StringConstraints(strip_whitespace=True, min_length=1, max_length=4000, pattern=SMILES_PATTERN),
 ]
-Text = Annotated[str, StringConstraints(strip_whitespace=True, min_length=1, max_length=20_000)]
+Text = Annotated[
+    str,
+    StringConstraints(strip_whitespace=True, min_length=1, max_length=20_000, pattern=TEXT_PATTERN),
+]
 Identifier = Annotated[str, StringConstraints(pattern=ID_PATTERN, max_length=64)]
 Cas = Annotated[
     str,
@@ -96,7 +103,11 @@ Hazard = Annotated[
     WithJsonSchema({"type": "string", "enum": list(H_STATEMENTS)}),
 ]
 QuantityName = Annotated[str, *_one_of(tuple(Quantity), "quantity")]
-UnitName = Annotated[str, *_one_of(tuple(limit.unit for limit in LIMITS.values()), "unit")]
+# Whether a unit is one of its quantity is checked with the quantity, not here.
+UnitName = Annotated[
+    Line,
+    WithJsonSchema({"type": "string", "enum": [limit.unit for limit in LIMITS.values()]}),
+]
 PhaseName = Annotated[str, *_one_of(PHASES, "phase")]
 KindName = Annotated[str, *_one_of(tuple(SourceKind), "kind of source")]
 Number = Annotated[float, Field(allow_inf_nan=False)]

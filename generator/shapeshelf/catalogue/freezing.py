@@ -1,5 +1,6 @@
 """Checked fields to the frozen records that later rooms read."""
 
+from shapeshelf.catalogue.checks import structure_path
 from shapeshelf.catalogue.fields import EntryFields, MeasuredFields, StructureFields
 from shapeshelf.catalogue.model import Entry, Measurement, Quantity, StructureInput
 from shapeshelf.catalogue.problems import Document
@@ -35,7 +36,7 @@ def frozen_entry(fields: EntryFields, document: Document) -> Entry:
 def _structure(given: str | StructureFields, document: Document) -> StructureInput:
     if isinstance(given, str):
         return StructureInput(smiles=given, file=None)
-    file = document.file.parent / given.file if given.file is not None else None
+    file = structure_path(document.file, given.file) if given.file is not None else None
     return StructureInput(given.smiles, file, given.charge, given.multiplicity)
 
 

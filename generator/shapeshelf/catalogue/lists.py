@@ -1,5 +1,6 @@
 """The two lists beside the entries: ``sources.yml`` and ``protocols.yml``."""
 
+import os
 import re
 from collections.abc import Callable
 from pathlib import Path
@@ -10,7 +11,7 @@ from pydantic import BaseModel
 from shapeshelf.catalogue.checks import inside
 from shapeshelf.catalogue.fields import ID_PATTERN, ProtocolFields, SourceFields
 from shapeshelf.catalogue.model import Protocol, Source, SourceKind
-from shapeshelf.catalogue.problems import Document
+from shapeshelf.catalogue.problems import Document, quoted
 from shapeshelf.catalogue.validation import validated
 from shapeshelf.catalogue.yaml_lines import read_document
 from shapeshelf.errors import CatalogueError, Problem
@@ -79,9 +80,9 @@ def _missing_file(document: Document, key: str, value: Any) -> list[Problem]:
         return []
     root = document.file.parent
     if not inside(root, root / name.strip()):
-        message = f"`{name}` lies outside {root.name}/; right would be a path relative to it"
-    elif not (root / name.strip()).is_file():
-        message = f"there is no file `{name}` below {root.name}/"
+        message = f"{quoted(name)} lies outside {root.name}/; right would be a path relative to it"
+    elif not os.path.isfile(root / name.strip()):
+        message = f"there is no file {quoted(name)} below {root.name}/"
     else:
         return []
     return [document.problem(f"{key}.file", message)]

@@ -1,6 +1,7 @@
 """How problems are addressed and worded: file, line, field, and the nearest right word."""
 
 import difflib
+import os
 import re
 from collections.abc import Iterable
 from dataclasses import dataclass
@@ -12,6 +13,9 @@ from shapeshelf.errors import Problem
 
 WHOLE_FILE = "file"
 """The field of a problem that is one of the file and of no field in it."""
+
+_LONGEST_QUOTE = 60
+_CONTROL = re.compile(r"[\x00-\x1f\x7f-\x9f\u2028\u2029]")
 
 
 @dataclass(frozen=True, slots=True)
@@ -27,7 +31,8 @@ class Document:
 
     def problem(self, field: str, message: str) -> Problem:
         """Return a problem with ``field``, or with what holds it where it is missing."""
-        return Problem(shown(self.file), line_of(self.lines, field), field or WHOLE_FILE, message)
+        line = line_of(self.lines, field)
+        return Problem(shown(self.file), line, one_line(field or WHOLE_FILE), one_line(message))
 
 
 def problem_at(entry: Entry, field: str, message: str) -> Problem:
@@ -35,7 +40,8 @@ def problem_at(entry: Entry, field: str, message: str) -> Problem:
 
     Items count from 0. A field that is absent takes the line of what would hold it.
     """
-    return Problem(shown(entry.file), line_of(entry.lines, field), field, message)
+    line = line_of(entry.lines, field)
+    return Problem(shown(entry.file), line, one_line(field), one_line(message))
 
 
 def line_of(lines: dict[str, int], field: str) -> int:
@@ -48,7 +54,20 @@ def line_of(lines: dict[str, int], field: str) -> int:
 def shown(file: Path) -> Path:
     """Return ``file`` relative to the current folder where it lies below it."""
     absolute = Path.cwd() / file
-    return absolute.relative_to(Path.cwd()) if absolute.is_relative_to(Path.cwd()) else file
+    near = absolute.relative_to(Path.cwd()) if absolute.is_relative_to(Path.cwd()) else file
+    # A name that is not in UTF-8 would make printing it fail.
+    return Path(one_line(os.fsencode(near).decode("utf-8", "replace")))
+
+
+def quoted(text: object) -> str:
+    """Return a user's text as a message quotes it: in backticks, cut short if long."""
+    written = str(text).lower() if isinstance(text, bool) else str(text)
+    return f"`{written}`" if len(written) <= _LONGEST_QUOTE else f"`{written[:_LONGEST_QUOTE]}…`"
+
+
+def one_line(text: str) -> str:
+    """Return ``text`` with control characters, line breaks among them, written as escapes."""
+    return _CONTROL.sub(lambda match: match.group().encode("unicode_escape").decode(), text)
 
 
 def nearest(word: str, right: Iterable[str]) -> str:

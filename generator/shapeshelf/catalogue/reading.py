@@ -3,9 +3,10 @@
 import os
 from collections.abc import Iterator
 from pathlib import Path
+from typing import NoReturn
 
 from shapeshelf.catalogue.checks import catalogue_problems, entry_problems, inside
-from shapeshelf.catalogue.fields import EntryFields
+from shapeshelf.catalogue.fields import EntryFields, StructureFields
 from shapeshelf.catalogue.freezing import frozen_entry
 from shapeshelf.catalogue.lists import read_protocols, read_sources
 from shapeshelf.catalogue.model import Catalogue, Entry
@@ -17,6 +18,9 @@ from shapeshelf.errors import CatalogueError, Problem
 SOURCES = "sources.yml"
 PROTOCOLS = "protocols.yml"
 RECORDS = "records"
+FATAL = frozenset({"structure"} | {f"structure.{name}" for name in StructureFields.model_fields})
+"""Fields with a problem that leaves nothing to look at further."""
+
 _SUFFIXES = (".yml", ".yaml")
 
 
@@ -38,8 +42,8 @@ def read_catalogue_with_problems(root: Path) -> tuple[Catalogue, list[Problem]]:
     """Return what is right in the catalogue below ``root`` and every problem with the rest.
 
     For whoever has more to check before stopping. An entry with a problem is there without
-    the faulty fields, unless it lacks ``id``, ``name`` or ``structure`` then. Raises
-    ``CatalogueError`` only where there is no such folder.
+    the faulty fields, unless it lacks ``id``, ``name`` or a right ``structure`` then. Raises
+    ``CatalogueError`` only where the folder, or one in it, cannot be read.
     """
     if not root.is_dir():
         raise CatalogueError((Problem(shown(root), 1, WHOLE_FILE, "there is no such folder"),))
@@ -50,9 +54,11 @@ def read_catalogue_with_problems(root: Path) -> tuple[Catalogue, list[Problem]]:
     entries: list[Entry] = []
     for document in documents:
         fields, found = validated(document, document.data, EntryFields)
-        problems += [*document.problems, *found]
-        problems += entry_problems(document, root, source_keys, protocol_keys)
-        entries += [frozen_entry(fields, document)] if fields is not None else []
+        found += document.problems
+        found += entry_problems(document, root, source_keys, protocol_keys)
+        if fields is not None and not any(problem.field in FATAL for problem in found):
+            entries.append(frozen_entry(fields, document))
+        problems += found
     problems += catalogue_problems(documents)
     entries.sort(key=lambda entry: entry.id)
     return Catalogue(root, tuple(entries), sources, protocols), problems
@@ -60,7 +66,7 @@ def read_catalogue_with_problems(root: Path) -> tuple[Catalogue, list[Problem]]:
 
 def entry_files(root: Path) -> Iterator[Path]:
     """Yield the YAML file of each entry below ``root``, in order of path."""
-    for folder, folders, names in os.walk(root):
+    for folder, folders, names in os.walk(root, onerror=_refuse_folder):
         top = Path(folder) == root
         folders[:] = sorted(
             name for name in folders if name[0] not in "._" and not (top and name == RECORDS)
@@ -71,9 +77,15 @@ def entry_files(root: Path) -> Iterator[Path]:
                 yield Path(folder) / name
 
 
+def _refuse_folder(error: OSError) -> NoReturn:
+    """Stop: entries in a folder that cannot be read must not vanish without a word."""
+    problem = Problem(shown(Path(error.filename)), 1, WHOLE_FILE, f"{error.strerror}")
+    raise CatalogueError((problem,))
+
+
 def _documents(root: Path, problems: list[Problem]) -> Iterator[Document]:
     for file in entry_files(root):
-        if not inside(root, file):
+        if file.is_symlink() and not inside(root, file):
             message = f"is a link to a place outside {root.name}/; put the file itself here"
             problems.append(Problem(shown(file), 1, WHOLE_FILE, message))
             continue

@@ -2,16 +2,24 @@
 
 import contextlib
 import copy
-import re
+from collections.abc import Collection, Iterator
 from typing import Any, TypeVar
 
 from pydantic import BaseModel, ValidationError
 
-from shapeshelf.catalogue.fields import DOI_PATTERN, ID_PATTERN, MeasuredFields, StructureFields
-from shapeshelf.catalogue.problems import Document, nearest
+from shapeshelf.catalogue.fields import (
+    DOI_PATTERN,
+    ID_PATTERN,
+    SMILES_PATTERN,
+    MeasuredFields,
+    StructureFields,
+)
+from shapeshelf.catalogue.problems import Document, nearest, quoted
 from shapeshelf.errors import Problem
 
 Fields = TypeVar("Fields", bound=BaseModel)
+
+_EMPTY = "is empty; give a value or delete the line"
 
 _INNER: dict[str, type[BaseModel]] = {"measured": MeasuredFields, "structure": StructureFields}
 
@@ -20,9 +28,8 @@ _WANTED = {
     "int_type": "a whole number",
     "int_from_float": "a whole number",
     "float_type": "a number",
-    "list_type": "a list, one item a line after `- `",
-    "model_type": "fields of its own, one a line",
-    "dict_type": "fields of its own, one a line",
+    "list_type": "a list",
+    "model_type": "a group of fields",
 }
 
 
@@ -36,11 +43,29 @@ def validated(
     problems in the same run; it is ``None`` where that is not enough.
     """
     try:
-        return model.model_validate(value), []
+        return model.model_validate(value), list(_empty_fields(document, value, under))
     except ValidationError as error:
         findings = error.errors(include_url=False)
     problems = [_problem(document, finding, model, under) for finding in findings]
+    problems += _empty_fields(document, value, under, {problem.field for problem in problems})
     return _what_is_right(value, findings, model), problems
+
+
+def _empty_fields(
+    document: Document, value: Any, under: str, known: Collection[str] = ()
+) -> Iterator[Problem]:
+    """Yield a problem for each field or item that is there without a value.
+
+    The models take ``None`` for absent, but a name with nothing after it is a slip.
+    """
+    if value is None and under not in known:
+        yield document.problem(under, _EMPTY)
+    if isinstance(value, dict):
+        for name, item in value.items():
+            yield from _empty_fields(document, item, f"{under}.{name}" if under else name, known)
+    if isinstance(value, list):
+        for index, item in enumerate(value):
+            yield from _empty_fields(document, item, f"{under}[{index}]", known)
 
 
 def _what_is_right(value: Any, findings: list[Any], model: type[Fields]) -> Fields | None:
@@ -109,7 +134,7 @@ def _message(finding: Any) -> str:
     if kind == "missing":
         return "is missing and must be given"
     if given is None:
-        return "is empty; give a value or delete the line"
+        return _EMPTY
     if kind in _WANTED:
         return _wrong_type(_WANTED[kind], given)
     if kind == "catalogue":
@@ -126,35 +151,41 @@ def _wrong_type(wanted: str, given: Any) -> str:
             hint = "; a text that begins with `[`, as many SMILES do, must stand in quotes"
         return f"is a list where {wanted} is wanted{hint}"
     if isinstance(given, dict):
-        return f"holds fields of its own where {wanted} is wanted"
+        return f"is a group of fields where {wanted} is wanted"
     if wanted == "a text":
-        return f"`{_written(given)}` is not read as a text; put it in quotes"
-    return f"`{_written(given)}` is given where {wanted} is wanted"
+        return f"{quoted(given)} is not read as a text; put it in quotes"
+    if wanted == "a list":
+        return f"{quoted(given)} is no list; right would be [{str(given)[:20]}]"
+    return f"{quoted(given)} is {_kind(given)} where {wanted} is wanted"
 
 
-def _written(given: Any) -> str:
-    return str(given).lower() if isinstance(given, bool) else str(given)
+def _kind(given: Any) -> str:
+    if isinstance(given, bool):
+        return "a truth value"
+    return "a text" if isinstance(given, str) else "a number"
 
 
 def _wrong_pattern(given: str, pattern: str) -> str:
     if pattern == ID_PATTERN:
-        return f"`{given}` holds more than lower-case letters, digits and single hyphens"
+        return f"{quoted(given)} holds more than lower-case letters, digits and single hyphens"
     if pattern == DOI_PATTERN:
-        return f"`{given}` is no DOI; right would be 10.1000/182, without https://doi.org/"
-    if re.search(r"[\n\r]", given):
+        return f"{quoted(given)} is no DOI; right would be 10.1000/182, without https://doi.org/"
+    if pattern == SMILES_PATTERN:
+        return f"{quoted(given)} holds a sign that SMILES has not; use single quotes round a `\\`"
+    if "\n" in given:
         return "runs over several lines; it must stand in one"
-    return f"`{given}` holds a space; a SMILES string has none"
+    return f"{quoted(given)} holds a control character; delete it"
 
 
 def _out_of_bounds(kind: str, given: Any, context: dict[str, Any], message: str) -> str:
     if kind == "string_too_short":
-        return "is empty; give a value or delete the line"
+        return _EMPTY
     if kind == "string_too_long":
         return f"is longer than {context['max_length']} characters"
     if kind == "finite_number":
-        return f"`{given}` is no finite number"
+        return f"{quoted(given)} is no finite number"
     if kind == "greater_than_equal":
-        return f"`{given}` is too small; the least is {context['ge']}"
+        return f"{quoted(given)} is too small; the least is {context['ge']:g}"
     if kind == "less_than_equal":
-        return f"`{given}` is too large; the most is {context['le']}"
+        return f"{quoted(given)} is too large; the most is {context['le']:g}"
     return message[:1].lower() + message[1:]

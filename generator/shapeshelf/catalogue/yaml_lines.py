@@ -7,15 +7,16 @@ numbers: ``NO``, ``on``, ``2024-01-31`` and ``75-10-5`` stay text, as a formula 
 number needs.
 """
 
+import os
 import re
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from dataclasses import dataclass, field
 from pathlib import Path
 from typing import Any, NoReturn
 
 import yaml
 
-from shapeshelf.catalogue.problems import WHOLE_FILE, Document, shown
+from shapeshelf.catalogue.problems import WHOLE_FILE, Document, one_line, quoted, shown
 from shapeshelf.errors import CatalogueError, Problem
 
 MAX_BYTES = 256 * 1024
@@ -25,8 +26,9 @@ _MAX_DIGITS = 18
 
 LOADER: Any = getattr(yaml, "CSafeLoader", yaml.SafeLoader)
 
-_INTEGER = re.compile(r"[-+]?[0-9]+")
-_FLOAT = re.compile(r"[-+]?(\.[0-9]+|[0-9]+(\.[0-9]*)?)([eE][-+]?[0-9]+)?")
+# Zeros in front belong to a code, not to a number.
+_INTEGER = re.compile(r"[-+]?(0|[1-9][0-9]*)")
+_FLOAT = re.compile(r"[-+]?(\.[0-9]+|(0|[1-9][0-9]*)(\.[0-9]*)?)([eE][-+]?[0-9]+)?")
 _WORDS = dict.fromkeys(("", "~", "null", "Null", "NULL")) | {
     word: word.lower() == "true" for word in ("true", "True", "TRUE", "false", "False", "FALSE")
 }
@@ -43,19 +45,22 @@ def read_document(file: Path) -> Document:
     if control := yaml.reader.Reader.NON_PRINTABLE.search(text):
         line = text.count("\n", 0, control.start()) + 1
         _refuse(file, line, WHOLE_FILE, "holds a control character; delete it")
-    builder = _Builder(file, LOADER(text))
+    loader = LOADER(text)
+    builder = _Builder(file, loader.get_event)
     try:
         data = builder.document()
     except yaml.MarkedYAMLError as error:
         line, message = _syntax_fault(error, text)
-        raise CatalogueError((Problem(shown(file), line, WHOLE_FILE, message),)) from error
+        _refuse(file, line, WHOLE_FILE, message)
     finally:
-        builder.loader.dispose()
+        loader.dispose()
     return Document(file, data, builder.lines, tuple(builder.problems))
 
 
 def _decoded(file: Path) -> str:
     """Return the text of ``file``, a byte order mark taken off."""
+    if not os.path.isfile(file):  # a pipe would be waited on for ever
+        _refuse(file, 1, WHOLE_FILE, "is no ordinary file")
     try:
         with file.open("rb") as stream:
             raw = stream.read(MAX_BYTES + 1)
@@ -75,28 +80,25 @@ class _Builder:
     """One pass over the events of one file."""
 
     file: Path
-    loader: Any
+    next: Callable[[], Any]
     lines: dict[str, int] = field(default_factory=dict)
     problems: list[Problem] = field(default_factory=list)
 
     def document(self) -> dict[str, Any]:
-        self._next()  # start of the stream
-        start = self._next()
+        self.next()  # start of the stream
+        start = self.next()
         if isinstance(start, yaml.StreamEndEvent):
             _refuse(self.file, 1, WHOLE_FILE, "is empty; it needs fields such as `id: sf4`")
-        event = self._next()
+        event = self.next()
         if not isinstance(event, yaml.MappingStartEvent):
             message = "holds no fields; right would be lines such as `id: sf4`"
             _refuse(self.file, _line(event), WHOLE_FILE, message)
         data: dict[str, Any] = self._value(event, "", 1)
-        self._next()  # end of the document
-        after = self._next()
+        self.next()  # end of the document
+        after = self.next()
         if not isinstance(after, yaml.StreamEndEvent):
             _refuse(self.file, _line(after), WHOLE_FILE, "a second document begins; one to a file")
         return data
-
-    def _next(self) -> Any:
-        return self.loader.get_event()
 
     def _value(self, event: Any, path: str, depth: int) -> Any:
         self._refuse_extras(event, path)
@@ -115,12 +117,13 @@ class _Builder:
         if event.anchor is not None:
             _refuse(self.file, _line(event), where, "an anchor (`&`) is not taken; write it out")
         if event.tag is not None:
-            message = f"the tag `{event.tag}` is not taken; put the text in quotes"
+            tag = event.tag.replace("tag:yaml.org,2002:", "!!")
+            message = f"the tag {quoted(tag)} is not taken; put the text in quotes"
             _refuse(self.file, _line(event), where, message)
 
     def _items(self, path: str, depth: int) -> Iterator[Any]:
         index = 0
-        while not isinstance(event := self._next(), yaml.SequenceEndEvent):
+        while not isinstance(event := self.next(), yaml.SequenceEndEvent):
             place = f"{path}[{index}]"
             self.lines[place] = _line(event)
             yield self._value(event, place, depth + 1)
@@ -128,22 +131,24 @@ class _Builder:
 
     def _mapping(self, path: str, depth: int) -> dict[str, Any]:
         data: dict[str, Any] = {}
-        while not isinstance(event := self._next(), yaml.MappingEndEvent):
+        while not isinstance(event := self.next(), yaml.MappingEndEvent):
             key = self._key(event, path)
             place = f"{path}.{key}" if path else key
             if key in data:
                 message = f"stands twice, first in line {self.lines[place]}; keep one of them"
-                self.problems.append(Problem(shown(self.file), _line(event), place, message))
+                self.problems.append(
+                    Problem(shown(self.file), _line(event), one_line(place), message)
+                )
                 self._skip(place, depth)
                 continue
             self.lines[place] = _line(event)
-            data[key] = self._value(self._next(), place, depth + 1)
+            data[key] = self._value(self.next(), place, depth + 1)
         return data
 
     def _skip(self, place: str, depth: int) -> None:
         """Read past a value, so that its lines do not replace those of the first."""
         kept, self.lines = self.lines, {}
-        self._value(self._next(), place, depth + 1)
+        self._value(self.next(), place, depth + 1)
         self.lines = kept
 
     def _key(self, event: Any, path: str) -> str:
@@ -157,6 +162,8 @@ def _typed(word: str) -> Any:
     """Return the value of a plain (unquoted) scalar."""
     if word in _WORDS:
         return _WORDS[word]
+    if word[0] not in "+-.0123456789":  # most words: spare them the patterns
+        return word
     if len(word) <= _MAX_DIGITS and _INTEGER.fullmatch(word):
         return int(word)
     if _FLOAT.fullmatch(word):
@@ -169,7 +176,8 @@ def _line(event: Any) -> int:
 
 
 def _refuse(file: Path, line: int, path: str, message: str) -> NoReturn:
-    raise CatalogueError((Problem(shown(file), line, path, message),))
+    problem = Problem(shown(file), line, one_line(path), one_line(message))
+    raise CatalogueError((problem,))
 
 
 def _syntax_fault(error: Any, text: str) -> tuple[int, str]:
@@ -189,4 +197,6 @@ def _syntax_hint(problem: str, row: str, character: str) -> str:
         return "a colon and a space inside a text start a new field; put the text in quotes"
     if "cannot start any token" in problem:
         return f"a text that begins with `{character}` must stand in quotes"
+    if "escape character" in problem:
+        return "a `\\` inside double quotes is an escape; use single quotes"
     return f"is not readable as YAML: {problem}"
