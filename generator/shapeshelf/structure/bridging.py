@@ -1,11 +1,15 @@
 """Molecule to RDKit and back; RDKit's own log stays silent from here on."""
 
+from collections.abc import Sequence
 from dataclasses import dataclass
 
+import numpy as np
+import numpy.typing as npt
 from rdkit import Chem, rdBase
+from rdkit.Geometry import Point3D
 
 from shapeshelf.structure.drawing import Drawing, DrawnBond
-from shapeshelf.structure.molecule import DoubleBondStereo, Molecule, TetrahedralStereo
+from shapeshelf.structure.molecule import DoubleBondStereo, Molecule, TetrahedralStereo, Vector
 from shapeshelf.structure.stereo import (
     read_double_bonds,
     read_tetrahedral,
@@ -15,6 +19,8 @@ from shapeshelf.structure.stereo import (
 
 # RDKit prints what it refuses; the user gets our one line instead.
 rdBase.DisableLog("rdApp.*")
+
+CoordinatesLike = npt.NDArray[np.float64] | Sequence[Vector]
 
 KINDS = {1: Chem.BondType.SINGLE, 2: Chem.BondType.DOUBLE, 3: Chem.BondType.TRIPLE}
 ORDERS = {kind: order for order, kind in KINDS.items()}
@@ -78,6 +84,17 @@ def to_rdkit(molecule: Molecule) -> Chem.RWMol:
     )
     stereo = Stereo(molecule.tetrahedral_stereo, molecule.double_bond_stereo)
     return mol_of_drawing(drawing, [atom.isotope for atom in molecule.atoms], stereo)
+
+
+def with_coordinates(mol: Chem.RWMol, coordinates: CoordinatesLike) -> Chem.RWMol:
+    """Give ``mol`` one conformer with these coordinates (ångström), and return it."""
+    conformer = Chem.Conformer(mol.GetNumAtoms())
+    conformer.Set3D(True)
+    for index, (x, y, z) in enumerate(np.asarray(coordinates, dtype=float)):
+        conformer.SetAtomPosition(index, Point3D(float(x), float(y), float(z)))
+    mol.RemoveAllConformers()
+    mol.AddConformer(conformer, assignId=True)
+    return mol
 
 
 def _perceive(mol: Chem.RWMol) -> None:

@@ -7,9 +7,7 @@ from shapeshelf.structure.bridging import to_rdkit
 from shapeshelf.structure.molecule import Molecule
 from shapeshelf.structure.naming import without_hydrogens
 
-ORGANIC_ELEMENTS = frozenset(
-    {"H", "B", "C", "N", "O", "F", "Si", "P", "S", "Cl", "Se", "Br", "I"}
-)
+ORGANIC_ELEMENTS = frozenset({"H", "B", "C", "N", "O", "F", "Si", "P", "S", "Cl", "Se", "Br", "I"})
 ORGANIC_PARTNERS = frozenset({"H", "C", "F", "Cl", "Br", "I"})
 
 

@@ -5,23 +5,28 @@ Distance geometry with torsion preferences: S. Riniker and G. A. Landrum, J. Che
 720 (both recalled).
 """
 
-from collections.abc import Sequence
 from typing import Any
 
 import numpy as np
 import numpy.typing as npt
 from rdkit import Chem, DistanceGeometry
 from rdkit.Chem import rdDistGeom, rdForceFieldHelpers
-from rdkit.Geometry import Point3D
 
 from shapeshelf.errors import AnalysisError
-from shapeshelf.structure.bridging import to_rdkit
-from shapeshelf.structure.molecule import Molecule, Vector
+from shapeshelf.structure.bounding import loose_bounds
+from shapeshelf.structure.bridging import (
+    CoordinatesLike,
+    drawing_of,
+    to_rdkit,
+    with_coordinates,
+)
+from shapeshelf.structure.drawing import Drawing, is_heavy_p_block, shell_electrons
+from shapeshelf.structure.molecule import Molecule
 
 Coordinates = npt.NDArray[np.float64]
-CoordinatesLike = Coordinates | Sequence[Vector]
 
 MOST_STEPS = 2000
+PLACEHOLDER = 74
 
 
 def embed(
@@ -30,20 +35,19 @@ def embed(
     """Return up to ``count`` conformers, each (n, 3) in ångström; same seed, same result.
 
     ``bounds`` (n, n) in ångström holds upper bounds above the diagonal and lower bounds below
-    it; with it, RDKit's own bounds and torsion preferences are left out. Stereochemistry is
-    respected. Raises AnalysisError where nothing fits the bounds.
+    it; with it, RDKit's own bounds and torsion preferences are left out. Without it they are
+    used where RDKit has them, and ``loose_bounds`` elsewhere. Stereochemistry is respected.
+    Raises AnalysisError where nothing fits the bounds.
     """
-    mol = to_rdkit(molecule)
-    if mol.GetNumAtoms() == 1:
+    if len(molecule.atoms) == 1:
         return [np.zeros((1, 3))]
-    for random_start in (False, True):
-        settings = _settings(seed, random_start)
-        if bounds is not None:
-            _use_bounds(settings, bounds)
-        found = _conformers(mol, count, settings)
-        if found:
-            return found
-    raise AnalysisError(molecule.formula, "no three-dimensional structure fits the distances")
+    found = [] if bounds is not None else _by_preferences(molecule, count, seed)
+    if not found:
+        limits = loose_bounds(molecule) if bounds is None else bounds
+        found = _by_bounds(molecule, count, seed, limits)
+    if not found:
+        raise AnalysisError(molecule.formula, "no three-dimensional structure fits the distances")
+    return found
 
 
 def mmff_covers(molecule: Molecule) -> bool:
@@ -66,14 +70,38 @@ def relax_mmff(molecule: Molecule, coordinates: CoordinatesLike) -> tuple[Coordi
     return _positions(mol.GetConformer()), float(field.CalcEnergy())
 
 
-def with_coordinates(mol: Chem.RWMol, coordinates: CoordinatesLike) -> Chem.RWMol:
-    """Give ``mol`` one conformer with these coordinates (ångström), and return it."""
-    conformer = Chem.Conformer(mol.GetNumAtoms())
-    conformer.Set3D(True)
-    for index, (x, y, z) in enumerate(np.asarray(coordinates, dtype=float)):
-        conformer.SetAtomPosition(index, Point3D(float(x), float(y), float(z)))
-    mol.RemoveAllConformers()
-    mol.AddConformer(conformer, assignId=True)
+def _by_preferences(molecule: Molecule, count: int, seed: int) -> list[Coordinates]:
+    mol = to_rdkit(molecule)
+    atoms: Any = mol.GetAtoms()
+    if any(atom.HasValenceViolation() for atom in atoms):
+        return []
+    return _conformers(mol, count, _settings(seed, False)) or _conformers(
+        mol, count, _settings(seed, True)
+    )
+
+
+def _by_bounds(molecule: Molecule, count: int, seed: int, bounds: Coordinates) -> list[Coordinates]:
+    mol = _with_placeholders(to_rdkit(molecule))
+    for random_start in (False, True):
+        settings = _settings(seed, random_start)
+        _use_bounds(settings, bounds)
+        found = _conformers(mol, count, settings)
+        if found:
+            return found
+    return []
+
+
+def _with_placeholders(mol: Chem.RWMol) -> Chem.RWMol:
+    """Put a metal, whose valence RDKit does not limit, where it would refuse the valence.
+
+    With bounds given, the element no longer matters to distance geometry.
+    """
+    atoms: Any = mol.GetAtoms()
+    for atom in atoms:
+        if atom.HasValenceViolation():
+            atom.SetAtomicNum(PLACEHOLDER)
+            atom.SetFormalCharge(0)
+    mol.UpdatePropertyCache(strict=False)
     return mol
 
 
@@ -81,7 +109,6 @@ def _settings(seed: int, random_start: bool) -> Any:
     settings: Any = rdDistGeom.ETKDGv3()
     settings.randomSeed = seed
     settings.numThreads = 1
-    settings.useSmallRingTorsions = True
     settings.useRandomCoords = random_start
     settings.ignoreSmoothingFailures = True
     settings.trackFailures = False
@@ -95,7 +122,6 @@ def _use_bounds(settings: Any, bounds: Coordinates) -> None:
     # Torsion and planarity preferences belong to ordinary valences and would pull the other way.
     settings.useExpTorsionAnglePrefs = False
     settings.useBasicKnowledge = False
-    settings.useSmallRingTorsions = False
     settings.useMacrocycleTorsions = False
 
 
@@ -113,4 +139,18 @@ def _positions(conformer: Any) -> Coordinates:
 
 
 def _covers(mol: Chem.RWMol) -> bool:
-    return bool(rdForceFieldHelpers.MMFFHasAllMoleculeParams(mol))
+    """MMFF94 invents parameters for hypervalent and open-shell atoms; those do not count."""
+    drawing = drawing_of(mol)
+    ordinary = all(_has_octet_form(drawing, atom) for atom in range(len(drawing.elements)))
+    return ordinary and bool(rdForceFieldHelpers.MMFFHasAllMoleculeParams(mol))
+
+
+def _has_octet_form(drawing: Drawing, atom: int) -> bool:
+    """Tell whether splitting multiple bonds into charges can give the atom an octet."""
+    if drawing.elements[atom] == "H":
+        return len(drawing.at[atom]) == 1
+    shell = shell_electrons(drawing, atom)
+    pi = sum(bond.order - 1 for bond in drawing.at[atom])
+    if not is_heavy_p_block(drawing.elements[atom]):
+        pi = 0
+    return shell % 2 == 0 and shell - 2 * pi <= 8 <= shell

@@ -5,8 +5,7 @@ from collections.abc import Mapping
 import numpy as np
 from rdkit import Chem
 
-from shapeshelf.structure.bridging import to_rdkit
-from shapeshelf.structure.embedding import CoordinatesLike, with_coordinates
+from shapeshelf.structure.bridging import CoordinatesLike, to_rdkit, with_coordinates
 from shapeshelf.structure.molecule import Molecule
 
 TITLE_LENGTH = 80
