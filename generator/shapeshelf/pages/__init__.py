@@ -1,1 +1,1 @@
-"""Report to HTML, JSON, CSV and the lookup index."""
+"""From reports to template values, and from those to HTML, JSON and the lookup index."""

@@ -1,0 +1,58 @@
+"""The one style sheet of the site, put together from its parts."""
+
+from collections.abc import Sequence
+from pathlib import Path
+
+from shapeshelf.errors import ShapeshelfError
+from shapeshelf.figures.palette import css_variables
+
+PARTS = (
+    "tokens.css",
+    "page.css",
+    "header.css",
+    "prose.css",
+    "sheet.css",
+    "tables.css",
+    "lists.css",
+    "lookup.css",
+    "print.css",
+)
+BELOW = "assets/stylesheets/main.*.min.css"
+
+
+def stylesheet(theme_dirs: Sequence[Path]) -> str:
+    """Return the whole style sheet.
+
+    The installed theme's own styles come first, in a cascade layer of their own, so that any
+    rule of ours stands above any of theirs however specific it is.
+    """
+    return "\n".join([_layered(theme_dirs), _figure_colours(), *_own(theme_dirs)])
+
+
+def _layered(theme_dirs: Sequence[Path]) -> str:
+    found = [path for folder in theme_dirs for path in sorted(folder.glob(BELOW))]
+    if not found:
+        return ""
+    text = found[0].read_text("utf-8").removeprefix('@charset "UTF-8";')
+    text = text.partition("/*# sourceMappingURL")[0]
+    return f"@layer installed{{{text}}}"
+
+
+def _figure_colours() -> str:
+    light, dark = css_variables(dark=False), css_variables(dark=True)
+    return (
+        f":root{{{light}}}"
+        f"@media screen and (prefers-color-scheme:dark){{:root:not([data-face=paper]){{{dark}}}}}"
+        f"@media screen{{:root[data-face=blueprint]{{{dark}}}}}"
+    )
+
+
+def _own(theme_dirs: Sequence[Path]) -> list[str]:
+    return [_first(theme_dirs, name).read_text("utf-8") for name in PARTS]
+
+
+def _first(theme_dirs: Sequence[Path], name: str) -> Path:
+    for folder in theme_dirs:
+        if (folder / "css" / name).is_file():
+            return folder / "css" / name
+    raise ShapeshelfError(f"the style sheet css/{name} is missing from the theme")

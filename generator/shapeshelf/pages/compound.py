@@ -1,0 +1,242 @@
+"""One compound: from its report to the values its page prints."""
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+from urllib.parse import quote
+
+from markupsafe import Markup
+
+from shapeshelf.catalogue.model import Catalogue, Entry, Source, SourceKind
+from shapeshelf.pages.addresses import (
+    compound_address,
+    shape_address,
+    source_anchor,
+)
+from shapeshelf.pages.centres import AngleView, CentreView, angle_view, centre_views
+from shapeshelf.pages.history import Change
+from shapeshelf.pages.properties import (
+    PolarityView,
+    SpectraView,
+    SymmetryView,
+    polarity_view,
+    spectra_view,
+    symmetry_view,
+)
+from shapeshelf.pages.protocols import address_of
+from shapeshelf.pages.typesetting import (
+    NO_BREAK,
+    formula_markup,
+    formula_text,
+    label_markup,
+    number_text,
+    point_group_text,
+    sentence_case,
+)
+from shapeshelf.pages.values import ANGSTROM, ValueView, citation, value_view
+from shapeshelf.report.model import Caution, CompoundReport
+
+KEY_ANGLES = 4
+"""As many as the title block holds without pushing the cautions off the first screen."""
+KEY_CENTRES = 6
+
+
+@dataclass(frozen=True, slots=True)
+class LengthView:
+    """One row of equivalent bonds."""
+
+    label: Markup
+    count: int
+    order: str
+    value: ValueView
+
+
+@dataclass(frozen=True, slots=True)
+class SourceView:
+    """One source that this page cites."""
+
+    key: str
+    anchor: str
+    text: str
+    recalled: bool
+    kind: str
+    identifiers: tuple[tuple[str, str, str | None], ...]
+    """(``DOI`` or ``ISBN``, text, link)."""
+    note: str | None
+
+
+@dataclass(frozen=True, slots=True)
+class UnmatchedView:
+    """A measured value whose label fits nothing in the structure."""
+
+    of: str
+    value: str
+    source_text: str
+    source_anchor: str
+
+
+@dataclass(frozen=True, slots=True)
+class CompoundView:
+    """Everything the compound page prints."""
+
+    id: str
+    address: str
+    name: str
+    formula: Markup
+    plain_formula: str
+    entry: Entry
+    shape: str | None
+    shape_words: str
+    shape_address: str | None
+    key_angles: tuple[AngleView, ...]
+    more_angles: int
+    centres: tuple[CentreView, ...]
+    lengths: tuple[LengthView, ...]
+    polarity: PolarityView
+    symmetry: SymmetryView
+    spectra: SpectraView
+    structure_method: str
+    resonance_forms: int
+    molar_mass: str
+    surface_area: str | None
+    log_p: str | None
+    smiles: str
+    inchikey: str | None
+    cautions: tuple[Caution, ...]
+    unmatched: tuple[UnmatchedView, ...]
+    sources: tuple[SourceView, ...]
+    protocols: tuple[tuple[str, str | None], ...]
+    """(title, address) of every protocol that uses the compound."""
+    revision: str
+    change: Change | None
+    point_group: str
+
+    @property
+    def description(self) -> str:
+        """Return one plain sentence for search engines and previews."""
+        group = point_group_text(self.point_group)
+        return f"{self.name} ({self.plain_formula}): {self.shape_words}, {group}."
+
+
+def compound_view(
+    report: CompoundReport, catalogue: Catalogue, revision: str, change: Change | None = None
+) -> CompoundView:
+    """Return the values of a compound page; the report must be that of a catalogue entry."""
+    entry, molecule = report.entry, report.molecule
+    assert entry is not None
+    sources = catalogue.sources
+    centres = centre_views(report, sources)
+    angles = _key_angles(report, sources) if len(centres) == 1 else ()
+    return CompoundView(
+        id=entry.id,
+        address=compound_address(entry.id),
+        name=entry.name,
+        formula=formula_markup(molecule.formula, molecule.charge),
+        plain_formula=formula_text(molecule.formula, molecule.charge),
+        entry=entry,
+        shape=report.shape,
+        shape_words=shape_words(report),
+        shape_address=shape_address(report.shape) if report.shape else None,
+        key_angles=angles[:KEY_ANGLES],
+        more_angles=max(0, len(angles) - KEY_ANGLES),
+        centres=centres,
+        lengths=_length_views(report, sources),
+        polarity=polarity_view(report, sources),
+        symmetry=symmetry_view(report),
+        spectra=spectra_view(report, sources),
+        structure_method=report.structure.method,
+        resonance_forms=len(report.lewis.forms),
+        molar_mass=f"{number_text(report.molar_mass_g_mol, 2)}{NO_BREAK}g/mol",
+        surface_area=_optional(report.topological_polar_surface_area, 1, NO_BREAK + "Å²"),
+        log_p=_optional(report.crippen_log_p, 2, ""),
+        smiles=molecule.smiles,
+        inchikey=molecule.inchikey,
+        cautions=report.cautions,
+        unmatched=_unmatched(report, sources),
+        sources=_cited(entry, sources),
+        protocols=tuple(
+            (catalogue.protocols[key].title, address_of(catalogue.protocols[key]))
+            for key in entry.used_in
+            if key in catalogue.protocols
+        ),
+        revision=revision,
+        change=change,
+        point_group=report.point_group,
+    )
+
+
+def shape_words(report: CompoundReport) -> str:
+    """Return the shape as one says it; for several centres, each kind with its shape."""
+    if report.shape:
+        return report.shape
+    kinds: dict[str, None] = {}
+    for centre in report.centres:
+        kinds[f"{centre.centre.element} {centre.shape or 'without a named shape'}"] = None
+    return ", ".join(kinds) or "no centre"
+
+
+def full_citation(source: Source) -> str:
+    """Return a source in full, as lists of literature print it."""
+    place = f" {source.where}" if source.where else ""
+    title = source.title.rstrip(".")
+    return f"{source.authors} ({source.year}). {title}.{place}".strip()
+
+
+def _key_angles(report: CompoundReport, sources: Mapping[str, Source]) -> tuple[AngleView, ...]:
+    """Return the angles of the only kind of centre, measured ones first."""
+    rows = sorted(report.centres[0].angles, key=lambda row: row.degrees.basis != "measured")
+    return tuple(angle_view(row, sources) for row in rows)
+
+
+def _length_views(report: CompoundReport, sources: Mapping[str, Source]) -> tuple[LengthView, ...]:
+    return tuple(
+        LengthView(
+            label=label_markup(row.of),
+            count=len(row.members),
+            order=f"{round(row.bond_order, 2):g}",
+            value=value_view(row.angstrom, ANGSTROM, sources),
+        )
+        for row in report.lengths
+    )
+
+
+def _optional(value: float | None, decimals: int, unit: str) -> str | None:
+    return None if value is None else number_text(value, decimals) + unit
+
+
+def _unmatched(report: CompoundReport, sources: Mapping[str, Source]) -> tuple[UnmatchedView, ...]:
+    return tuple(
+        UnmatchedView(
+            of=item.of or item.quantity.value,
+            value=f"{item.value:g} {item.unit}",
+            source_text=citation(sources[item.source]),
+            source_anchor=source_anchor(item.source),
+        )
+        for item in report.unmatched
+    )
+
+
+def _cited(entry: Entry, sources: Mapping[str, Source]) -> tuple[SourceView, ...]:
+    keys = dict.fromkeys(item.source for item in entry.measured if item.source in sources)
+    return tuple(source_view(sources[key]) for key in keys)
+
+
+def source_view(source: Source) -> SourceView:
+    """Return a source as lists print it."""
+    return SourceView(
+        key=source.key,
+        anchor=source_anchor(source.key),
+        text=sentence_case(full_citation(source)),
+        recalled=source.kind is SourceKind.RECALLED,
+        kind=source.kind.value,
+        identifiers=_identifiers(source),
+        note=source.note,
+    )
+
+
+def _identifiers(source: Source) -> tuple[tuple[str, str, str | None], ...]:
+    held: list[tuple[str, str, str | None]] = []
+    if source.doi:
+        held.append(("DOI", source.doi, f"https://doi.org/{quote(source.doi, safe='/()')}"))
+    if source.isbn:
+        held.append(("ISBN", source.isbn, None))
+    return tuple(held)

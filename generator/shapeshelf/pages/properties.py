@@ -1,0 +1,217 @@
+"""Polarity, symmetry and expected spectra of one compound as its page shows them."""
+
+from collections import Counter
+from collections.abc import Mapping
+from dataclasses import dataclass
+
+from markupsafe import Markup
+
+from shapeshelf.catalogue.model import Measurement, Quantity, Source
+from shapeshelf.pages.addresses import source_anchor
+from shapeshelf.pages.typesetting import (
+    NO_BREAK,
+    number_text,
+    operation_markup,
+    point_group_markup,
+    species_markup,
+)
+from shapeshelf.pages.values import DEBYE, ValueView, citation, value_view
+from shapeshelf.report.labels import atom_labels
+from shapeshelf.report.model import CompoundReport
+
+
+@dataclass(frozen=True, slots=True)
+class BondPolarityView:
+    """One kind of bond: which end is negative."""
+
+    bond: str
+    negative: str
+    difference: str
+    count: int
+
+
+@dataclass(frozen=True, slots=True)
+class PolarityView:
+    """Whether the compound is polar, how much, and why."""
+
+    word: str
+    """``polar``, ``non-polar`` or ``ion``."""
+    dipole: ValueView | None
+    reason: str
+    bonds: tuple[BondPolarityView, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class ModeView:
+    """The normal modes of one symmetry species."""
+
+    species: Markup
+    count: int
+    stretches: int
+    infrared: bool
+    raman: bool
+
+
+@dataclass(frozen=True, slots=True)
+class NmrView:
+    """One signal."""
+
+    nucleus: Markup
+    atoms: str
+    multiplicity: str
+    partners: str
+
+
+@dataclass(frozen=True, slots=True)
+class FrequencyView:
+    """One measured vibration."""
+
+    of: str
+    value: str
+    phase: str
+    source_text: str
+    source_anchor: str
+
+
+@dataclass(frozen=True, slots=True)
+class SymmetryView:
+    """Point group and what follows from it."""
+
+    point_group: Markup
+    basis: str
+    operations: tuple[tuple[int, Markup], ...]
+    rotational_number: int
+    chiral: bool
+    equivalent: tuple[str, ...]
+    tolerance: str
+
+
+@dataclass(frozen=True, slots=True)
+class SpectraView:
+    """What symmetry lets one expect."""
+
+    modes: tuple[ModeView, ...]
+    infrared_bands: int
+    raman_bands: int
+    coincidences: int
+    infrared_stretches: int
+    raman_stretches: int
+    microwave_axes: tuple[str, ...]
+    nmr: tuple[NmrView, ...]
+    fluxional_note: str | None
+    frequencies: tuple[FrequencyView, ...]
+
+
+def polarity_view(report: CompoundReport, sources: Mapping[str, Source]) -> PolarityView:
+    """Return the polarity of a compound."""
+    value = report.dipole_debye
+    return PolarityView(
+        word=polarity_word(report),
+        dipole=value_view(value, DEBYE, sources) if value else None,
+        reason=report.dipole_model.reason,
+        bonds=_bond_polarities(report),
+    )
+
+
+def polarity_word(report: CompoundReport) -> str:
+    """Return ``polar``, ``non-polar``, or ``ion`` where the moment depends on the origin."""
+    if report.molecule.charge:
+        return "ion"
+    if report.dipole_model.polar is None:
+        return "not known"
+    return "polar" if report.dipole_model.polar else "non-polar"
+
+
+def symmetry_view(report: CompoundReport) -> SymmetryView:
+    """Return the symmetry of a compound."""
+    symmetry = report.symmetry
+    labels = atom_labels(report.molecule)
+    counted = Counter(operation.label for operation in symmetry.operations)
+    return SymmetryView(
+        point_group=point_group_markup(report.point_group),
+        basis=report.point_group_basis.value,
+        operations=tuple((count, operation_markup(label)) for label, count in counted.items()),
+        rotational_number=symmetry.rotational_number,
+        chiral=symmetry.chiral,
+        equivalent=tuple(
+            " ".join(labels[atom] for atom in group)
+            for group in symmetry.equivalent_atoms
+            if len(group) > 1
+        ),
+        tolerance=number_text(symmetry.tolerance_angstrom, 2) + NO_BREAK + "Å",
+    )
+
+
+def spectra_view(report: CompoundReport, sources: Mapping[str, Source]) -> SpectraView:
+    """Return the expected spectra, and the measured vibrations beside them."""
+    spectra = report.spectra
+    labels = atom_labels(report.molecule)
+    return SpectraView(
+        modes=tuple(
+            ModeView(species_markup(m.species), m.count, m.stretches, m.infrared, m.raman)
+            for m in spectra.modes
+        ),
+        infrared_bands=spectra.infrared_bands,
+        raman_bands=spectra.raman_bands,
+        coincidences=spectra.coincidences,
+        infrared_stretches=spectra.infrared_stretches,
+        raman_stretches=spectra.raman_stretches,
+        microwave_axes=spectra.microwave_axes,
+        nmr=tuple(
+            NmrView(
+                nucleus=_nucleus_markup(signal.nucleus),
+                atoms=" ".join(labels[atom] for atom in signal.atoms),
+                multiplicity=signal.multiplicity,
+                partners=", ".join(signal.partners),
+            )
+            for signal in spectra.nmr
+        ),
+        fluxional_note=spectra.fluxional_note,
+        frequencies=_frequencies(report, sources),
+    )
+
+
+def _nucleus_markup(nucleus: str) -> Markup:
+    element = nucleus.lstrip("0123456789")
+    return Markup("<sup>{}</sup>{}").format(nucleus.removesuffix(element), element)
+
+
+def _bond_polarities(report: CompoundReport) -> tuple[BondPolarityView, ...]:
+    elements = [atom.element for atom in report.molecule.atoms]
+    kinds = Counter(
+        (
+            elements[bond.positive],
+            elements[bond.negative],
+            number_text(abs(bond.electronegativity_difference), 2),
+        )
+        for bond in report.dipole_model.bonds
+    )
+    return tuple(
+        BondPolarityView(
+            bond=f"{positive}–{negative}",
+            negative=negative if float(difference) else "",
+            difference=difference,
+            count=count,
+        )
+        for (positive, negative, difference), count in kinds.items()
+    )
+
+
+def _frequencies(
+    report: CompoundReport, sources: Mapping[str, Source]
+) -> tuple[FrequencyView, ...]:
+    measured = report.entry.measured if report.entry else ()
+    return tuple(
+        _frequency_view(item, sources) for item in measured if item.quantity is Quantity.FREQUENCY
+    )
+
+
+def _frequency_view(item: Measurement, sources: Mapping[str, Source]) -> FrequencyView:
+    plus_minus = "" if item.uncertainty is None else f"{NO_BREAK}±{NO_BREAK}{item.uncertainty:g}"
+    return FrequencyView(
+        of=item.of or "",
+        value=f"{item.value:g}{plus_minus}{NO_BREAK}cm⁻¹",
+        phase=item.phase or "",
+        source_text=citation(sources[item.source]),
+        source_anchor=source_anchor(item.source),
+    )

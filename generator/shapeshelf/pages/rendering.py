@@ -1,0 +1,37 @@
+"""Templates to HTML. Autoescaping is on for every part; only ``Markup`` passes through as it is."""
+
+from functools import cache
+from pathlib import Path
+
+import jinja2
+
+import shapeshelf
+from shapeshelf.errors import ShapeshelfError
+
+PACKAGE = Path(shapeshelf.__file__).resolve().parent
+
+
+def templates_dir() -> Path:
+    """Return the folder of pages, parts and theme: beside the package, or in the checkout."""
+    for place in (PACKAGE / "site_templates", PACKAGE.parents[1] / "site_templates"):
+        if (place / "parts").is_dir():
+            return place
+    raise ShapeshelfError("the site templates are missing from this installation of shapeshelf")
+
+
+def render(part: str, **values: object) -> str:
+    """Return the HTML of ``parts/PART`` with these values."""
+    return environment().get_template(part).render(values)
+
+
+@cache
+def environment() -> jinja2.Environment:
+    """Return the one Jinja environment of all parts; an unknown name is an error."""
+    return jinja2.Environment(
+        loader=jinja2.FileSystemLoader(templates_dir() / "parts"),
+        autoescape=True,
+        undefined=jinja2.StrictUndefined,
+        trim_blocks=True,
+        lstrip_blocks=True,
+        auto_reload=False,
+    )

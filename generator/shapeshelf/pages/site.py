@@ -1,0 +1,165 @@
+"""Everything the site holds, each page and file with its address."""
+
+import hashlib
+import json
+from collections.abc import Iterator, Mapping, Sequence
+from functools import partial
+from pathlib import Path
+
+from shapeshelf.catalogue.model import Catalogue, Entry
+from shapeshelf.pages import addresses
+from shapeshelf.pages.compound import CompoundView, compound_view, source_view
+from shapeshelf.pages.drawings import compound_figures, shape_glyph
+from shapeshelf.pages.history import Change, last_changes
+from shapeshelf.pages.home import compound_line, home_view
+from shapeshelf.pages.lookup_index import lookup_index
+from shapeshelf.pages.model import SiteFile, SitePage
+from shapeshelf.pages.protocols import (
+    ProtocolView,
+    document_markup,
+    is_markdown,
+    protocol_views,
+)
+from shapeshelf.pages.rendering import render
+from shapeshelf.pages.shapes import ShapeView, overview, shape_views
+from shapeshelf.pages.structure_files import sdf_text, xyz_text
+from shapeshelf.report.json import report_json
+from shapeshelf.report.model import CompoundReport
+
+REVISION_DIGITS = 8
+
+Reports = Sequence[CompoundReport]
+
+
+def site_pages(catalogue: Catalogue, reports: Reports, site_name: str) -> Iterator[SitePage]:
+    """Yield every generated page; bodies are rendered when they are asked for."""
+    shapes = shape_views(reports, catalogue.sources)
+    protocols = protocol_views(catalogue)
+    changes = last_changes(catalogue.root)
+    yield _page("", site_name, "home.html", home=home_view(reports, shapes, changes))
+    yield _page(addresses.LOOKUP, "Lookup", "lookup.html")
+    yield _page(addresses.COMPOUNDS, "All compounds", "compounds.html", lines=_lines(reports))
+    yield _page(
+        addresses.SHAPES, "Shapes", "shapes.html", overview=overview(reports), shapes=shapes
+    )
+    yield from (_shape_page(shape) for shape in shapes)
+    yield _page(addresses.SOURCES, "Sources", "sources.html", sources=_sources(catalogue))
+    yield _page(addresses.PROTOCOLS, "Protocols", "protocols.html", protocols=protocols)
+    yield from _protocol_pages(catalogue, protocols)
+    for report in reports:
+        yield from _compound_pages(report, catalogue, changes)
+
+
+def site_files(catalogue: Catalogue, reports: Reports) -> Iterator[SiteFile]:
+    """Yield every generated file: data, structures, indexes, the protocols' own documents."""
+    yield SiteFile("lookup-index.json", partial(lookup_index, reports))
+    yield SiteFile("catalogue.json", partial(_catalogue_json, reports))
+    for report in reports:
+        for compound_id in _all_ids(report):
+            yield from _compound_files(addresses.compound_address(compound_id), report)
+    for protocol in catalogue.protocols.values():
+        if protocol.file is not None and not is_markdown(protocol):
+            source = catalogue.root / protocol.file
+            address = addresses.protocol_address(protocol.id) + source.name
+            yield SiteFile(address, source.read_bytes)
+
+
+def data_json(report: CompoundReport) -> bytes:
+    """Return the contract's JSON of one compound, the entry's fields beside it."""
+    return json.dumps(report_json(report), ensure_ascii=False, indent=1).encode()
+
+
+def revision(report: CompoundReport) -> str:
+    """Return a short hash of all that the compound's data say; the same data, the same mark."""
+    return hashlib.sha256(data_json(report)).hexdigest()[:REVISION_DIGITS]
+
+
+def _page(address: str, title: str, part: str, **values: object) -> SitePage:
+    kind = part.removesuffix(".html")
+    root = addresses.root_from(address)
+    body = partial(render, part, root=root, title=title, glyph=shape_glyph, **values)
+    return SitePage(address, title, "", kind, body)
+
+
+def _shape_page(shape: ShapeView) -> SitePage:
+    title = shape.name[:1].upper() + shape.name[1:]
+    return _page(shape.address, title, "shape.html", shape=shape)
+
+
+def _compound_pages(
+    report: CompoundReport, catalogue: Catalogue, changes: Mapping[Path, Change]
+) -> Iterator[SitePage]:
+    entry = _entry(report)
+    address = addresses.compound_address(entry.id)
+    mark = revision(report)
+    view = compound_view(report, catalogue, mark, changes.get(entry.file.resolve()))
+    body = partial(_compound_html, report, view)
+    yield SitePage(address, entry.name, view.description, "compound", body, revision=mark)
+    for earlier in entry.formerly:
+        yield _moved_page(addresses.compound_address(earlier), address, entry)
+
+
+def _compound_html(report: CompoundReport, view: CompoundView) -> str:
+    figures = compound_figures(report)
+    root = addresses.root_from(view.address)
+    return render("compound.html", root=root, compound=view, figures=figures, glyph=shape_glyph)
+
+
+def _moved_page(earlier: str, address: str, entry: Entry) -> SitePage:
+    body = partial(
+        render,
+        "moved.html",
+        root=addresses.root_from(earlier),
+        address=address,
+        name=entry.name,
+    )
+    return SitePage(earlier, entry.name, "", "moved", body, moved_to=address)
+
+
+def _protocol_pages(catalogue: Catalogue, views: Sequence[ProtocolView]) -> Iterator[SitePage]:
+    for view in views:
+        protocol = catalogue.protocols[view.id]
+        if protocol.file is not None and is_markdown(protocol):
+            address = addresses.protocol_address(view.id)
+            text = (catalogue.root / protocol.file).read_text("utf-8")
+            yield _page(
+                address, view.title, "protocol.html", protocol=view, document=document_markup(text)
+            )
+
+
+def _compound_files(address: str, report: CompoundReport) -> Iterator[SiteFile]:
+    yield SiteFile(address + "data.json", partial(data_json, report))
+    yield SiteFile(address + "structure.xyz", lambda: xyz_text(report).encode())
+    yield SiteFile(address + "structure.sdf", lambda: sdf_text(report).encode())
+
+
+def _catalogue_json(reports: Reports) -> bytes:
+    rows = [report_json(report) for report in reports]
+    return json.dumps({"schema": 1, "compounds": rows}, ensure_ascii=False).encode()
+
+
+def _sources(catalogue: Catalogue) -> list[tuple[object, list[tuple[str, str]]]]:
+    """Return every source with the compounds that cite it."""
+    citing: dict[str, dict[str, str]] = {key: {} for key in sorted(catalogue.sources)}
+    for entry in catalogue.entries:
+        for item in entry.measured:
+            citing[item.source][entry.name] = addresses.compound_address(entry.id)
+    return [
+        (source_view(catalogue.sources[key]), list(names.items())) for key, names in citing.items()
+    ]
+
+
+def _lines(reports: Reports) -> list[object]:
+    lines = [compound_line(report, report.shape or "") for report in reports]
+    return sorted(lines, key=lambda line: line.name.casefold())
+
+
+def _all_ids(report: CompoundReport) -> tuple[str, ...]:
+    entry = _entry(report)
+    return (entry.id, *entry.formerly)
+
+
+def _entry(report: CompoundReport) -> Entry:
+    if report.entry is None:
+        raise ValueError(f"{report.name}: only a catalogue entry has a page")
+    return report.entry

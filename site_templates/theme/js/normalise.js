@@ -1,0 +1,45 @@
+// How what is typed and what is stored are brought to one spelling.
+
+const GREEK = {
+  α: "alpha", β: "beta", γ: "gamma", δ: "delta", ε: "epsilon", ζ: "zeta", η: "eta", θ: "theta",
+  κ: "kappa", λ: "lambda", μ: "mu", µ: "mu", ν: "nu", ξ: "xi", π: "pi", ρ: "rho", σ: "sigma",
+  τ: "tau", φ: "phi", χ: "chi", ψ: "psi", ω: "omega",
+};
+
+const SPELLINGS = [
+  [/sulph/g, "sulf"],
+  [/aluminum/g, "aluminium"],
+  [/cesium/g, "caesium"],
+  [/oxid\b/g, "oxide"],
+  [/fluorid\b/g, "fluoride"],
+  [/chlorid\b/g, "chloride"],
+];
+
+/** Names: lower case, no accents, Greek letters spelled out, one spelling, words apart. */
+export function foldName(text) {
+  let folded = text.toLowerCase().replace(/[α-ωµ]/gu, (letter) => GREEK[letter] ?? letter);
+  folded = plainDigits(folded).normalize("NFKD").replace(/\p{M}/gu, "");
+  for (const [from, to] of SPELLINGS) folded = folded.replace(from, to);
+  return folded.replace(/[^a-z0-9]+/g, " ").trim();
+}
+
+/** Digits above or below the line become plain ones, every dash and minus a hyphen. */
+export function plainDigits(text) {
+  return text
+    .normalize("NFKC")
+    .replace(/[\u2010-\u2015\u2212]/g, "-")
+    .replace(/∞/g, "inf");
+}
+
+/** Codes and identifiers: letters and digits alone. */
+export function foldCode(text) {
+  return plainDigits(text).toLowerCase().replace(/[^a-z0-9]/g, "");
+}
+
+/** The digits of a CAS number, with or without its hyphens; empty where it cannot be one. */
+export function casDigits(text) {
+  const plain = plainDigits(text.trim()).replace(/^cas\s*(no\.?|number)?\s*:?\s*/i, "");
+  if (!/^\d[\d-]*$/.test(plain)) return "";
+  const digits = plain.replace(/-/g, "");
+  return digits.length >= 4 && digits.length <= 10 ? digits : "";
+}
