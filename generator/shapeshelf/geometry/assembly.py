@@ -1,0 +1,98 @@
+"""A three-dimensional structure for a whole molecule.
+
+A1  Supplied coordinates stand as they are.
+A2  One centre and its neighbours: the directions of the best placement times the bond lengths.
+A3  Several centres, MMFF94s has parameters for all: conformers by ETKDG, relaxed by MMFF94s,
+    the lowest one; then lengths and angles brought to their targets, torsions kept.
+A4  Several centres otherwise: conformers by distance geometry on our own bounds, relaxed under
+    lengths, angles, contacts and torsion rules (forces.py, torsions.py), the lowest one.
+A5  The result is symmetrised: atoms that miss their image by less than a tolerance are put on it.
+
+In A3 and A4 the atoms are first put in an order that does not depend on the spelling, and seeds
+are fixed: the same molecule always gives the same structure.
+"""
+
+from collections.abc import Sequence
+
+import numpy as np
+
+from shapeshelf.domains.bond_lengths import bond_length_angstrom
+from shapeshelf.domains.model import Centre, LewisCount
+from shapeshelf.errors import AnalysisError
+from shapeshelf.geometry.conformers import Conformers, by_force_field, by_rules
+from shapeshelf.geometry.model import Structure, StructureBasis
+from shapeshelf.geometry.surroundings import surroundings_of
+from shapeshelf.geometry.symmetry import find_symmetry
+from shapeshelf.geometry.vectors import Array
+from shapeshelf.structure.embedding import mmff_covers
+from shapeshelf.structure.molecule import Molecule, Vector
+
+SNAP_ANGSTROM = 0.08
+"""How far an assembled atom may be from its symmetric place and still be put there (A5)."""
+
+
+def assemble(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]) -> Structure:
+    """Return coordinates of every atom of ``molecule``, in its order, and how they came about.
+
+    Raises AnalysisError for a centre whose shape only supplied coordinates can tell, and where
+    no structure fits the distances.
+    """
+    if molecule.coordinates_angstrom is not None:
+        return Structure(
+            molecule.coordinates_angstrom, StructureBasis.SUPPLIED, "coordinates as supplied"
+        )
+    _refuse_unplaced(molecule, centres)
+    if len(centres) <= 1:
+        points = _single_centre(molecule, lewis, centres)
+        method = "directions of the domain model, bond lengths from covalent radii"
+        return _structure(molecule, points, method, 1)
+    found = _conformers(molecule, lewis, centres)
+    return _structure(molecule, found.best, found.method, found.tried)
+
+
+def _refuse_unplaced(molecule: Molecule, centres: Sequence[Centre]) -> None:
+    for centre in centres:
+        if not centre.placements:
+            raise AnalysisError(
+                molecule.formula,
+                f"no rule gives the shape at {centre.label}; supply coordinates (XYZ, MOL or SDF)",
+            )
+
+
+def _single_centre(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]) -> Array:
+    """Return coordinates (n, 3) for one atom, two atoms, or one centre with its neighbours (A2)."""
+    points = np.zeros((len(molecule.atoms), 3))
+    if not centres:
+        for bond, order in zip(molecule.bonds, lewis.bond_orders, strict=True):
+            points[bond.end, 2] = _length(molecule, bond.begin, bond.end, order)
+        return points
+    centre = centres[0]
+    for domain, direction in zip(centre.domains, centre.placements[0].directions, strict=True):
+        if domain.neighbour is not None:
+            length = _length(molecule, centre.atom, domain.neighbour, domain.bond_order)
+            points[domain.neighbour] = length * np.array(direction)
+    return points
+
+
+def _length(molecule: Molecule, first: int, second: int, order: float) -> float:
+    elements = molecule.atoms[first].element, molecule.atoms[second].element
+    return bond_length_angstrom(*elements, order)
+
+
+def _conformers(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]) -> Conformers:
+    known = surroundings_of(molecule, lewis, centres)
+    if mmff_covers(molecule):
+        return by_force_field(molecule, known)
+    return by_rules(molecule, known)
+
+
+def _structure(molecule: Molecule, points: Array, method: str, tried: int) -> Structure:
+    """Return the structure symmetrised (A5)."""
+    elements = [atom.element for atom in molecule.atoms]
+    symmetric = find_symmetry(elements, points, SNAP_ANGSTROM).coordinates_angstrom
+    return Structure(_centred(symmetric), StructureBasis.MODEL, method, tried)
+
+
+def _centred(points: Sequence[Vector]) -> tuple[Vector, ...]:
+    middle = np.mean(np.array(points), axis=0)
+    return tuple((float(x), float(y), float(z)) for x, y, z in np.array(points) - middle)

@@ -1,0 +1,97 @@
+"""What assembly knows of each atom: its neighbours, lengths, angles, lone pairs, flatness."""
+
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass
+
+from shapeshelf.domains.bond_lengths import bond_length_angstrom
+from shapeshelf.domains.model import Centre, LewisCount
+from shapeshelf.structure.molecule import Molecule
+
+LINEAR_DEGREES = 168.0
+"""An angle this wide is treated as a straight line."""
+FLAT_SUM_DEGREES = 357.0
+"""Three angles that add up to this lie in a plane."""
+MULTIPLE_ORDER = 1.15
+"""From this averaged bond order a bond has a share of pi bonding."""
+
+
+@dataclass(frozen=True, slots=True)
+class Surroundings:
+    """The molecule as assembly sees it; one entry an atom or a bond."""
+
+    neighbours: tuple[tuple[int, ...], ...]
+    lengths: dict[tuple[int, int], float]
+    """Target length in ångström by (lower, higher) atom."""
+    orders: dict[tuple[int, int], float]
+    angles: dict[tuple[int, int, int], float]
+    """Target angle in degrees by (end, centre, end), both ways round."""
+    linear: frozenset[int]
+    """Centres with two neighbours in line."""
+    flat: frozenset[int]
+    """Atoms whose bonds lie in a plane and that can share in a pi system."""
+    paired: frozenset[int]
+    """Atoms with a lone pair of their own."""
+
+    def length(self, first: int, second: int) -> float:
+        """Return the target length in ångström."""
+        return self.lengths[min(first, second), max(first, second)]
+
+    def order(self, first: int, second: int) -> float:
+        """Return the averaged bond order."""
+        return self.orders[min(first, second), max(first, second)]
+
+
+def surroundings_of(
+    molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]
+) -> Surroundings:
+    """Return what assembly needs to know of ``molecule``."""
+    neighbours = tuple(molecule.neighbours(atom) for atom in range(len(molecule.atoms)))
+    lengths, orders = {}, {}
+    for bond, order in zip(molecule.bonds, lewis.bond_orders, strict=True):
+        key = (min(bond.begin, bond.end), max(bond.begin, bond.end))
+        orders[key] = order
+        lengths[key] = bond_length_angstrom(
+            molecule.atoms[bond.begin].element, molecule.atoms[bond.end].element, order
+        )
+    angles = dict(_angles(centres))
+    linear = frozenset(c.atom for c in centres if c.bonded == 2 and _widest(c) > LINEAR_DEGREES)
+    return Surroundings(
+        neighbours=neighbours,
+        lengths=lengths,
+        orders=orders,
+        angles=angles,
+        linear=linear,
+        flat=frozenset(_flat_atoms(neighbours, orders, lewis, centres)) - linear,
+        paired=frozenset(k for k, atom in enumerate(lewis.atoms) if _own_pairs(lewis, k) > 0),
+    )
+
+
+def _angles(centres: Sequence[Centre]) -> Iterator[tuple[tuple[int, int, int], float]]:
+    for centre in centres:
+        for angle in centre.angles:
+            yield angle.atoms, angle.model_degrees
+            yield angle.atoms[::-1], angle.model_degrees
+
+
+def _widest(centre: Centre) -> float:
+    return max((angle.model_degrees for angle in centre.angles), default=0.0)
+
+
+def _own_pairs(lewis: LewisCount, atom: int) -> int:
+    return lewis.atoms[atom].lone_pairs - lewis.atoms[atom].delocalised_pairs
+
+
+def _flat_atoms(
+    neighbours: tuple[tuple[int, ...], ...],
+    orders: dict[tuple[int, int], float],
+    lewis: LewisCount,
+    centres: Sequence[Centre],
+) -> Iterator[int]:
+    for centre in centres:
+        atom = centre.atom
+        if centre.bonded == 3 and sum(a.model_degrees for a in centre.angles) > FLAT_SUM_DEGREES:
+            yield atom
+        elif centre.bonded == 2:
+            shares = (orders[min(atom, k), max(atom, k)] for k in neighbours[atom])
+            if lewis.atoms[atom].delocalised_pairs or max(shares) > MULTIPLE_ORDER:
+                yield atom
