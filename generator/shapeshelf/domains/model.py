@@ -15,6 +15,8 @@ class LewisAtom:
     formal_charge: int
     delocalised_pairs: int = 0
     """Of ``lone_pairs``, those that lie in a pi system and are no domain in the plane."""
+    delocalised_singles: int = 0
+    """Of ``single_electrons``, those that another drawing of equal standing has elsewhere."""
 
 
 @dataclass(frozen=True, slots=True)

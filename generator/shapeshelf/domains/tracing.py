@@ -1,0 +1,140 @@
+"""The working of a centre in plain words, one numbered rule a step."""
+
+from shapeshelf.domains.graph import valence_electrons
+from shapeshelf.domains.metal_rules import MetalShape
+from shapeshelf.domains.metals import MetalCentre
+from shapeshelf.domains.model import Domain, DomainKind, LewisAtom, LewisCount, Placement, TraceStep
+from shapeshelf.domains.placing import arrangement_name
+from shapeshelf.domains.trace_angles import angle_steps
+from shapeshelf.reference.departures import KnownDeparture
+from shapeshelf.structure.molecule import Molecule
+
+NUMBERS = ("no", "one", "two", "three", "four", "five", "six", "seven", "eight", "nine")
+
+
+def trace_main_group(
+    molecule: Molecule,
+    lewis: LewisCount,
+    atom: int,
+    domains: tuple[Domain, ...],
+    placements: tuple[Placement, ...],
+    known: KnownDeparture | None,
+) -> tuple[TraceStep, ...]:
+    """Return the steps for a main-group centre."""
+    count = lewis.atoms[atom]
+    steps = [_counted(molecule, atom, count), *_delocalised(count)]
+    steps.append(_domains(domains))
+    if known:
+        steps.append(TraceStep("departure", f"{known.sentence} ({known.source})."))
+    steps += _placed(domains, placements)
+    steps += angle_steps(molecule, atom, domains, placements[0])
+    return tuple(steps)
+
+
+def trace_unplaceable(reason: str) -> tuple[TraceStep, ...]:
+    """Return the one step of a centre with more domains than can be placed."""
+    return (TraceStep("P1", f"{reason}."),)
+
+
+def trace_metal(
+    metal: MetalCentre,
+    found: MetalShape | None,
+    placements: tuple[Placement, ...],
+    molecule: Molecule,
+) -> tuple[TraceStep, ...]:
+    """Return the steps for a metal centre."""
+    steps = [_oxidation(metal)]
+    if found is None:
+        why = metal.obstacle or "no rule covers this number of neighbours and d electrons"
+        place = "supplied coordinates" if molecule.coordinates_angstrom else "nothing yet"
+        steps.append(TraceStep("M", f"No shape by rule: {why}. It is taken from {place}."))
+        return tuple(steps)
+    steps.append(TraceStep(found.rule, f"{_capital(found.reason)} ({found.source})."))
+    if found.departs:
+        steps.append(TraceStep("departure", f"{found.departs} ({found.source})."))
+    if len(placements) > 1:
+        steps.append(
+            TraceStep(
+                "S",
+                f"{len(placements)} arrangements of the ligands differ; the first is shown, "
+                "the drawing itself does not say which isomer it is.",
+            )
+        )
+    return tuple(steps)
+
+
+def _counted(molecule: Molecule, atom: int, count: LewisAtom) -> TraceStep:
+    element, charge = molecule.atoms[atom].element, count.formal_charge
+    valence = valence_electrons(element)
+    charged = f", {-charge:+d} for its charge" if charge else ""
+    left = 2 * count.lone_pairs + count.single_electrons
+    return TraceStep(
+        "C1",
+        f"{element} brings {plural(valence, 'valence electron')}{charged}; "
+        f"{max(valence - charge - left, 0)} go into its bonds, {left} stay: "
+        f"{plural(count.lone_pairs, 'lone pair')}"
+        + (f", {plural(count.single_electrons, 'single electron')}" * bool(count.single_electrons))
+        + ".",
+    )
+
+
+def _delocalised(count: LewisAtom) -> list[TraceStep]:
+    steps = []
+    if count.delocalised_pairs:
+        number = plural(count.delocalised_pairs, "lone pair")
+        steps.append(
+            TraceStep("D", f"{_capital(number)} in the pi system: no domain in the plane.")
+        )
+    if count.delocalised_singles:
+        steps.append(TraceStep("D", "The single electron is spread over the pi system: no domain."))
+    return steps
+
+
+def _domains(domains: tuple[Domain, ...]) -> TraceStep:
+    kinds = [domain.kind for domain in domains]
+    parts = [plural(kinds.count(kind), kind.value) for kind in DomainKind if kinds.count(kind)]
+    return TraceStep("C", f"{_capital(plural(len(domains), 'domain'))}: {', '.join(parts)}.")
+
+
+def _placed(domains: tuple[Domain, ...], placements: tuple[Placement, ...]) -> list[TraceStep]:
+    best = placements[0]
+    count = len(best.directions)
+    bonds = sum(domain.kind is DomainKind.BOND for domain in domains)
+    text = f"{_capital(plural(count, 'domain'))} lie furthest apart as {arrangement_name(count)}"
+    steps = [TraceStep("P1", f"{text}; the {plural(bonds, 'bond')} are {best.shape}.")]
+    for other in placements[1:3]:
+        cost = other.energy - best.energy
+        steps.append(
+            TraceStep(
+                "P2", f"{other.shape} {_held(other, domains)}costs {cost:.3g} more repulsion."
+            )
+        )
+    return steps
+
+
+def _held(placement: Placement, domains: tuple[Domain, ...]) -> str:
+    sites = [
+        f"{domain.kind.value} {site}"
+        for domain, site in zip(domains, placement.sites, strict=False)
+        if domain.kind is not DomainKind.BOND and site
+    ]
+    return f"({', '.join(sites)}) " if sites else ""
+
+
+def _oxidation(metal: MetalCentre) -> TraceStep:
+    electrons = "" if metal.d_electrons is None else f", d{metal.d_electrons}"
+    return TraceStep(
+        "M1",
+        f"{metal.element} in oxidation state {metal.oxidation_state:+d}{electrons}, "
+        f"{plural(metal.coordination, 'neighbour')}.",
+    )
+
+
+def plural(number: int, noun: str) -> str:
+    """Return the number in words with its noun."""
+    word = NUMBERS[number] if 0 <= number < len(NUMBERS) else str(number)
+    return f"{word} {noun}" + ("" if number == 1 else "s")
+
+
+def _capital(text: str) -> str:
+    return text[:1].upper() + text[1:]
