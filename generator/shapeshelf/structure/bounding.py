@@ -10,8 +10,12 @@ from shapeshelf.structure.molecule import Bond, Molecule
 
 BOND_MARGIN_ANGSTROM = 0.05
 """Scatter of real bonds around sums of radii."""
-SMALLEST_ANGLE_DEGREES = 58.0
-"""Three-membered rings reach 60 degrees; nothing usual is sharper."""
+SMALLEST_ANGLE_DEGREES = {2: 90.0, 3: 85.0, 4: 78.0, 5: 70.0, 6: 70.0}
+"""By number of neighbours; pairs in three-membered rings are bonded and have a bond's bounds."""
+SMALLEST_LINEAR_DEGREES = 165.0
+"""Carbon and nitrogen with two pi bonds and two neighbours."""
+SMALLEST_CROWDED_DEGREES = 60.0
+"""Seven neighbours and more: 72 degrees in a pentagonal plane, less in eight."""
 CLOSEST_ANGSTROM = 1.5
 """Lower bound for atoms three or more bonds apart: hydrogens across a small ring."""
 DEFAULT_RADIUS_ANGSTROM = 1.5
@@ -56,16 +60,22 @@ def _bound_angles(
     bounds: npt.NDArray[np.float64],
 ) -> None:
     around: list[list[int]] = [[] for _ in molecule.atoms]
+    pi = [0] * len(molecule.atoms)
     for bond in molecule.bonds:
+        pi[bond.begin] += bond.order - 1
+        pi[bond.end] += bond.order - 1
         around[bond.begin].append(bond.end)
         around[bond.end].append(bond.begin)
     for centre, neighbours in enumerate(around):
+        sharpest = SMALLEST_ANGLE_DEGREES.get(len(neighbours), SMALLEST_CROWDED_DEGREES)
+        if len(neighbours) == 2 and pi[centre] == 2 and molecule.atoms[centre].element in "CN":
+            sharpest = SMALLEST_LINEAR_DEGREES
         for second in range(len(neighbours)):
             for first in range(second):
                 low, high = sorted((neighbours[first], neighbours[second]))
                 a = lengths[min(low, centre), max(low, centre)]
                 b = lengths[min(high, centre), max(high, centre)]
-                nearest = _opposite_side(a, b, SMALLEST_ANGLE_DEGREES)
+                nearest = _opposite_side(a, b, sharpest)
                 bounds[high, low] = nearest - 2 * BOND_MARGIN_ANGSTROM
                 bounds[low, high] = a + b + 2 * BOND_MARGIN_ANGSTROM
 

@@ -31,9 +31,12 @@ class Drawing:
     bonds: list[DrawnBond]
     at: list[list[DrawnBond]] = field(init=False)
     """The bonds of each atom, in the order of ``bonds``."""
+    ranks: list[int] = field(init=False)
+    """Numbers that order the atoms whatever order they stand in; equal where nothing tells."""
 
     def __post_init__(self) -> None:
         self.at = [[] for _ in self.elements]
+        self.ranks = [0] * len(self.elements)
         for bond in self.bonds:
             self.at[bond.begin].append(bond)
             self.at[bond.end].append(bond)
@@ -104,3 +107,8 @@ def is_terminal(drawing: Drawing, atom: int) -> bool:
 def electronegativity(element: str) -> float:
     """Return Pauling's electronegativity, 0 where none is tabulated (light noble gases)."""
     return ELEMENTS[element].electronegativity or 0.0
+
+
+def exceeds_octet(drawing: Drawing, atom: int) -> bool:
+    """Tell whether an atom of period 2 has more than eight electrons around it."""
+    return ELEMENTS[drawing.elements[atom]].period == 2 and shell_electrons(drawing, atom) > 8

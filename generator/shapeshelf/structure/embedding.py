@@ -20,13 +20,15 @@ from shapeshelf.structure.bridging import (
     to_rdkit,
     with_coordinates,
 )
-from shapeshelf.structure.drawing import Drawing, is_heavy_p_block, shell_electrons
+from shapeshelf.structure.drawing import Drawing, is_heavy_p_block, is_metal, shell_electrons
 from shapeshelf.structure.molecule import Molecule
 
 Coordinates = npt.NDArray[np.float64]
 
 MOST_STEPS = 2000
 PLACEHOLDER = 74
+MOST_NEIGHBOURS = 4
+"""RDKit's own distances hold for ordinary centres only."""
 
 
 def embed(
@@ -73,7 +75,12 @@ def relax_mmff(molecule: Molecule, coordinates: CoordinatesLike) -> tuple[Coordi
 def _by_preferences(molecule: Molecule, count: int, seed: int) -> list[Coordinates]:
     mol = to_rdkit(molecule)
     atoms: Any = mol.GetAtoms()
-    if any(atom.HasValenceViolation() for atom in atoms):
+    if any(
+        atom.HasValenceViolation()
+        or atom.GetDegree() > MOST_NEIGHBOURS
+        or is_metal(atom.GetSymbol())
+        for atom in atoms
+    ):
         return []
     return _conformers(mol, count, _settings(seed, False)) or _conformers(
         mol, count, _settings(seed, True)

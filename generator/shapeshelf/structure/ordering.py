@@ -27,7 +27,7 @@ from shapeshelf.structure.drawing import (
 COST_CHARGE = 12.0
 COST_METAL_CHARGE = 1.0
 COST_SINGLE_ELECTRON = 14.0
-COST_OPEN_PLACE = {13: 0.5, 14: 9.0, 15: 25.0, 16: 25.0, 17: 30.0}
+COST_OPEN_PLACE = {13: 0.5, 14: 12.4, 15: 25.0, 16: 25.0, 17: 30.0}
 COST_OPEN_PLACE_HEAVY = 2.0
 COST_PI = 1.0
 PER_ATOM = 5
@@ -86,7 +86,7 @@ class _Programme:
         result = milp(
             self._costs(),
             integrality=np.ones(self.columns),
-            bounds=Bounds(np.zeros(self.columns), self._limits()),
+            bounds=Bounds(self._floors(), self._limits()),
             constraints=LinearConstraint(matrix.tocsc(), self.low, self.high),
             options={"time_limit": SECONDS},
         )
@@ -160,11 +160,21 @@ class _Programme:
             costs[self.first_pi + number] = COST_PI * self.lengths[number] / radii
         return costs
 
+    def _floors(self) -> npt.NDArray[np.float64]:
+        """Only a bond between a metal and a ligand may be an arrow; all others are plain."""
+        plain = [
+            float(is_metal(self.elements[i]) == is_metal(self.elements[j])) for i, j in self.pairs
+        ]
+        return np.concatenate([np.zeros(self.first_plain), plain])
+
     def _limits(self) -> npt.NDArray[np.float64]:
         atoms = np.tile([MOST_CHARGE, MOST_CHARGE, 1.0, 8.0, 8.0], len(self.elements))
         for atom, element in enumerate(self.elements):
+            group = ELEMENTS[element].group or 3
             if is_metal(element):
                 atoms[PER_ATOM * atom : PER_ATOM * atom + 2] = 8.0
+            elif self._at(atom) and (group == 17 or group > 13 and ELEMENTS[element].period == 2):
+                atoms[PER_ATOM * atom : PER_ATOM * atom + 2] = 1.0
         pi = [2.0 if self._may_be_multiple(pair) else 0.0 for pair in self.pairs]
         plain = np.ones(len(self.pairs))
         return np.concatenate([atoms, pi, plain])
@@ -174,6 +184,8 @@ class _Programme:
         names = [self.elements[atom] for atom in pair]
         if {"H", "F", "He"} & set(names):
             return False
+        if any(self._is_end_halogen(atom) for atom in pair):
+            return {"O", "N"} & set(names) != set()
         metals = [is_metal(name) for name in names]
         if not any(metals):
             return True
@@ -183,6 +195,9 @@ class _Programme:
             and self.elements[ligand] in ("O", "N", "S")
             and len(self._at(ligand)) == 1
         )
+
+    def _is_end_halogen(self, atom: int) -> bool:
+        return ELEMENTS[self.elements[atom]].group == 17 and len(self._at(atom)) == 1
 
 
 def _atom_costs(element: str) -> list[float]:

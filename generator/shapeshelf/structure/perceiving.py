@@ -12,13 +12,17 @@ from shapeshelf.reference.elements import ELEMENTS
 from shapeshelf.structure.assembling import finish
 from shapeshelf.structure.bridging import Stereo, mol_of_drawing, stereo_of, with_coordinates
 from shapeshelf.structure.checking import check_size
-from shapeshelf.structure.drawing import Drawing
+from shapeshelf.structure.drawing import Drawing, is_metal
 from shapeshelf.structure.molecule import Molecule, Vector
 from shapeshelf.structure.normalising import normalise
 from shapeshelf.structure.ordering import assign_orders
 
 STRETCH = 1.3
 """Longest bond over the sum of single-bond radii: N2O4 and FOOF reach 1.25."""
+MARGIN_ANGSTROM = 0.4
+"""Longest bond beyond that sum: keeps the silicon atoms of a siloxane or silazane apart."""
+METAL_MARGIN_ANGSTROM = 0.5
+"""The same with a metal, whose bonds are softer."""
 CLOSEST_ANGSTROM = 0.4
 """Half the shortest bond there is, that of dihydrogen."""
 FARTHEST_ANGSTROM = 10_000.0
@@ -51,17 +55,21 @@ def bonded_pairs(elements: list[str], points: npt.NDArray[np.float64]) -> list[t
     """Return the bonded pairs (lower index first) among atoms at ``points``, (n, 3) in ångström.
 
     A pair is bonded up to ``STRETCH`` times the sum of the single-bond radii of Pyykkö and
-    Atsumi (see reference/elements.py); atoms of period 2 then lose their longest surplus bonds.
+    Atsumi (see reference/elements.py), and no more than a margin beyond it; atoms of period 2
+    then lose their longest surplus bonds.
     """
     radii = np.array(
         [ELEMENTS[e].single_radius_angstrom or DEFAULT_RADIUS_ANGSTROM for e in elements]
     )
     near = cKDTree(points).query_pairs(2 * STRETCH * float(radii.max()))
-    stretch = {
-        (min(i, j), max(i, j)): float(np.linalg.norm(points[i] - points[j]) / (radii[i] + radii[j]))
-        for i, j in near
-    }
-    bonded = {pair: ratio for pair, ratio in stretch.items() if ratio <= STRETCH}
+    bonded = {}
+    for i, j in sorted((min(pair), max(pair)) for pair in near):
+        distance = float(np.linalg.norm(points[i] - points[j]))
+        radius = float(radii[i] + radii[j])
+        metal = is_metal(elements[i]) or is_metal(elements[j])
+        margin = METAL_MARGIN_ANGSTROM if metal else MARGIN_ANGSTROM
+        if distance <= min(STRETCH * radius, radius + margin):
+            bonded[i, j] = distance / radius
     return sorted(_without_surplus(elements, bonded))
 
 
