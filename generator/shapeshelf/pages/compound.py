@@ -32,7 +32,7 @@ from shapeshelf.pages.typesetting import (
     point_group_text,
     sentence_case,
 )
-from shapeshelf.pages.values import ANGSTROM, ValueView, citation, value_view
+from shapeshelf.pages.values import ANGSTROM, ValueView, bases_held, citation, value_view
 from shapeshelf.report.model import Caution, CompoundReport
 
 KEY_ANGLES = 4
@@ -109,6 +109,9 @@ class CompoundView:
     revision: str
     change: Change | None
     point_group: str
+    angle_bases: tuple[str, ...]
+    """The bases that any angle of the compound has: columns of the table."""
+    length_bases: tuple[str, ...]
 
     @property
     def description(self) -> str:
@@ -126,6 +129,7 @@ def compound_view(
     sources = catalogue.sources
     centres = centre_views(report, sources)
     angles = _key_angles(report, sources) if len(centres) == 1 else ()
+    lengths = _length_views(report, sources)
     return CompoundView(
         id=entry.id,
         address=compound_address(entry.id),
@@ -139,7 +143,7 @@ def compound_view(
         key_angles=angles[:KEY_ANGLES],
         more_angles=max(0, len(angles) - KEY_ANGLES),
         centres=centres,
-        lengths=_length_views(report, sources),
+        lengths=lengths,
         polarity=polarity_view(report, sources),
         symmetry=symmetry_view(report),
         spectra=spectra_view(report, sources),
@@ -161,6 +165,8 @@ def compound_view(
         revision=revision,
         change=change,
         point_group=report.point_group,
+        angle_bases=bases_held(angle.value for centre in centres for angle in centre.angles),
+        length_bases=bases_held(length.value for length in lengths),
     )
 
 

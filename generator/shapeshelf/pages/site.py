@@ -11,7 +11,7 @@ from shapeshelf.pages import addresses
 from shapeshelf.pages.compound import CompoundView, compound_view, source_view
 from shapeshelf.pages.drawings import compound_figures, shape_glyph
 from shapeshelf.pages.history import Change, last_changes
-from shapeshelf.pages.home import compound_line, home_view
+from shapeshelf.pages.home import CompoundLine, compound_line, home_view
 from shapeshelf.pages.lookup_index import lookup_index
 from shapeshelf.pages.model import SiteFile, SitePage
 from shapeshelf.pages.protocols import (
@@ -149,7 +149,7 @@ def _sources(catalogue: Catalogue) -> list[tuple[object, list[tuple[str, str]]]]
     ]
 
 
-def _lines(reports: Reports) -> list[object]:
+def _lines(reports: Reports) -> list[CompoundLine]:
     lines = [compound_line(report, report.shape or "") for report in reports]
     return sorted(lines, key=lambda line: line.name.casefold())
 

@@ -1,7 +1,7 @@
 """A number as a page shows it: its text, its ±, what it rests on and where it was published."""
 
 import re
-from collections.abc import Mapping
+from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
 
 from shapeshelf.catalogue.model import Source, SourceKind
@@ -70,6 +70,12 @@ def value_view(value: Value, unit: Unit, sources: Mapping[str, Source]) -> Value
         note=(measurement and measurement.note) or "",
         others=tuple(_others(value, unit)),
     )
+
+
+def bases_held(values: Iterable[ValueView]) -> tuple[str, ...]:
+    """Return the bases that any of the values has, the model first as tables print them."""
+    held = {basis for value in values for basis, _ in value.others}
+    return tuple(basis.value for basis in reversed(BASES) if basis.value in held)
 
 
 def citation(source: Source) -> str:
