@@ -83,10 +83,8 @@ Line = Annotated[
     str,
     StringConstraints(strip_whitespace=True, min_length=1, max_length=300, pattern=LINE_PATTERN),
 ]
-Smiles = Annotated[
-    str,
-    StringConstraints(strip_whitespace=True, min_length=1, max_length=4000, pattern=SMILES_PATTERN),
-]
+# Not stripped: a space at its end is an escape such as `\N` in double quotes gone wrong.
+Smiles = Annotated[str, StringConstraints(min_length=1, max_length=4000, pattern=SMILES_PATTERN)]
 Text = Annotated[
     str,
     StringConstraints(strip_whitespace=True, min_length=1, max_length=20_000, pattern=TEXT_PATTERN),

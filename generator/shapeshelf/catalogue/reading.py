@@ -64,14 +64,18 @@ def read_catalogue_with_problems(root: Path) -> tuple[Catalogue, list[Problem]]:
     return Catalogue(root, tuple(entries), sources, protocols), problems
 
 
-def entry_files(root: Path) -> Iterator[Path]:
-    """Yield the YAML file of each entry below ``root``, in order of path."""
+def entry_files(root: Path) -> list[Path]:
+    """Return the YAML file of each entry below ``root``, in order of path."""
+    return sorted(_entry_files(root))
+
+
+def _entry_files(root: Path) -> Iterator[Path]:
     for folder, folders, names in os.walk(root, onerror=_refuse_folder):
         top = Path(folder) == root
-        folders[:] = sorted(
+        folders[:] = [
             name for name in folders if name[0] not in "._" and not (top and name == RECORDS)
-        )
-        for name in sorted(names):
+        ]
+        for name in names:
             is_entry = name[0] not in "._" and Path(name).suffix.lower() in _SUFFIXES
             if is_entry and not (top and name in (SOURCES, PROTOCOLS)):
                 yield Path(folder) / name

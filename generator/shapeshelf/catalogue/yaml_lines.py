@@ -164,7 +164,9 @@ def _typed(word: str) -> Any:
         return _WORDS[word]
     if word[0] not in "+-.0123456789":  # most words: spare them the patterns
         return word
-    if len(word) <= _MAX_DIGITS and _INTEGER.fullmatch(word):
+    if len(word) > _MAX_DIGITS:
+        return word
+    if _INTEGER.fullmatch(word):
         return int(word)
     if _FLOAT.fullmatch(word):
         return float(word)
@@ -185,7 +187,9 @@ def _syntax_fault(error: Any, text: str) -> tuple[int, str]:
     mark = error.problem_mark or error.context_mark
     rows = text.split("\n")
     row = rows[mark.line] if mark.line < len(rows) else ""
-    return mark.line + 1, _syntax_hint(str(error.problem), row, row[mark.column : mark.column + 1])
+    # What is never closed is noticed only behind the last line.
+    line = min(mark.line, text.rstrip().count("\n")) + 1
+    return line, _syntax_hint(str(error.problem), row, row[mark.column : mark.column + 1])
 
 
 def _syntax_hint(problem: str, row: str, character: str) -> str:
