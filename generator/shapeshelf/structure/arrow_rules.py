@@ -76,6 +76,9 @@ def carbonyl_arrow(drawing: Drawing, carbon: int) -> bool:
         drawing.charges[metal] += 1
     elif pattern == (2, 2, 0, 0):
         drawing.charges[oxygen] = 1
+    elif pattern == (1, 2, 0, -1):
+        drawing.charges[oxygen] = 1
+        drawing.charges[metal] -= 1
     else:
         return False
     drawing.charges[carbon] = -1

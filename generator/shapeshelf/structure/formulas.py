@@ -20,8 +20,10 @@ Formula = tuple[dict[str, int], int]
 """Number of atoms by element, and charge."""
 
 LOWERED = str.maketrans("₀₁₂₃₄₅₆₇₈₉⁰¹²³⁴⁵⁶⁷⁸⁹⁺⁻₊₋−–", "01234567890123456789+-+---")
-CHARGE = re.compile(r"^(?P<body>.*?)(?:(?P<signs>\++|-+)|(?P<number>\d*)(?P<sign>[+-]))$")
+CHARGE = re.compile(r"^(?P<body>.*?)(?P<signs>\++|-+)$")
+SIGN_FIRST = re.compile(r"^(?P<body>.*[^+-])(?P<charge>[+-]\d+)$")
 TOKEN = re.compile(r"([A-Z][a-z]?)(\d*)|([(\[{])|([)\]}])(\d*)|([·.*])(\d*)")
+HYDROGEN_NAMES = {"D": "H", "T": "H"}
 CLOSING = {"(": ")", "[": "]", "{": "}"}
 # Hydrogen bound to these is an acid's, and written first.
 ACID_PARTNERS = frozenset({"O", "S", "Se", "Te"})
@@ -31,8 +33,9 @@ MOST_OF_ONE_ELEMENT = 100_000
 def parse_formula(text: str) -> Formula:
     """Return element counts and charge of a formula in any usual spelling.
 
-    ``SF4``, ``F4S``, ``SF₄``, ``(NH4)2SO4``, ``PF6-``, ``SO4^2-``, ``SO4 2-``, ``[PF6]-`` are
-    read. Where digits run into the charge, as in ``SO42-``, the last digit belongs to the charge.
+    ``SF4``, ``F4S``, ``SF₄``, ``(NH4)2SO4``, ``PF6-``, ``SO4^2-``, ``SO4 2-``, ``[PF6]-``,
+    ``O4S-2`` are read; D and T are hydrogen. Where digits run into the
+    charge, as in ``SO42-``, the last digit belongs to the charge.
     Raises StructureError.
     """
     return next(_readings(text))
@@ -94,12 +97,13 @@ def _readings(text: str) -> Iterator[Formula]:
         yield _counts(text, spaced["body"]), _charge(spaced["charge"])
         return
     match = CHARGE.fullmatch(plain)
-    if match is None:
-        yield _counts(text, plain), 0
-    elif match["signs"]:
+    sign_first = SIGN_FIRST.fullmatch(plain)
+    if match:
         yield from _joined_readings(text, match["body"], match["signs"])
+    elif sign_first:
+        yield _counts(text, sign_first["body"]), int(sign_first["charge"][:6])
     else:
-        yield from _joined_readings(text, match["body"] + match["number"], match["sign"])
+        yield _counts(text, plain), 0
 
 
 def _joined_readings(text: str, body: str, signs: str) -> Iterator[Formula]:
@@ -140,6 +144,7 @@ def _counts(text: str, body: str) -> dict[str, int]:
 def _take(text: str, match: re.Match[str], stack: list[Counter[str]], closing: list[str]) -> None:
     element, number, opening, close, times = match.groups()[:5]
     if element:
+        element = HYDROGEN_NAMES.get(element, element)
         if element not in ELEMENTS:
             raise _unreadable(text, f"there is no element {element}")
         stack[-1][element] += _number(text, number)

@@ -29,7 +29,10 @@ class Bond:
 
 @dataclass(frozen=True, slots=True)
 class TetrahedralStereo:
-    """A stereogenic centre: seen from the first neighbour the rest turn ``clockwise`` or not."""
+    """A stereogenic centre: seen from the first neighbour the rest turn ``clockwise`` or not.
+
+    Of three neighbours, the lone pair counts as the fourth and last.
+    """
 
     atom: int
     neighbours: tuple[int, ...]

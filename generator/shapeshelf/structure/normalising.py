@@ -6,8 +6,8 @@ N1  An arrow from an anion, D(-) -> A, is a plain bond: D-A(-), unless the donor
     balanced by a positive neighbour (carbon monoxide, isocyanides).
 N2  An arrow onto a main-group acceptor is a plain bond between charges: D(+)-A(-).
 N3  A donor drawn with a plain bond to a metal that leaves it no lone pair (onium, or more bonds
-    than its octet allows) gives its pair along an arrow: D -> M. A carbonyl drawn M=C=O or
-    M-C#O(+) is M <- [C-]#[O+].
+    than its octet allows) gives its pair along an arrow: D -> M. A carbonyl drawn M=C=O,
+    M-C#O(+) or M-C(-)=O is M <- [C-]#[O+].
 N4  An atom of period 2 with more than an octet gives up one bond of a multiple bond: the
     most electronegative neighbour, terminal ones first, takes the pair, N=O is N(+)-O(-).
 N5  An atom of period 2 with less than an octet and a positive charge takes a pair from a

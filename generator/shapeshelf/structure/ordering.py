@@ -173,7 +173,7 @@ class _Programme:
             group = ELEMENTS[element].group or 3
             if is_metal(element):
                 atoms[PER_ATOM * atom : PER_ATOM * atom + 2] = 8.0
-            elif self._at(atom) and (group == 17 or group > 13 and ELEMENTS[element].period == 2):
+            elif self._at(atom) and (group == 17 or (group > 13 and ELEMENTS[element].period == 2)):
                 atoms[PER_ATOM * atom : PER_ATOM * atom + 2] = 1.0
         pi = [2.0 if self._may_be_multiple(pair) else 0.0 for pair in self.pairs]
         plain = np.ones(len(self.pairs))
