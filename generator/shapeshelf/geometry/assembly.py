@@ -2,8 +2,9 @@
 
 A1  Supplied coordinates stand as they are.
 A2  One centre and its neighbours: the directions of the best placement times the bond lengths.
-A3  Several centres, MMFF94s has parameters for all: conformers by ETKDG, relaxed by MMFF94s,
-    the lowest one; then lengths and angles brought to their targets, torsions kept.
+A3  Several centres, carbon among the atoms, and MMFF94s has parameters for all: conformers by
+    ETKDG, relaxed by MMFF94s; of those as low as the lowest within the force field's own error
+    the most symmetric.
 A4  Several centres otherwise: conformers by distance geometry on our own bounds, relaxed under
     lengths, angles, contacts and torsion rules (forces.py, torsions.py), the lowest one.
 A5  The result is symmetrised: atoms that miss their image by less than a tolerance are put on it.
@@ -19,6 +20,7 @@ import numpy as np
 from shapeshelf.domains.bond_lengths import bond_length_angstrom
 from shapeshelf.domains.model import Centre, LewisCount
 from shapeshelf.errors import AnalysisError
+from shapeshelf.geometry.choosing import SNAP_ANGSTROM
 from shapeshelf.geometry.conformers import Conformers, by_force_field, by_rules
 from shapeshelf.geometry.model import Structure, StructureBasis
 from shapeshelf.geometry.surroundings import surroundings_of
@@ -26,9 +28,6 @@ from shapeshelf.geometry.symmetry import find_symmetry
 from shapeshelf.geometry.vectors import Array
 from shapeshelf.structure.embedding import mmff_covers
 from shapeshelf.structure.molecule import Molecule, Vector
-
-SNAP_ANGSTROM = 0.08
-"""How far an assembled atom may be from its symmetric place and still be put there (A5)."""
 
 
 def assemble(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]) -> Structure:
@@ -81,7 +80,8 @@ def _length(molecule: Molecule, first: int, second: int, order: float) -> float:
 
 def _conformers(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]) -> Conformers:
     known = surroundings_of(molecule, lewis, centres)
-    if mmff_covers(molecule):
+    organic = any(atom.element == "C" for atom in molecule.atoms)
+    if organic and mmff_covers(molecule):
         return by_force_field(molecule, known)
     return by_rules(molecule, known)
 

@@ -4,25 +4,32 @@ Rules A3 and A4 of assembly.py.
 """
 
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 
 from shapeshelf.errors import AnalysisError
-from shapeshelf.geometry.forces import minimised
+from shapeshelf.geometry.choosing import (
+    FORCE_FIELD_ERROR_KCAL_MOL,
+    RULE_ERROR,
+    most_symmetric,
+)
+from shapeshelf.geometry.forces import minimised, settled_down
 from shapeshelf.geometry.ordering import renumbered, settled_order
 from shapeshelf.geometry.surroundings import Surroundings
 from shapeshelf.geometry.targets import bounds_of, terms_of
-from shapeshelf.geometry.torsions import Turn, turns_of
-from shapeshelf.geometry.vectors import Array, torsion_degrees
+from shapeshelf.geometry.torsions import Turn, chain_turns, turns_of
+from shapeshelf.geometry.vectors import Array, angle_degrees, distance, torsion_degrees
 from shapeshelf.structure.embedding import embed, relax_mmff
 from shapeshelf.structure.molecule import Molecule
 
 SEED = 20050
 FIRST_STEPS = 120
-LAST_STEPS = 600
 KEPT_TORSION_HEIGHT = 30.0
-SAME_ENERGY = 1e-3
+SMALL = 20
+"""Up to so many atoms a conformer costs next to nothing."""
+MOST_SETTLED = 3
+ROUGHLY_SAME_ENERGY = 0.02
 
 
 @dataclass(frozen=True, slots=True)
@@ -35,45 +42,57 @@ class Conformers:
 
 
 def by_force_field(molecule: Molecule, known: Surroundings) -> Conformers:
-    """Return the lowest MMFF94s conformer with its lengths and angles brought to the targets."""
+    """Return the lowest MMFF94s conformer, the most symmetric of those that are as low."""
     order = settled_order(molecule)
     settled = renumbered(molecule, order)
-    relaxed = [relax_mmff(settled, start) for start in embed(settled, _count(molecule), SEED)]
-    lowest = _lowest(np.array([energy for _, energy in relaxed]))
-    points = _in_given_order(relaxed[lowest][0], order)
-    terms = terms_of(molecule, known, _kept_turns(known, points), guarded=False)
-    refined, _ = minimised(terms, points[None], LAST_STEPS)
-    method = "lowest MMFF94s conformer, lengths and angles of the domain model"
-    return Conformers(refined[0], method, len(relaxed))
+
+    def relax(points: Array) -> tuple[Array, float]:
+        moved, energy = relax_mmff(settled, points[list(order)])
+        return _in_given_order(moved, order), energy
+
+    starts = embed(settled, _count(molecule), SEED)
+    relaxed = [relax(_in_given_order(start, order)) for start in starts]
+    best = most_symmetric(_elements(molecule), relaxed, relax, FORCE_FIELD_ERROR_KCAL_MOL)
+    return Conformers(_ends_aligned(molecule, known, best), "lowest MMFF94s conformer", len(starts))
 
 
 def by_rules(molecule: Molecule, known: Surroundings) -> Conformers:
     """Return the lowest conformer under our own lengths, angles, contacts and torsion rules."""
     order = settled_order(molecule)
-    settled = renumbered(molecule, order)
-    bounds = bounds_of(molecule, known)
-    starts = np.array(embed(settled, _count(molecule), SEED, _settled_bounds(bounds, order)))
+    bounds = _settled_bounds(bounds_of(molecule, known), order)
+    starts = embed(renumbered(molecule, order), _count(molecule), SEED, bounds)
     given = np.stack([_in_given_order(start, order) for start in starts])
     terms = terms_of(molecule, known, turns_of(known))
     rough, energies = minimised(terms, given, FIRST_STEPS, slope=0.05)
     if not np.isfinite(energies).all():
         raise AnalysisError(molecule.formula, "no three-dimensional structure fits the distances")
-    few = rough[np.argsort(energies, kind="stable")[:2]]
-    final, energies = minimised(terms, few, LAST_STEPS)
-    method = "domain-model angles and bond lengths assembled by distance geometry"
-    return Conformers(final[_lowest(energies)], method, len(starts))
+
+    def relax(points: Array) -> tuple[Array, float]:
+        return settled_down(terms, points)
+
+    few = [relax(rough[k]) for k in _lowest_distinct(energies)]
+    best = most_symmetric(_elements(molecule), few, relax, RULE_ERROR)
+    return Conformers(best, "domain-model angles and bond lengths assembled", len(starts))
+
+
+def _elements(molecule: Molecule) -> list[str]:
+    return [atom.element for atom in molecule.atoms]
+
+
+def _lowest_distinct(energies: Array) -> list[int]:
+    """Return the lowest of the roughly relaxed conformers, no two of one energy."""
+    kept: list[int] = []
+    for k in np.argsort(energies, kind="stable"):
+        if all(energies[k] - energies[other] > ROUGHLY_SAME_ENERGY for other in kept):
+            kept.append(int(k))
+    return kept[:MOST_SETTLED]
 
 
 def _count(molecule: Molecule) -> int:
     """Return how many conformers to try: more for a molecule with more single bonds to turn."""
     degree = [len(molecule.neighbours(atom)) for atom in range(len(molecule.atoms))]
     turning = sum(1 for bond in molecule.bonds if min(degree[bond.begin], degree[bond.end]) > 1)
-    return int(np.clip(4 + 2 * turning, 6, 12))
-
-
-def _lowest(energies: Array) -> int:
-    """Return the first conformer that is as low as the lowest."""
-    return int(np.argmax(energies <= energies.min() + SAME_ENERGY))
+    return int(np.clip(4 + 6 * turning, 6, 20 if len(degree) <= SMALL else 12))
 
 
 def _in_given_order(points: Array, order: tuple[int, ...]) -> Array:
@@ -88,6 +107,20 @@ def _settled_bounds(bounds: Array, order: tuple[int, ...]) -> Array:
     upper = (np.triu(bounds, 1) + np.triu(bounds, 1).T)[np.ix_(rows, rows)]
     lower = (np.tril(bounds, -1) + np.tril(bounds, -1).T)[np.ix_(rows, rows)]
     return np.asarray(np.triu(upper, 1) + np.tril(lower, -1))
+
+
+def _ends_aligned(molecule: Molecule, known: Surroundings, points: Array) -> Array:
+    """Return the structure with its ends aligned across straight chains, where no force acts."""
+    turns = chain_turns(known)
+    if not turns:
+        return points
+    measured = replace(
+        known,
+        angles={abc: angle_degrees(*points[list(abc)]) for abc in known.angles},
+        lengths={(a, b): distance(points[a], points[b]) for a, b in known.lengths},
+    )
+    terms = terms_of(molecule, measured, [*_kept_turns(known, points), *turns], guarded=False)
+    return settled_down(terms, points)[0]
 
 
 def _kept_turns(known: Surroundings, points: Array) -> Sequence[Turn]:

@@ -21,6 +21,11 @@ from shapeshelf.geometry.vectors import Array
 
 Indices = NDArray[np.int64]
 
+MOST_FOR_NEWTON = 30
+NEWTON_STEPS = 30
+LAST_STEPS = 1500
+DIFFERENCE_ANGSTROM = 1e-4
+
 
 def _no_rows(width: int) -> Indices:
     return np.zeros((0, width), dtype=np.int64)
@@ -80,6 +85,41 @@ def minimised(terms: Terms, starts: Array, steps: int, slope: float = 1e-4) -> t
     return points, energy_and_gradient(terms, points)[0]
 
 
+def settled_down(terms: Terms, points: Array) -> tuple[Array, float]:
+    """Return one structure (n, 3) at the bottom of its hollow, and its energy.
+
+    Newton steps on the Hessian by differences of gradients, so that soft torsions settle as
+    tightly as stiff bonds; for many atoms the slower descent alone.
+    """
+    if len(points) > MOST_FOR_NEWTON:
+        moved, energies = minimised(terms, points[None], LAST_STEPS)
+        return moved[0], float(energies[0])
+    energy = float(energy_and_gradient(terms, points[None])[0][0])
+    for _ in range(NEWTON_STEPS):
+        step = _newton_step(terms, points)
+        tried = points + np.array([1.0, 0.5, 0.1, 0.01])[:, None, None] * step
+        energies = energy_and_gradient(terms, tried)[0]
+        best = int(np.argmin(energies))
+        if energies[best] > energy - 1e-10:
+            break
+        points, energy = tried[best], float(energies[best])
+    return points, energy
+
+
+def _newton_step(terms: Terms, points: Array) -> Array:
+    """Return the step (n, 3) to the bottom of the local quadratic, no atom further than 0.3 Å."""
+    size = points.size
+    shifts = DIFFERENCE_ANGSTROM * np.eye(size).reshape(size, *points.shape)
+    slopes = energy_and_gradient(terms, np.concatenate([points + shifts, points - shifts]))[1]
+    hessian = (slopes[:size] - slopes[size:]).reshape(size, size) / (2 * DIFFERENCE_ANGSTROM)
+    slope = energy_and_gradient(terms, points[None])[1].ravel()
+    values, vectors = np.linalg.eigh((hessian + hessian.T) / 2)
+    share = np.where(np.abs(values) > 1e-5, 1.0 / np.maximum(np.abs(values), 1e-3), 0.0)
+    step = -(vectors @ (share * (vectors.T @ slope))).reshape(points.shape)
+    longest = float(np.linalg.norm(step, axis=1).max())
+    return np.asarray(step * min(1.0, 0.3 / max(longest, 1e-12)))
+
+
 def energy_and_gradient(terms: Terms, points: Array) -> tuple[Array, Array]:
     """Return energies (s,) and gradients (s, n, 3) of structures (s, n, 3)."""
     energies, gradients = _pairs(terms, points)
@@ -123,11 +163,11 @@ def _volumes(terms: Terms, points: Array, energies: Array, gradients: Array) -> 
     a, b, c = (
         (points[:, end] - points[:, centre]) / lengths[:, k : k + 1] for k, end in enumerate(ends)
     )
-    normal = np.cross(b, c)
+    normal = _cross(b, c)
     miss = np.einsum("smk,smk->sm", a, normal) - terms.volume_goals
     energies += terms.volume_stiffness * (miss**2).sum(axis=1)
     scale = 2.0 * terms.volume_stiffness * miss[:, :, None]
-    slopes = (normal, np.cross(c, a), np.cross(a, b))
+    slopes = (normal, _cross(c, a), _cross(a, b))
     for k, end in enumerate(ends):
         force = scale * slopes[k] / lengths[:, k : k + 1]
         _add(gradients, end, force)
@@ -143,9 +183,9 @@ def _torsions(terms: Terms, points: Array, energies: Array, gradients: Array) ->
         return
     a, b, c, d = terms.torsions.T
     f, g, h = points[:, a] - points[:, b], points[:, b] - points[:, c], points[:, d] - points[:, c]
-    left, right = np.cross(f, g), np.cross(h, g)
+    left, right = _cross(f, g), _cross(h, g)
     long = np.sqrt(_dot(g, g))
-    angle = np.arctan2(_dot(np.cross(right, left), g) / long, _dot(left, right))
+    angle = np.arctan2(_dot(_cross(right, left), g) / long, _dot(left, right))
     turned = terms.torsion_folds * (angle - np.radians(terms.torsion_minima_degrees))
     energies += (0.5 * terms.torsion_heights * (1.0 - np.cos(turned))).sum(axis=1)
     slope = 0.5 * terms.torsion_heights * terms.torsion_folds * np.sin(turned)
@@ -163,6 +203,12 @@ def _torsions(terms: Terms, points: Array, energies: Array, gradients: Array) ->
 
 def _dot(first: Array, second: Array) -> Array:
     return np.asarray(np.einsum("smk,smk->sm", first, second))
+
+
+def _cross(first: Array, second: Array) -> Array:
+    """Return cross products (s, m, 3); several times quicker than numpy's on short arrays."""
+    ahead, behind = first[..., [1, 2, 0]], first[..., [2, 0, 1]]
+    return ahead * second[..., [2, 0, 1]] - behind * second[..., [1, 2, 0]]
 
 
 def _add(gradients: Array, atoms: Indices, forces: Array) -> None:

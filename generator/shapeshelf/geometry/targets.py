@@ -80,11 +80,12 @@ def bounds_of(molecule: Molecule, known: Surroundings) -> Array:
 def _distances(known: Surroundings) -> tuple[Array, Array]:
     """Return force constants and targets (n, n) of bonds and of next neighbours."""
     count = len(known.neighbours)
-    stiffness, goal, paths = (np.zeros((count, count)) for _ in range(3))
+    stiffness, paths = np.zeros((count, count)), np.zeros((count, count))
+    goal: Array = np.zeros((count, count))
     for (a, b, c), degrees in known.angles.items():
         goal[a, c] += opposite_side(known.length(a, b), known.length(b, c), degrees)
         paths[a, c] += 1
-    goal = goal / np.maximum(paths, 1.0)
+    goal /= np.maximum(paths, 1.0)
     stiffness[paths > 0] = ANGLE_STIFFNESS
     for (a, b), length in known.lengths.items():
         goal[a, b] = goal[b, a] = length

@@ -8,7 +8,7 @@ T2  Two ends with lone pairs turn those pairs to a right angle: hydrogen peroxid
 T3  Two ends of as many domains are staggered: ethane (3 by 3), S2F10 (4 by 4).
 T4  Next to a multiple bond a tetrahedral end eclipses it: propene.
 T5  Across a straight chain the ends of an odd number of double bonds lie in one plane, of an
-    even number at right angles (allene); across any other chain they are staggered.
+    even number at right angles (allene); across any other chain they are eclipsed (2-butyne).
 
 T1 to T4: R. J. Gillespie and I. Hargittai, The VSEPR Model of Molecular Geometry (1991) and
 E. L. Eliel and S. H. Wilen, Stereochemistry of Organic Compounds (1994), recalled from memory.
@@ -40,9 +40,12 @@ def turns_of(known: Surroundings) -> tuple[Turn, ...]:
     for first, second in known.orders:
         if first not in known.linear and second not in known.linear:
             turns += _about_bond(known, first, second)
-    for chain in _straight_chains(known):
-        turns += _about_chain(known, chain)
-    return tuple(turns)
+    return (*turns, *chain_turns(known))
+
+
+def chain_turns(known: Surroundings) -> tuple[Turn, ...]:
+    """Return the torsion terms of T5 alone."""
+    return tuple(turn for chain in _straight_chains(known) for turn in _about_chain(known, chain))
 
 
 def _about_bond(known: Surroundings, b: int, c: int) -> Iterator[Turn]:
@@ -129,8 +132,7 @@ def _about_chain(known: Surroundings, chain: tuple[int, ...]) -> Iterator[Turn]:
     if double and b in known.flat and c in known.flat:
         height, fold, minimum = 40.0, 2, 90.0 if len(chain) % 2 else 0.0
     else:
-        fold = len(left) if len(left) == len(right) else 1
-        height, minimum = 0.5, 180.0 / fold
+        height, fold, minimum = 0.5, len(left) if len(left) == len(right) else 1, 0.0
     for a in left:
         for d in right:
             yield Turn((a, b, c, d), height * share, fold, minimum)
