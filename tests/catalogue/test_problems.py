@@ -65,7 +65,7 @@ def test_a_message_is_one_line_whatever_it_quotes() -> None:
         ("degre", ["degree", "debye"], "; did you mean `degree`?"),
         ("zzz", ["a", "b"], "; right would be one of: a, b"),
         ("zzz", [], ""),
-        ("zzz", [f"word{number}" for number in range(13)], ""),
+        ("zzz", [f"word{number}" for number in range(21)], ""),
     ],
 )
 def test_the_nearest_right_word(word: str, right: list[str], expected: str) -> None:

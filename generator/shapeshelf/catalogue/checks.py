@@ -29,6 +29,8 @@ RESERVED_IDS = frozenset(
 
 UNITS = tuple(limit.unit for limit in LIMITS.values())
 
+_ADD_IT = "; add it there, or correct the word"
+
 _LABEL_DASHES = re.compile(r"[‐‑‒–—−]")
 
 
@@ -148,7 +150,7 @@ def _measured(
     source: Any = item.get("source")
     named = isinstance(source, str) and bool(source.strip())
     if named and sources is not None and source.strip() not in sources:
-        message = f"{quoted(source)} is not in sources.yml{nearest(source, sources)}"
+        message = f"{quoted(source)} is not in sources.yml{nearest(source, sources) or _ADD_IT}"
         yield document.problem(f"{place}.source", message)
 
 
@@ -190,7 +192,7 @@ def _joins(label: str, atoms: int) -> bool:
 def _unknown_protocols(document: Document, protocols: Collection[str] | None) -> Iterator[Problem]:
     for field, word in _words(document, ("used-in",)) if protocols is not None else ():
         if protocols is not None and word not in protocols:
-            message = f"{quoted(word)} is not in protocols.yml{nearest(word, protocols)}"
+            message = f"{quoted(word)} is not in protocols.yml{nearest(word, protocols) or _ADD_IT}"
             yield document.problem(field, message)
 
 

@@ -112,7 +112,7 @@ Number = Annotated[float, Field(allow_inf_nan=False)]
 
 
 class _Fields(BaseModel):
-    model_config = ConfigDict(extra="forbid", strict=True, populate_by_name=False, frozen=True)
+    model_config = ConfigDict(extra="forbid", strict=True, frozen=True)
 
 
 class StructureFields(_Fields):

@@ -15,6 +15,7 @@ WHOLE_FILE = "file"
 """The field of a problem that is one of the file and of no field in it."""
 
 _LONGEST_QUOTE = 60
+_MOST_CHOICES = 20
 _CONTROL = re.compile(r"[\x00-\x1f\x7f-\x9f\u2028\u2029]")
 
 
@@ -81,6 +82,6 @@ def nearest(word: str, right: Iterable[str]) -> str:
     close = difflib.get_close_matches(key, folded, n=1, cutoff=0.6)
     if close:
         return f"; did you mean `{folded[close[0]]}`?"
-    if len(words) > 12:
+    if len(words) > _MOST_CHOICES:
         return ""
     return "; right would be one of: " + ", ".join(words) if words else ""
