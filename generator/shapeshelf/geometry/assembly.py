@@ -24,10 +24,10 @@ from shapeshelf.geometry.choosing import SNAP_ANGSTROM
 from shapeshelf.geometry.conformers import Conformers, by_force_field, by_rules
 from shapeshelf.geometry.model import Structure, StructureBasis
 from shapeshelf.geometry.surroundings import surroundings_of
-from shapeshelf.geometry.symmetry import find_symmetry
+from shapeshelf.geometry.symmetry import symmetrised
 from shapeshelf.geometry.vectors import Array
 from shapeshelf.structure.embedding import mmff_covers
-from shapeshelf.structure.molecule import Molecule, Vector
+from shapeshelf.structure.molecule import Molecule
 
 
 def assemble(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]) -> Structure:
@@ -89,10 +89,6 @@ def _conformers(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]
 def _structure(molecule: Molecule, points: Array, method: str, tried: int) -> Structure:
     """Return the structure symmetrised (A5)."""
     elements = [atom.element for atom in molecule.atoms]
-    symmetric = find_symmetry(elements, points, SNAP_ANGSTROM).coordinates_angstrom
-    return Structure(_centred(symmetric), StructureBasis.MODEL, method, tried)
-
-
-def _centred(points: Sequence[Vector]) -> tuple[Vector, ...]:
-    middle = np.mean(np.array(points), axis=0)
-    return tuple((float(x), float(y), float(z)) for x, y, z in np.array(points) - middle)
+    symmetric, _ = symmetrised(elements, points, SNAP_ANGSTROM)
+    rows = (symmetric - symmetric.mean(axis=0)).tolist()
+    return Structure(tuple((x, y, z) for x, y, z in rows), StructureBasis.MODEL, method, tried)

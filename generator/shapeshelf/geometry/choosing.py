@@ -7,9 +7,7 @@ not chemistry; the symmetric structure is then the one to show.
 
 from collections.abc import Callable, Sequence
 
-import numpy as np
-
-from shapeshelf.geometry.symmetry import find_symmetry
+from shapeshelf.geometry.symmetry import symmetrised
 from shapeshelf.geometry.vectors import Array
 
 FORCE_FIELD_ERROR_KCAL_MOL = 0.5
@@ -42,9 +40,9 @@ def most_symmetric(
     limit = ranked[0][1] + margin
     low = _distinct([one for one in ranked if one[1] <= limit])[:MOST_COMPARED]
     counted = [(_operations(elements, points), points) for points, _ in low]
-    trial = find_symmetry(elements, low[0][0], NEARLY_ANGSTROM)
-    if len(trial.operations) > max(count for count, _ in counted):
-        points, energy = relax(np.array(trial.coordinates_angstrom))
+    trial, count = symmetrised(elements, low[0][0], NEARLY_ANGSTROM)
+    if count > max(count for count, _ in counted):
+        points, energy = relax(trial)
         if energy <= limit:
             counted.append((_operations(elements, points), points))
     return max(counted, key=lambda one: one[0])[1]
@@ -59,4 +57,4 @@ def _distinct(ranked: Sequence[Relaxed]) -> list[Relaxed]:
 
 
 def _operations(elements: Sequence[str], points: Array) -> int:
-    return len(find_symmetry(elements, points, SNAP_ANGSTROM).operations)
+    return symmetrised(elements, points, SNAP_ANGSTROM)[1]

@@ -16,7 +16,7 @@ from shapeshelf.geometry.choosing import (
 )
 from shapeshelf.geometry.forces import minimised, settled_down
 from shapeshelf.geometry.ordering import renumbered, settled_order
-from shapeshelf.geometry.surroundings import Surroundings
+from shapeshelf.geometry.surroundings import MULTIPLE_ORDER, Surroundings, joined_without
 from shapeshelf.geometry.targets import bounds_of, terms_of
 from shapeshelf.geometry.torsions import Turn, chain_turns, turns_of
 from shapeshelf.geometry.vectors import Array, angle_degrees, distance, torsion_degrees
@@ -50,7 +50,7 @@ def by_force_field(molecule: Molecule, known: Surroundings) -> Conformers:
         moved, energy = relax_mmff(settled, points[list(order)])
         return _in_given_order(moved, order), energy
 
-    starts = embed(settled, _count(molecule), SEED)
+    starts = embed(settled, _count(molecule, known, 20), SEED)
     relaxed = [relax(_in_given_order(start, order)) for start in starts]
     best = most_symmetric(_elements(molecule), relaxed, relax, FORCE_FIELD_ERROR_KCAL_MOL)
     return Conformers(_ends_aligned(molecule, known, best), "lowest MMFF94s conformer", len(starts))
@@ -60,7 +60,7 @@ def by_rules(molecule: Molecule, known: Surroundings) -> Conformers:
     """Return the lowest conformer under our own lengths, angles, contacts and torsion rules."""
     order = settled_order(molecule)
     bounds = _settled_bounds(bounds_of(molecule, known), order)
-    starts = embed(renumbered(molecule, order), _count(molecule), SEED, bounds)
+    starts = embed(renumbered(molecule, order), _count(molecule, known, 12), SEED, bounds)
     given = np.stack([_in_given_order(start, order) for start in starts])
     terms = terms_of(molecule, known, turns_of(known))
     rough, energies = minimised(terms, given, FIRST_STEPS, slope=0.05)
@@ -88,11 +88,15 @@ def _lowest_distinct(energies: Array) -> list[int]:
     return kept[:MOST_SETTLED]
 
 
-def _count(molecule: Molecule) -> int:
-    """Return how many conformers to try: more for a molecule with more single bonds to turn."""
-    degree = [len(molecule.neighbours(atom)) for atom in range(len(molecule.atoms))]
-    turning = sum(1 for bond in molecule.bonds if min(degree[bond.begin], degree[bond.end]) > 1)
-    return int(np.clip(4 + 6 * turning, 6, 20 if len(degree) <= SMALL else 12))
+def _count(molecule: Molecule, known: Surroundings, most: int) -> int:
+    """Return how many conformers to try: more for more single bonds to turn or rings to fold."""
+    turning = folding = 0
+    for (b, c), order in known.orders.items():
+        if min(len(known.neighbours[b]), len(known.neighbours[c])) > 1 and order < MULTIPLE_ORDER:
+            ring = joined_without(known, b, c)
+            folding += ring
+            turning += not ring
+    return int(np.clip(2 + 5 * turning + folding, 4, most if len(molecule.atoms) <= SMALL else 12))
 
 
 def _in_given_order(points: Array, order: tuple[int, ...]) -> Array:

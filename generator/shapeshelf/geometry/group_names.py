@@ -8,7 +8,7 @@ from fractions import Fraction
 
 import numpy as np
 
-from shapeshelf.geometry.vectors import Array, unit
+from shapeshelf.geometry.vectors import Array
 
 _LARGEST_ORDER = 96
 _SAME_DIRECTION = 1e-6
@@ -129,8 +129,8 @@ def _axis(rotation: Array) -> Array:
     The symmetric part (R + R^T)/2 has the axis as eigenvector to eigenvalue one, the largest.
     """
     _, vectors = np.linalg.eigh((rotation + rotation.T) / 2.0)
-    axis = unit(vectors[:, 2])
-    lead = axis[np.abs(axis) > _SAME_DIRECTION][0]
+    axis: Array = vectors[:, 2]
+    lead = next(value for value in axis.tolist() if abs(value) > _SAME_DIRECTION)
     return axis if lead > 0 else -axis
 
 

@@ -23,6 +23,7 @@ Indices = NDArray[np.int64]
 
 _WELL_SPREAD_SINE = 0.3
 _REFINEMENTS = 3
+MOST_AT_ONCE = 2_000_000
 
 
 @dataclass(frozen=True, slots=True)
@@ -157,15 +158,19 @@ def _largest_group(found: OperationSet) -> tuple[OperationSet, Indices]:
 def _multiplication_table(group: OperationSet) -> Indices | None:
     """Return the row of each product g h (m, m), ``None`` where one is missing."""
     proper = np.linalg.det(group.matrices) > 0
-    marks = _marks(group.permutations, proper)
+    marks, size = _marks(group.permutations, proper), group.permutations.shape[1]
     order = np.argsort(marks)
     table = np.empty((len(marks), len(marks)), dtype=np.int64)
-    for row, permutation in enumerate(group.permutations):
-        products = _marks(permutation[group.permutations], proper == proper[row])
+    for rows in np.array_split(np.arange(len(marks)), 1 + marks.size**2 * size // MOST_AT_ONCE):
+        products = _marks(
+            group.permutations[rows][:, group.permutations].reshape(-1, size),
+            (proper[rows][:, None] == proper).ravel(),
+        )
         places = np.searchsorted(marks, products, sorter=order).clip(max=len(marks) - 1)
-        table[row] = order[places]
-        if (marks[table[row]] != products).any():
+        found = order[places]
+        if (marks[found] != products).any():
             return None
+        table[rows] = found.reshape(len(rows), -1)
     return table
 
 

@@ -66,6 +66,24 @@ def surroundings_of(
     )
 
 
+def joined_without(
+    known: Surroundings, start: int, goal: int, barred: int = -1, within: int = 7
+) -> bool:
+    """Return whether a path of at most ``within`` bonds, two at least, joins start and goal.
+
+    It may not pass through ``barred``: so asked, it tells whether an angle or a bond is in a ring.
+    """
+    reached, front = {start, barred}, {start}
+    for step in range(within):
+        front = {k for atom in front for k in known.neighbours[atom]} - reached
+        if step == 0:
+            front.discard(goal)
+        if goal in front:
+            return True
+        reached |= front
+    return False
+
+
 def _angles(centres: Sequence[Centre]) -> Iterator[tuple[tuple[int, int, int], float]]:
     for centre in centres:
         for angle in centre.angles:

@@ -8,7 +8,7 @@ import numpy as np
 from numpy.typing import ArrayLike, NDArray
 
 from shapeshelf.errors import AnalysisError
-from shapeshelf.geometry.group_names import element, operation_label, point_group_symbol
+from shapeshelf.geometry.group_names import Element, element, operation_label, point_group_symbol
 from shapeshelf.geometry.model import Matrix, Symmetry, SymmetryOperation
 from shapeshelf.geometry.operations import Indices, averaged, closed_operations
 from shapeshelf.geometry.standard_axes import standard_axes
@@ -40,12 +40,28 @@ def find_symmetry(
     if len(points) == 1:
         return _of_single_atom(centre, tolerance_angstrom)
     line = _common_line(points)
-    if (
-        np.linalg.norm(points - np.outer(points @ line, line), axis=1).max()
-        <= tolerance_angstrom / 2
-    ):
+    if _is_linear(points, line, tolerance_angstrom):
         return _of_linear(numbers, weights, points, line, centre, tolerance_angstrom)
     return _of_solid(numbers, weights, points, centre, tolerance_angstrom)
+
+
+def symmetrised(
+    elements: Sequence[str], coordinates_angstrom: ArrayLike, tolerance_angstrom: float
+) -> tuple[Array, int]:
+    """Return the coordinates (n, 3) averaged over the group, and how many operations it has.
+
+    What ``find_symmetry`` gives, in a third of its time: without names and axes; for a linear
+    molecule the operations of C4v or D4h count. Raises AnalysisError as that does.
+    """
+    given = np.asarray(coordinates_angstrom, float)
+    numbers, weights = _checked(elements, given, tolerance_angstrom)
+    centre = weights @ given / weights.sum()
+    points = given - centre
+    if len(points) == 1 or _is_linear(points, _common_line(points), tolerance_angstrom):
+        found = find_symmetry(elements, given, tolerance_angstrom)
+        return np.array(found.coordinates_angstrom), len(found.operations)
+    group = closed_operations(numbers, points, tolerance_angstrom)
+    return averaged(points, group.matrices, group.permutations) + centre, len(group.matrices)
 
 
 def _checked(
@@ -78,6 +94,11 @@ def _common_line(points: Array) -> Array:
     return np.asarray(axis if lead > 0 else -axis)
 
 
+def _is_linear(points: Array, line: Array, tolerance: float) -> bool:
+    aside = np.linalg.norm(points - np.outer(points @ line, line), axis=1)
+    return bool(aside.max() <= tolerance / 2)
+
+
 def _of_single_atom(centre: Array, tolerance: float) -> Symmetry:
     matrices = np.array(
         [
@@ -89,7 +110,9 @@ def _of_single_atom(centre: Array, tolerance: float) -> Symmetry:
     identity_first = sorted(matrices, key=lambda matrix: -float(np.trace(matrix)))
     turns = np.array(identity_first)
     images = np.zeros((len(turns), 1), dtype=np.int64)
-    return _record("K", 1, False, turns, images, np.zeros((1, 3)), centre, np.eye(3), tolerance)
+    elements = [element(matrix) for matrix in turns]
+    still = np.zeros((1, 3))
+    return _record("K", 1, False, elements, turns, images, still, centre, np.eye(3), tolerance)
 
 
 def _of_linear(
@@ -115,9 +138,9 @@ def _of_linear(
     on_line = np.outer(points @ line, line)
     exact = averaged(on_line, matrices, images)
     name = "Dinfh" if two_ended else "Cinfv"
-    return _record(
-        name, 2 if two_ended else 1, False, matrices, images, exact, centre, axes, tolerance
-    )
+    turns = 2 if two_ended else 1
+    elements = [element(matrix) for matrix in matrices]
+    return _record(name, turns, False, elements, matrices, images, exact, centre, axes, tolerance)
 
 
 def _finite_subgroup(axes: Array, two_ended: bool) -> tuple[Array, list[bool]]:
@@ -152,6 +175,7 @@ def _of_solid(
         name,
         turns,
         turns == len(elements),
+        elements,
         group.matrices,
         group.permutations,
         exact,
@@ -165,6 +189,7 @@ def _record(
     name: str,
     turns: int,
     chiral: bool,
+    elements: list[Element],
     matrices: Array,
     permutations: Indices,
     points: Array,
@@ -173,10 +198,8 @@ def _record(
     tolerance: float,
 ) -> Symmetry:
     operations = tuple(
-        SymmetryOperation(
-            operation_label(element(matrix)), _rows(matrix), tuple(int(k) for k in permutation)
-        )
-        for matrix, permutation in zip(matrices, permutations, strict=True)
+        SymmetryOperation(operation_label(one), _rows(matrix), tuple(images))
+        for one, matrix, images in zip(elements, matrices, permutations.tolist(), strict=True)
     )
     return Symmetry(
         point_group=name,

@@ -6,7 +6,12 @@ import numpy as np
 from numpy.typing import NDArray
 
 from shapeshelf.geometry.forces import Terms
-from shapeshelf.geometry.surroundings import FLAT_SUM_DEGREES, LINEAR_DEGREES, Surroundings
+from shapeshelf.geometry.surroundings import (
+    FLAT_SUM_DEGREES,
+    LINEAR_DEGREES,
+    Surroundings,
+    joined_without,
+)
 from shapeshelf.geometry.torsions import Turn
 from shapeshelf.geometry.vectors import Array
 from shapeshelf.reference.elements import ELEMENTS
@@ -33,7 +38,7 @@ def terms_of(
     soft = np.zeros_like(goal)
     if guarded:
         free = _far_pairs(known)
-        goal = np.where(free, CONTACT_SHARE * _touching(molecule), goal)
+        goal = np.where(free, CONTACT_SHARE * _touching(molecule), goal).astype(np.float64)
         stiffness = np.where(free, CONTACT_STIFFNESS, stiffness)
         soft = SOFT_REPULSION * free
     lines = _lines(known)
@@ -81,7 +86,7 @@ def _distances(known: Surroundings) -> tuple[Array, Array]:
     """Return force constants and targets (n, n) of bonds and of next neighbours."""
     count = len(known.neighbours)
     stiffness, paths = np.zeros((count, count)), np.zeros((count, count))
-    goal: Array = np.zeros((count, count))
+    goal = np.zeros((count, count))
     for (a, b, c), degrees in known.angles.items():
         goal[a, c] += opposite_side(known.length(a, b), known.length(b, c), degrees)
         paths[a, c] += 1
@@ -124,19 +129,8 @@ def _ring_pairs(known: Surroundings) -> NDArray[np.bool_]:
     count = len(known.neighbours)
     pairs = np.zeros((count, count), dtype=bool)
     for a, b, c in known.angles:
-        pairs[a, c] = pairs[a, c] or _joined_without(known, a, c, b)
+        pairs[a, c] = pairs[a, c] or joined_without(known, a, c, b)
     return pairs
-
-
-def _joined_without(known: Surroundings, start: int, goal: int, centre: int) -> bool:
-    """Return whether a ring of at most eight atoms holds start-centre-goal."""
-    reached, front = {start, centre}, {start}
-    for _ in range(6):
-        front = {k for atom in front for k in known.neighbours[atom]} - reached
-        if goal in front:
-            return True
-        reached |= front
-    return False
 
 
 def _lines(known: Surroundings) -> list[tuple[int, int, int]]:

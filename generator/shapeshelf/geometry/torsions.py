@@ -10,7 +10,12 @@ T4  Next to a multiple bond a tetrahedral end eclipses it: propene.
 T5  Across a straight chain the ends of an odd number of double bonds lie in one plane, of an
     even number at right angles (allene); across any other chain they are eclipsed (2-butyne).
 
-T1 to T4: R. J. Gillespie and I. Hargittai, The VSEPR Model of Molecular Geometry (1991) and
+T6  A lone pair beside a tetrahedral end with electronegative neighbours brings the substituent
+    near those (the anomeric effect): sulfuric acid.
+T7  A ring of up to six atoms whose bonds all share in pi bonding is flat even at tetrahedral
+    atoms: hexachlorocyclotriphosphazene.
+
+T1 to T4, T6: R. J. Gillespie and I. Hargittai, The VSEPR Model of Molecular Geometry (1991) and
 E. L. Eliel and S. H. Wilen, Stereochemistry of Organic Compounds (1994), recalled from memory.
 The heights (near kcal/mol) only rank the rules and are ours.
 """
@@ -58,11 +63,41 @@ def _about_bond(known: Surroundings, b: int, c: int) -> Iterator[Turn]:
         for d in right:
             if a == d:
                 continue
+            yield from _special(known, (a, b, c, d), share)
             if shape is not None:
                 height, fold, minimum = shape
                 yield Turn((a, b, c, d), height * share, fold, minimum)
             elif max(known.order(a, b), known.order(c, d)) > DOUBLE_ORDER:
                 yield Turn((a, b, c, d), 1.0 * share, 3, 0.0)
+
+
+def _special(known: Surroundings, atoms: tuple[int, int, int, int], share: float) -> Iterator[Turn]:
+    """Yield T6, either way round, and T7."""
+    a, b, c, d = atoms
+    if _is_anomeric(known, b, c, d) or _is_anomeric(known, c, b, a):
+        yield Turn(atoms, 4.0 * share, 1, 0.0)
+    bonds = ((a, b), (b, c), (c, d))
+    if all(known.order(*bond) > MULTIPLE_ORDER for bond in bonds) and _in_six_ring(known, atoms):
+        yield Turn(atoms, 8.0, 1, 0.0)
+
+
+def _is_anomeric(known: Surroundings, donor: int, centre: int, acceptor: int) -> bool:
+    return (
+        donor in known.paired - known.flat
+        and centre not in known.paired | known.flat
+        and acceptor in known.paired
+        and len(known.neighbours[centre]) == 4
+        and known.order(centre, acceptor) < MULTIPLE_ORDER
+    )
+
+
+def _in_six_ring(known: Surroundings, atoms: tuple[int, int, int, int]) -> bool:
+    a, b, c, d = atoms
+    between = set(known.neighbours[a]) - {b}
+    return any(
+        d in known.neighbours[k] or set(known.neighbours[k]) & set(known.neighbours[d]) - {a, c}
+        for k in between - {c}
+    )
 
 
 def _substituents(known: Surroundings, atom: int, axis: int) -> list[int]:
