@@ -5,19 +5,23 @@ molecule assembled (supplied coordinates stand as they are); symmetry; propertie
 number merged with what was measured and what was calculated.
 """
 
-from shapeshelf.catalogue.model import Entry, Quantity
+from collections.abc import Sequence
+
+from shapeshelf.catalogue.model import Entry, Measurement, Quantity
 from shapeshelf.domains.analysis import analyse
-from shapeshelf.domains.model import Centre, LewisCount
 from shapeshelf.errors import AnalysisError
 from shapeshelf.geometry.assembly import assemble
-from shapeshelf.geometry.model import Structure, Symmetry
 from shapeshelf.geometry.symmetry import find_symmetry
 from shapeshelf.properties.model import DipoleModel
 from shapeshelf.properties.polarity import dipole
 from shapeshelf.properties.spectra import expect_spectra
+from shapeshelf.report.angles import angle_rows
 from shapeshelf.report.cautions import cautions_of
-from shapeshelf.report.centres import centre_reports, length_rows, unmatched_measurements
-from shapeshelf.report.model import Basis, CentreReport, CompoundReport, Value
+from shapeshelf.report.centres import centre_reports
+from shapeshelf.report.labels import Names, name_everything
+from shapeshelf.report.lengths import length_rows
+from shapeshelf.report.model import Analysis, Basis, CentreReport, CompoundReport, Value
+from shapeshelf.report.rows import ligand_sets
 from shapeshelf.report.values import best_value, most_precise
 from shapeshelf.structure.describing import (
     crippen_log_p,
@@ -48,53 +52,58 @@ def report_on_structure(text: str) -> CompoundReport:
 
 
 def _report(molecule: Molecule, entry: Entry | None) -> CompoundReport:
-    if len(molecule.atoms) == SINGLE_ATOM:
-        raise AnalysisError(molecule.formula, "a single atom has no shape")
-    lewis, centres = analyse(molecule)
-    structure = assemble(molecule, lewis, centres)
-    symmetry = find_symmetry(
-        [atom.element for atom in molecule.atoms], structure.coordinates_angstrom
-    )
-    return _complete(molecule, entry, lewis, centres, structure, symmetry)
-
-
-def _complete(
-    molecule: Molecule,
-    entry: Entry | None,
-    lewis: LewisCount,
-    centres: tuple[Centre, ...],
-    structure: Structure,
-    symmetry: Symmetry,
-) -> CompoundReport:
+    analysis = _analysis(molecule)
     measured = entry.measured if entry else ()
-    reports = centre_reports(molecule, lewis, centres, structure, symmetry, measured)
-    lengths = length_rows(molecule, lewis, reports, structure, symmetry, measured)
-    dipole_model = dipole(molecule, lewis, centres, structure, symmetry)
+    names = _names(analysis)
+    angles, unknown_angles = angle_rows(analysis, names, measured)
+    lengths, unknown_lengths = length_rows(analysis, names, measured)
+    centres = centre_reports(analysis, names, angles)
+    polarity = dipole(
+        molecule, analysis.lewis, analysis.centres, analysis.structure, analysis.symmetry
+    )
     organic = is_organic(molecule)
     return CompoundReport(
         id=entry.id if entry else None,
         name=entry.name if entry else molecule.formula,
         entry=entry,
         molecule=molecule,
-        lewis=lewis,
-        structure=structure,
-        symmetry=symmetry,
-        centres=reports,
-        shape=_overall_shape(molecule, reports),
-        point_group=symmetry.point_group,
-        point_group_basis=_basis(structure),
+        lewis=analysis.lewis,
+        structure=analysis.structure,
+        symmetry=analysis.symmetry,
+        centres=centres,
+        shape=_overall_shape(molecule, centres),
+        point_group=analysis.symmetry.point_group,
+        point_group_basis=Basis(analysis.structure.basis.value),
         lengths=lengths,
-        dipole_model=dipole_model,
-        dipole_debye=_dipole_value(dipole_model, entry),
-        spectra=expect_spectra(molecule, lewis, centres, symmetry),
+        dipole_model=polarity,
+        dipole_debye=_dipole_value(polarity, measured),
+        spectra=expect_spectra(molecule, analysis.lewis, analysis.centres, analysis.symmetry),
         molar_mass_g_mol=molar_mass_g_mol(molecule),
         topological_polar_surface_area=(
             topological_polar_surface_area(molecule) if organic else None
         ),
         crippen_log_p=crippen_log_p(molecule) if organic else None,
         cautions=cautions_of(molecule, entry),
-        unmatched=unmatched_measurements(reports, lengths, measured),
+        unmatched=unknown_angles + unknown_lengths,
     )
+
+
+def _analysis(molecule: Molecule) -> Analysis:
+    if len(molecule.atoms) == SINGLE_ATOM:
+        raise AnalysisError(molecule.formula, "a single atom has no shape")
+    lewis, centres = analyse(molecule)
+    structure = assemble(molecule, lewis, centres)
+    elements = [atom.element for atom in molecule.atoms]
+    symmetry = find_symmetry(elements, structure.coordinates_angstrom)
+    return Analysis(molecule, lewis, centres, structure, symmetry)
+
+
+def _names(analysis: Analysis) -> Names:
+    sets = {
+        centre.atom: ligand_sets(analysis.molecule, centre, analysis.symmetry)
+        for centre in analysis.centres
+    }
+    return name_everything(analysis.molecule, analysis.centres, sets)
 
 
 def _overall_shape(molecule: Molecule, reports: tuple[CentreReport, ...]) -> str | None:
@@ -104,13 +113,9 @@ def _overall_shape(molecule: Molecule, reports: tuple[CentreReport, ...]) -> str
     return reports[0].shape if len(reports) == 1 else None
 
 
-def _basis(structure: Structure) -> Basis:
-    return Basis(structure.basis.value)
-
-
-def _dipole_value(model: DipoleModel, entry: Entry | None) -> Value | None:
+def _dipole_value(model: DipoleModel, measured: Sequence[Measurement]) -> Value | None:
     """The moment with its bases; ``None`` for an ion, which has none to measure."""
-    found = [item for item in (entry.measured if entry else ()) if item.quantity is Quantity.DIPOLE]
+    found = [item for item in measured if item.quantity is Quantity.DIPOLE]
     if model.moment_debye is None:
         return None
     return best_value(

@@ -3,19 +3,35 @@
 The rules, in order:
 
 * L1  an atom's own label is its element and ordinal among that element: ``C2``;
-* L2  a centre goes by its bare element where every centre of that element is equivalent,
-  else by its own label;
-* L3  a ligand goes by its bare element where the ligands of that element at the centre are
-  equivalent and no other centre has to be told apart;
+* L2  a centre goes by its bare element where all centres of that element are equivalent and none
+  of them stands beside another atom of that element on one centre; else by its own label;
+* L3  a ligand that is no centre goes by its bare element where all ligands of that element at
+  its centre are equivalent;
 * L4  inequivalent ligands of one element take the site in brackets, ``F(ax)``, where the sites
-  differ, else their own label.
+  differ, else their own label. In an octahedron with one unlike ligand ``ax`` is the site
+  opposite to it.
 """
 
 from collections import Counter, defaultdict
 from collections.abc import Iterable, Mapping, Sequence
+from dataclasses import dataclass
 
 from shapeshelf.domains.model import Centre
 from shapeshelf.structure.molecule import Molecule
+
+OCTAHEDRAL = 6
+
+
+@dataclass(frozen=True, slots=True)
+class Names:
+    """Every name in one molecule."""
+
+    own: tuple[str, ...]
+    """Element and ordinal of each atom."""
+    centres: dict[int, str]
+    """Printed name of each centre, by its atom."""
+    ligands: dict[int, dict[int, str]]
+    """Printed name of each neighbour, by centre and neighbour."""
 
 
 def atom_labels(molecule: Molecule) -> tuple[str, ...]:
@@ -28,18 +44,52 @@ def atom_labels(molecule: Molecule) -> tuple[str, ...]:
     return tuple(labels)
 
 
-def centre_names(molecule: Molecule, centres: Sequence[Centre]) -> dict[int, str]:
+def name_everything(
+    molecule: Molecule, centres: Sequence[Centre], sets: Mapping[int, Sequence[frozenset[int]]]
+) -> Names:
+    """Return all names; ``sets`` gives the alike ligands of each centre, by its atom."""
+    own = atom_labels(molecule)
+    named = _centre_names(molecule, centres, own)
+    ligands = {
+        centre.atom: _ligand_names(molecule, centre, named, sets[centre.atom]) for centre in centres
+    }
+    return Names(own, named, ligands)
+
+
+def _centre_names(
+    molecule: Molecule, centres: Sequence[Centre], own: Sequence[str]
+) -> dict[int, str]:
     """Return the printed name of every centre, by atom (rule L2)."""
     kinds: defaultdict[str, set[int]] = defaultdict(set)
+    beside: set[str] = set()
+    held = {centre.atom for centre in centres}
     for centre in centres:
         kinds[centre.element].add(molecule.classes[centre.atom])
+        beside |= _confusable(molecule, centre.atom, held)
     return {
-        centre.atom: centre.element if len(kinds[centre.element]) == 1 else centre.label
+        centre.atom: (
+            centre.element
+            if len(kinds[centre.element]) == 1 and centre.element not in beside
+            else own[centre.atom]
+        )
         for centre in centres
     }
 
 
-def ligand_names(
+def _confusable(molecule: Molecule, atom: int, centres: set[int]) -> set[str]:
+    """Return elements that stand on ``atom`` both as a centre and as something else."""
+    neighbours = molecule.neighbours(atom)
+    return {
+        molecule.atoms[one].element
+        for one in neighbours
+        for other in neighbours
+        if one in centres
+        and molecule.atoms[one].element == molecule.atoms[other].element
+        and molecule.classes[one] != molecule.classes[other]
+    }
+
+
+def _ligand_names(
     molecule: Molecule,
     centre: Centre,
     names_of_centres: Mapping[int, str],
@@ -50,16 +100,12 @@ def ligand_names(
     ``ligand_sets`` are the sets of neighbours that are equivalent as seen from the centre.
     """
     labels = atom_labels(molecule)
-    sites = {
-        domain.neighbour: site
-        for domain, site in zip(centre.domains, _sites(centre), strict=True)
-        if domain.neighbour is not None
-    }
     by_element: defaultdict[str, list[frozenset[int]]] = defaultdict(list)
     for group in ligand_sets:
         by_element[molecule.atoms[min(group)].element].append(group)
     names: dict[int, str] = {}
     for element, groups in by_element.items():
+        sites = _sites(centre, groups)
         names.update(_name_groups(element, groups, sites, labels, names_of_centres))
     return names
 
@@ -70,21 +116,15 @@ def angle_label(names: Mapping[int, str], centre_name: str, first: int, last: in
     return f"{ends[0]}-{centre_name}-{ends[1]}"
 
 
-def bond_ends(
-    molecule: Molecule,
-    begin: int,
-    end: int,
-    names_of_centres: Mapping[int, str],
-    ligands: Mapping[int, Mapping[int, str]],
-) -> tuple[str, str]:
-    """Return the printed names of a bond's two ends, the centre first: ``S``, ``F(ax)``."""
-    if begin in names_of_centres and end in names_of_centres:
-        return names_of_centres[begin], names_of_centres[end]
-    if begin in names_of_centres:
-        return names_of_centres[begin], ligands[begin][end]
-    if end in names_of_centres:
-        return names_of_centres[end], ligands[end][begin]
-    return molecule.atoms[begin].element, molecule.atoms[end].element
+def bond_label(molecule: Molecule, names: Names, begin: int, end: int) -> str:
+    """Return ``S-F(ax)``: the centre first, each end by its printed name."""
+    if begin in names.centres and end in names.centres:
+        return f"{names.centres[begin]}-{names.centres[end]}"
+    if begin in names.centres:
+        return f"{names.centres[begin]}-{names.ligands[begin][end]}"
+    if end in names.centres:
+        return f"{names.centres[end]}-{names.ligands[end][begin]}"
+    return f"{molecule.atoms[begin].element}-{molecule.atoms[end].element}"
 
 
 def same_label(left: str, right: str) -> bool:
@@ -92,10 +132,18 @@ def same_label(left: str, right: str) -> bool:
     return _parts(left) in (_parts(right), _parts(right)[::-1])
 
 
-def _sites(centre: Centre) -> tuple[str, ...]:
-    if centre.placements:
-        return centre.placements[0].sites
-    return ("",) * len(centre.domains)
+def _sites(centre: Centre, groups: Sequence[frozenset[int]]) -> dict[int, str]:
+    """Return the site of each neighbour, empty where the arrangement names none."""
+    if not centre.placements:
+        return {}
+    named = {
+        domain.neighbour: site
+        for domain, site in zip(centre.domains, centre.placements[0].sites, strict=True)
+        if domain.neighbour is not None
+    }
+    if any(named.values()) or sorted(map(len, groups)) != [1, 4] or centre.bonded != OCTAHEDRAL:
+        return named
+    return {atom: "ax" if len(group) == 1 else "eq" for group in groups for atom in group}
 
 
 def _name_groups(

@@ -21,6 +21,17 @@ class Basis(StrEnum):
 
 
 @dataclass(frozen=True, slots=True)
+class Analysis:
+    """A molecule worked out: what the rooms above have said of it, before values are merged."""
+
+    molecule: Molecule
+    lewis: LewisCount
+    centres: tuple[Centre, ...]
+    structure: Structure
+    symmetry: Symmetry
+
+
+@dataclass(frozen=True, slots=True)
 class Value:
     """A number with every basis it has; ``value`` is the best of them."""
 

@@ -25,7 +25,7 @@ from shapeshelf.structure.molecule import Molecule, Vector
 ALIKE_DEGREES = 1.0
 """Wider than the noise of assembly, narrower than any difference a reader would act on."""
 ALIKE_ANGSTROM = 0.01
-STRAIGHT_DEGREES = 170.0
+STRAIGHT_DEGREES = 150.0
 
 Triple = tuple[int, int, int]
 Item = TypeVar("Item", bound=tuple[int, ...])
@@ -83,18 +83,18 @@ def angle_sets(
 
 def bond_sets(
     molecule: Molecule,
-    ends: Mapping[int, tuple[str, str]],
+    labels: Sequence[str],
     symmetry: Symmetry,
     coordinates: Sequence[Vector],
 ) -> tuple[BondSet, ...]:
-    """Return the rows of bonds; ``ends`` gives the printed names of each bond's two ends."""
+    """Return the rows of bonds; ``labels`` gives the printed label of each bond."""
     pairs = [tuple(sorted((bond.begin, bond.end))) for bond in molecule.bonds]
     number = {pair: index for index, pair in enumerate(pairs)}
     gathered: dict[str, list[BondSet]] = defaultdict(list)
     for orbit in _orbits(pairs, symmetry):
         members = tuple(number[pair] for pair in orbit)
         mean = _mean(distance(coordinates[a], coordinates[b]) for a, b in orbit)
-        label = "-".join(ends[members[0]])
+        label = labels[members[0]]
         gathered[label].append(BondSet(label, members, mean))
     return tuple(row for rows in gathered.values() for row in _merge_bonds(rows))
 

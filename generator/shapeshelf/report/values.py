@@ -3,6 +3,7 @@
 from collections.abc import Iterable
 
 from shapeshelf.catalogue.model import Measurement
+from shapeshelf.geometry.model import Structure, StructureBasis
 from shapeshelf.report.model import Basis, Value
 
 MODEL_NAME = "electron-domain model"
@@ -48,6 +49,27 @@ def best_value(
         measurement=measurement,
         supplied=supplied,
     )
+
+
+def structure_value(
+    structure: Structure,
+    in_structure: float,
+    uncertainty: float | None,
+    domain_model: float | None,
+    measurement: Measurement | None,
+) -> Value:
+    """Return an angle or length; what the structure shows is the model's unless supplied.
+
+    ``domain_model`` is what the model says where the structure is not its own.
+    """
+    if structure.basis is StructureBasis.SUPPLIED:
+        return best_value(
+            domain_model,
+            uncertainty if domain_model is not None else None,
+            measurement,
+            supplied=in_structure,
+        )
+    return best_value(in_structure, uncertainty, measurement)
 
 
 def most_precise(measurements: Iterable[Measurement]) -> Measurement | None:

@@ -1,0 +1,64 @@
+"""The rows of bond lengths, each with its merged value."""
+
+from collections.abc import Sequence
+
+from shapeshelf.catalogue.model import Measurement, Quantity
+from shapeshelf.report.labels import Names, bond_label
+from shapeshelf.report.matching import Named, kind_of, match
+from shapeshelf.report.model import Analysis, LengthRow
+from shapeshelf.report.rows import BondSet, bond_sets
+from shapeshelf.report.values import structure_value
+
+LENGTH_UNCERTAINTY_ANGSTROM = 0.03
+"""68 % half-width of the model's bond lengths against the geometries of ase.data.g2; measured
+by ``tests/benchmarks/``."""
+
+
+def length_rows(
+    analysis: Analysis, names: Names, measured: Sequence[Measurement]
+) -> tuple[tuple[LengthRow, ...], tuple[Measurement, ...]]:
+    """Return one row a set of equivalent bonds, and measured lengths that fit no row."""
+    molecule = analysis.molecule
+    labels = [bond_label(molecule, names, bond.begin, bond.end) for bond in molecule.bonds]
+    sets = bond_sets(molecule, labels, analysis.symmetry, analysis.structure.coordinates_angstrom)
+    named = [_named(analysis, names, labels, row) for row in sets]
+    matched, unmatched = match(named, measured, Quantity.LENGTH)
+    rows = tuple(
+        _row(analysis, row, calls, measurement)
+        for row, calls, measurement in zip(sets, named, matched, strict=True)
+    )
+    return rows, unmatched
+
+
+def _named(analysis: Analysis, names: Names, labels: Sequence[str], row: BondSet) -> Named:
+    bonds = [analysis.molecule.bonds[index] for index in row.members]
+    spelled = [labels[index] for index in row.members]
+    spelled += [f"{names.own[bond.begin]}-{names.own[bond.end]}" for bond in bonds]
+    ends = (bonds[0].begin, bonds[0].end)
+    return Named(
+        labels=tuple(dict.fromkeys((row.of, *spelled))),
+        bare="-".join(analysis.molecule.atoms[atom].element for atom in ends),
+        centre=min(ends, key=lambda atom: (atom not in names.centres, atom)),
+        kind=kind_of(analysis.molecule.classes, ends),
+    )
+
+
+def _row(
+    analysis: Analysis, row: BondSet, calls: Named, measurement: Measurement | None
+) -> LengthRow:
+    bonds = [analysis.molecule.bonds[index] for index in row.members]
+    members = tuple((bond.begin, bond.end) for bond in bonds)
+    return LengthRow(
+        of=row.of,
+        atoms=members[0],
+        members=members,
+        bond_order=analysis.lewis.bond_orders[row.members[0]],
+        angstrom=structure_value(
+            analysis.structure,
+            row.mean_angstrom,
+            LENGTH_UNCERTAINTY_ANGSTROM,
+            None,
+            measurement,
+        ),
+        labels=calls.labels,
+    )
