@@ -11,6 +11,8 @@ import re
 from collections import Counter
 from collections.abc import Iterator, Mapping
 
+from rdkit import Chem
+
 from shapeshelf.errors import StructureError
 from shapeshelf.reference.elements import ELEMENTS
 from shapeshelf.structure.drawing import is_metal
@@ -80,13 +82,19 @@ def charge_suffix(charge: int) -> str:
 def molar_mass_g_mol(molecule: Molecule) -> float:
     """Return the molar mass in g/mol from standard atomic weights.
 
-    An atom whose isotope is given counts with its mass number. Electrons of a charge are left out
-    (below 0.001 g/mol each).
+    An atom whose isotope is given counts with the mass of that isotope. Electrons of a charge are
+    left out (below 0.001 g/mol each).
     """
-    return sum(
-        float(atom.isotope) if atom.isotope else ELEMENTS[atom.element].atomic_weight
-        for atom in molecule.atoms
-    )
+    return sum(_mass(atom) for atom in molecule.atoms)
+
+
+def _mass(atom: Atom) -> float:
+    row = ELEMENTS[atom.element]
+    if not atom.isotope:
+        return row.atomic_weight
+    table = Chem.GetPeriodicTable()
+    # RDKit answers 0 for an isotope it does not know; the mass number is right within 0.1.
+    return table.GetMassForIsotope(row.atomic_number, atom.isotope) or float(atom.isotope)
 
 
 def _readings(text: str) -> Iterator[Formula]:

@@ -44,7 +44,7 @@ def write_sdf(
 
 def _one_line(text: str) -> str:
     """Fold white space, so that no text can break the file apart."""
-    return " ".join(text.split()).replace("$$$$", "")
+    return " ".join(text.replace("$$$$", " ").split())
 
 
 def _field_name(name: str) -> str:
