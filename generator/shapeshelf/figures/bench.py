@@ -1,7 +1,5 @@
 """The bench view: one perspective picture with wedges, lone pairs and the key angles."""
 
-import math
-
 import numpy as np
 from numpy.typing import NDArray
 
@@ -11,7 +9,7 @@ from shapeshelf.figures.describing import describe
 from shapeshelf.figures.framing import framed
 from shapeshelf.figures.model import Drawing, Lettering, Mark, Point, Role, Style, Svg
 from shapeshelf.figures.numbered import numbered_drawing
-from shapeshelf.figures.outlines import lobe, ring
+from shapeshelf.figures.outlines import electron_dots, lobe, ring
 from shapeshelf.figures.palette import element_colour
 from shapeshelf.figures.projection import (
     VIEWPOINT_RADII,
@@ -169,19 +167,3 @@ def _lobe(stage: Stage, index: int) -> list[Mark]:
     radius = stage.lobe_radius(float(stage.lobes[index, 2]))
     outline = lobe(stage.at(one.atom), middle, radius, Style("line", "lobe", 1.2))
     return [outline, *electron_dots(stage.at(one.atom), middle, one.electrons, radius * 0.34)]
-
-
-def electron_dots(apex: Point, middle: Point, electrons: int, apart: float) -> list[Mark]:
-    """Return one dot or two, side by side across the direction from ``apex``."""
-    heading = math.atan2(middle[1] - apex[1], middle[0] - apex[0])
-    offsets = (0.0,) if electrons == 1 else (-apart, apart)
-    return [
-        ring(
-            middle[0] - offset * math.sin(heading),
-            middle[1] + offset * math.cos(heading),
-            2.7,
-            Style(None, "ink"),
-            Role.ELECTRON,
-        )
-        for offset in offsets
-    ]

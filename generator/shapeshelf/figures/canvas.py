@@ -18,9 +18,9 @@ from matplotlib.font_manager import FontProperties, get_font
 from matplotlib.path import Path
 from matplotlib.transforms import Affine2D
 
-from shapeshelf.figures.finishing import finish
+from shapeshelf.figures.finishing import batches, finish
 from shapeshelf.figures.lettering import SCRIPT_SIZE, plain, runs
-from shapeshelf.figures.model import Drawing, Lettering, Stroke, Svg
+from shapeshelf.figures.model import Drawing, Lettering, Point, Stroke, Svg
 from shapeshelf.figures.palette import colours
 
 _POINTS_PER_INCH = 72
@@ -87,31 +87,34 @@ class _Marks(Artist):
     def draw(self, renderer: Any) -> None:
         """Draw every mark in order; y runs downwards in a drawing, upwards in matplotlib."""
         flip = Affine2D().scale(1, -1).translate(0, self._drawing.height)
-        for mark in self._drawing.marks:
-            if isinstance(mark, Stroke):
-                _draw_stroke(renderer, mark, flip)
+        for batch in batches(self._drawing.marks):
+            if isinstance(batch, Lettering):
+                _draw_lettering(renderer, batch)
             else:
-                _draw_lettering(renderer, mark)
+                _draw_strokes(renderer, batch, flip)
 
 
-def _draw_stroke(renderer: Any, mark: Stroke, flip: Affine2D) -> None:
-    style = mark.style
+def _draw_strokes(renderer: Any, strokes: list[Stroke], flip: Affine2D) -> None:
+    style = strokes[0].style
     context = renderer.new_gc()
     context.set_linewidth(style.width if style.stroke else 0)
     context.set_foreground(_light(style.stroke or "ink"))
     if style.dash:
         context.set_dashes(0, style.dash)
-    renderer.draw_path(
-        context, _path(mark), flip, to_rgb(_light(style.fill)) if style.fill else None
-    )
+    face = to_rgb(_light(style.fill)) if style.fill else None
+    renderer.draw_path(context, _path(strokes), flip, face)
 
 
-def _path(mark: Stroke) -> Path:
-    points = list(mark.points)
-    codes = [Path.MOVETO] + [Path.CURVE4 if mark.curved else Path.LINETO] * (len(points) - 1)
-    if mark.closed:
-        points.append(points[0])
-        codes.append(Path.CLOSEPOLY)
+def _path(strokes: list[Stroke]) -> Path:
+    points: list[Point] = []
+    codes: list[int] = []
+    for stroke in strokes:
+        points += stroke.points
+        step = Path.CURVE4 if stroke.curved else Path.LINETO
+        codes += [Path.MOVETO] + [step] * (len(stroke.points) - 1)
+        if stroke.closed:
+            points.append(stroke.points[0])
+            codes.append(Path.CLOSEPOLY)
     return Path(points, codes)
 
 

@@ -2,11 +2,10 @@
 
 import hashlib
 import re
-from collections.abc import Iterator
 from html import escape
 
 from shapeshelf.figures.lettering import markup
-from shapeshelf.figures.model import Drawing, Lettering, Mark, Style
+from shapeshelf.figures.model import Drawing, Lettering, Mark, Stroke, Style
 from shapeshelf.figures.palette import colours
 
 FONT_STACK = (
@@ -19,15 +18,29 @@ _ELEMENT = re.compile(r'<path d="([^"]*)"|<text ')
 _NUMBER = re.compile(r"-?\d+\.\d+")
 
 
+def batches(marks: tuple[Mark, ...]) -> list[Lettering | list[Stroke]]:
+    """Return lettering, and neighbouring strokes of one style together: they make one path."""
+    found: list[Lettering | list[Stroke]] = []
+    for mark in marks:
+        last = found[-1] if found else None
+        if isinstance(mark, Lettering):
+            found.append(mark)
+        elif isinstance(last, list) and last[0].style == mark.style:
+            last.append(mark)
+        else:
+            found.append([mark])
+    return found
+
+
 def finish(written: str, drawing: Drawing) -> str:
     """Return one ``<svg>`` element from what the canvas wrote for ``drawing``.
 
-    Colours become CSS variables with a fallback, neighbouring paths of one style one path.
-    The ids derive from the content: figures that differ can stand in one page.
+    Colours become CSS variables with a fallback. The ids derive from the content: figures
+    that differ can stand in one page.
     """
     paths = [match.group(1) for match in _ELEMENT.finditer(written)]
-    body = "".join(_elements(drawing.marks, paths))
-    return _frame(body, drawing)
+    pairs = zip(batches(drawing.marks), paths, strict=True)
+    return _frame("".join(_element(batch, path) for batch, path in pairs), drawing)
 
 
 def colour(name: str) -> str:
@@ -35,25 +48,10 @@ def colour(name: str) -> str:
     return f"var(--fig-{name},{colours()[name].light})"
 
 
-def _elements(marks: tuple[Mark, ...], paths: list[str | None]) -> Iterator[str]:
-    style: Style | None = None
-    gathered: list[str] = []
-    for mark, path in zip(marks, paths, strict=True):
-        if isinstance(mark, Lettering) or mark.style != style:
-            yield from _path(style, gathered)
-            style, gathered = None, []
-        if isinstance(mark, Lettering):
-            yield _text(mark)
-        else:
-            style = mark.style
-            gathered.append(_short(path or ""))
-    yield from _path(style, gathered)
-
-
-def _path(style: Style | None, gathered: list[str]) -> Iterator[str]:
-    if style is None:
-        return
-    yield f'<path d="{"".join(gathered)}"{_attributes(style)}/>'
+def _element(batch: Lettering | list[Stroke], path: str | None) -> str:
+    if isinstance(batch, Lettering):
+        return _text(batch)
+    return f'<path d="{_short(path or "")}"{_attributes(batch[0].style)}/>'
 
 
 def _attributes(style: Style) -> str:

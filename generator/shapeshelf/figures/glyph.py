@@ -7,11 +7,11 @@ from functools import cache
 import numpy as np
 from numpy.typing import NDArray
 
-from shapeshelf.figures.bench import Stage, electron_dots
+from shapeshelf.figures.bench import Stage
 from shapeshelf.figures.canvas import render
 from shapeshelf.figures.framing import MARGIN, extent, framed
 from shapeshelf.figures.model import Drawing, Mark, Role, Stroke, Style, Svg
-from shapeshelf.figures.outlines import lobe, ring
+from shapeshelf.figures.outlines import electron_dots, lobe, ring
 from shapeshelf.figures.scene import Lobe, Scene, Stick
 from shapeshelf.figures.sticks import lines, rim, trimmed, wedge_or_hash
 from shapeshelf.reference.polyhedra import POLYHEDRA

@@ -38,8 +38,10 @@ def markup(text: str) -> str:
 
 
 def formula(text: str, charge: int = 0) -> str:
-    """Return a plain formula such as ``SO4^2-`` or ``SF4`` with scripts set."""
-    bare = re.split(r"\^|(?<=[A-Za-z0-9)])\d*[+-]+$", text)[0] if charge else text
+    """Return a plain formula such as ``SF4`` or ``SO42-`` (of charge -2) with scripts set."""
+    size = str(abs(charge)) if abs(charge) > 1 else ""
+    suffix = f"{size}{'+' if charge > 0 else '-'}" if charge else ""
+    bare = text.removesuffix(suffix).rstrip("^ ")
     return _FORMULA_PART.sub(r"\1_{\2}", bare) + charge_script(charge)
 
 

@@ -65,6 +65,22 @@ def arrowhead(tip: Point, heading: float, length: float, colour: str, role: Role
     return Stroke(points, Style(None, colour), role, closed=True)
 
 
+def electron_dots(apex: Point, middle: Point, electrons: int, apart: float) -> list[Stroke]:
+    """Return one dot or two, side by side across the direction from ``apex``."""
+    heading = math.atan2(middle[1] - apex[1], middle[0] - apex[0])
+    offsets = (0.0,) if electrons == 1 else (-apart, apart)
+    return [
+        ring(
+            middle[0] - offset * math.sin(heading),
+            middle[1] + offset * math.cos(heading),
+            2.7,
+            Style(None, "ink"),
+            Role.ELECTRON,
+        )
+        for offset in offsets
+    ]
+
+
 def _on_circle(middle: Point, radius: float, angle: float) -> Point:
     return (middle[0] + radius * math.cos(angle), middle[1] + radius * math.sin(angle))
 

@@ -1,0 +1,133 @@
+"""The title block of a sheet: what is drawn, on what it rests, at what scale."""
+
+from shapeshelf.figures.canvas import text_width
+from shapeshelf.figures.layout import BLOCK_HEIGHT, BLOCK_WIDTH
+from shapeshelf.figures.lettering import formula, point_group
+from shapeshelf.figures.model import Lettering, Mark, Role, Stroke, Style
+from shapeshelf.figures.outlines import ring
+from shapeshelf.report.model import Basis, CompoundReport, Value
+
+_HEAD, _FOOT = 40.0, 44.0
+_PAD, _LABEL_COLUMN = 12.0, 96.0
+_NAME_SIZE, _SMALLEST_NAME, _TEXT, _SMALL = 19.0, 13.0, 14.0, 12.0
+_RULE, _THICK = Style("ink", None, 0.8), Style("ink", None, 1.6)
+_SYMBOL_WIDTH = 70.0
+
+
+def title_block(
+    report: CompoundReport, x: float, y: float, scale: float, revision: str
+) -> list[Mark]:
+    """Return the block with its upper left corner at (x, y)."""
+    rows = [
+        ("shape", _shape(report)),
+        ("point group", f"{point_group(report.point_group)}  {report.point_group_basis.value}"),
+        ("basis", _basis(report)),
+        ("method", report.structure.method),
+        ("id · revision", " · ".join(part for part in (report.id, revision) if part)),
+    ]
+    marks: list[Mark] = [_box(x, y, BLOCK_WIDTH, BLOCK_HEIGHT, _THICK)]
+    marks += _head(report, x, y)
+    height = (BLOCK_HEIGHT - _HEAD - _FOOT) / len(rows)
+    for index, (label, text) in enumerate(rows):
+        marks += _row(label, text, x, y + _HEAD + index * height, height)
+    return [*marks, *_foot(x, y + BLOCK_HEIGHT - _FOOT, scale)]
+
+
+def fitted(text: str, room: float, size: float, smallest: float, bold: bool = False) -> Lettering:
+    """Return ``text`` as large as fits into ``room`` pixels, shortened with … as a last resort."""
+    while size > smallest and text_width(text, size, bold) > room:
+        size -= 0.5
+    while len(text) > 1 and text_width(text, size, bold) > room:
+        text = text[:-2].rstrip() + "…"
+    return Lettering(0, 0, text, size, anchor="start", bold=bold)
+
+
+def _head(report: CompoundReport, x: float, y: float) -> list[Mark]:
+    charge = report.molecule.charge
+    sum_formula = formula(report.molecule.formula, charge)
+    wide = min(text_width(sum_formula, 18, True), BLOCK_WIDTH * 0.4)
+    small = fitted(sum_formula, wide + 1, 18, 10, bold=True)
+    name = fitted(report.name, BLOCK_WIDTH - 3 * _PAD - wide, _NAME_SIZE, _SMALLEST_NAME, bold=True)
+    base = y + _HEAD / 2 + 7
+    return [
+        Lettering(x + _PAD, base, name.text, name.size, anchor="start", bold=True),
+        Lettering(x + BLOCK_WIDTH - _PAD, base, small.text, small.size, anchor="end", bold=True),
+    ]
+
+
+def _row(label: str, text: str, x: float, y: float, height: float) -> list[Mark]:
+    base = y + height / 2 + 5
+    shown = fitted(text, BLOCK_WIDTH - _LABEL_COLUMN - _PAD, _TEXT, 11.0)
+    return [
+        Stroke(((x, y), (x + BLOCK_WIDTH, y)), _RULE, Role.FRAME),
+        Lettering(x + _PAD, base, label, _SMALL, colour="soft", anchor="start"),
+        Lettering(x + _LABEL_COLUMN, base, shown.text, shown.size, anchor="start"),
+    ]
+
+
+def _foot(x: float, y: float, scale: float) -> list[Mark]:
+    """The scale bar and the sign for first-angle projection."""
+    split = x + BLOCK_WIDTH - _SYMBOL_WIDTH
+    left, level = x + _PAD + 4, y + 30
+    marks: list[Mark] = [
+        Stroke(((x, y), (x + BLOCK_WIDTH, y)), _RULE, Role.FRAME),
+        Stroke(((split, y), (split, y + _FOOT)), _RULE, Role.FRAME),
+        Stroke(((left, level), (left + scale, level)), Style("ink", None, 2.0), Role.FRAME),
+        Lettering(left + scale / 2, level - 8, "1 Å", _SMALL),
+        Lettering(
+            left + scale + 16,
+            level + 4,
+            "lengths in Å, ≈ model",
+            _SMALL,
+            Role.LABEL,
+            "soft",
+            "start",
+        ),
+    ]
+    for end in (left, left + scale):
+        marks.append(
+            Stroke(((end, level - 5), (end, level + 5)), Style("ink", None, 2.0), Role.FRAME)
+        )
+    return [*marks, *_first_angle_sign(split + 8, y + _FOOT / 2)]
+
+
+def _first_angle_sign(x: float, y: float) -> list[Mark]:
+    """A cone from the front, then from the left to its right (ISO 5456-2, first angle)."""
+    small, large, length = 5.0, 10.0, 20.0
+    line = Style("ink", None, 1.2)
+    cone = ((x, y - large), (x + length, y - small), (x + length, y + small), (x, y + large))
+    eye = x + length + 17
+    chain = Style("soft", None, 0.8, (7, 2, 1.5, 2))
+    return [
+        Stroke(cone, line, Role.FRAME, closed=True),
+        ring(eye, y, small, line, Role.FRAME),
+        ring(eye, y, large, line, Role.FRAME),
+        Stroke(((x - 4, y), (eye + large + 4, y)), chain, Role.FRAME),
+        Stroke(((eye, y - large - 4), (eye, y + large + 4)), chain, Role.FRAME),
+    ]
+
+
+def _shape(report: CompoundReport) -> str:
+    distinct = {one.equivalent for one in report.centres}
+    if len(distinct) > 1:
+        return f"{len(distinct)} kinds of centre"
+    for one in report.centres:
+        return "  ".join(part for part in (one.shape or "unnamed", one.polyhedral_symbol) if part)
+    return report.shape or "unnamed"
+
+
+def _basis(report: CompoundReport) -> str:
+    angles = [row.degrees for one in report.centres for row in one.angles]
+    lengths = [row.angstrom for row in report.lengths]
+    parts = [("angles", angles), ("lengths", lengths)]
+    return ", ".join(f"{name} {_bases(values)}" for name, values in parts if values)
+
+
+def _bases(values: list[Value]) -> str:
+    found = {value.basis for value in values}
+    return " + ".join(basis.value for basis in Basis if basis in found)
+
+
+def _box(x: float, y: float, width: float, height: float, style: Style) -> Stroke:
+    corners = ((x, y), (x + width, y), (x + width, y + height), (x, y + height))
+    return Stroke(corners, style, Role.FRAME, closed=True)
