@@ -25,6 +25,7 @@ from shapeshelf.geometry.conformers import Conformers, by_force_field, by_rules
 from shapeshelf.geometry.model import Structure, StructureBasis
 from shapeshelf.geometry.surroundings import surroundings_of
 from shapeshelf.geometry.symmetry import symmetrised
+from shapeshelf.geometry.targets import handedness
 from shapeshelf.geometry.vectors import Array
 from shapeshelf.structure.embedding import mmff_covers
 from shapeshelf.structure.molecule import Molecule
@@ -70,6 +71,15 @@ def _single_centre(molecule: Molecule, lewis: LewisCount, centres: Sequence[Cent
         if domain.neighbour is not None:
             length = _length(molecule, centre.atom, domain.neighbour, domain.bond_order)
             points[domain.neighbour] = length * np.array(direction)
+    return _handed(molecule, points)
+
+
+def _handed(molecule: Molecule, points: Array) -> Array:
+    """Return the structure or its mirror image, as the drawing's wedge says."""
+    for stereo in molecule.tetrahedral_stereo:
+        vectors = points[list(stereo.neighbours[:3])] - points[stereo.atom]
+        if float(np.linalg.det(vectors)) * handedness(stereo) < 0:
+            return np.asarray(points * np.array([-1.0, 1.0, 1.0]))
     return points
 
 

@@ -15,7 +15,7 @@ from shapeshelf.geometry.surroundings import (
 from shapeshelf.geometry.torsions import Turn
 from shapeshelf.geometry.vectors import Array
 from shapeshelf.reference.elements import ELEMENTS
-from shapeshelf.structure.molecule import Molecule
+from shapeshelf.structure.molecule import Molecule, TetrahedralStereo
 
 BOND_STIFFNESS = 600.0
 ANGLE_STIFFNESS = 80.0
@@ -27,6 +27,8 @@ the Chemical Bond, 3rd ed. (1960), recalled from memory."""
 CONTACT_SHARE = 0.85
 """Atoms of one molecule come closer than van der Waals radii say (common practice, no source)."""
 UNKNOWN_RADIUS_ANGSTROM = 1.5
+TETRAHEDRAL_VOLUME = 0.77
+"""v1 . v2 x v3 of three unit vectors at tetrahedral angles: 4/(3 sqrt 3)."""
 
 
 def terms_of(
@@ -40,7 +42,7 @@ def terms_of(
         free = _far_pairs(known)
         goal = np.where(free, CONTACT_SHARE * _touching(molecule), goal).astype(np.float64)
         stiffness = np.where(free, CONTACT_STIFFNESS, stiffness)
-        soft = SOFT_REPULSION * free
+        soft = np.asarray(SOFT_REPULSION * free, dtype=np.float64)
     lines = _lines(known)
     volumes, volume_goals = _volumes(molecule, known)
     return Terms(
@@ -151,12 +153,19 @@ def _volumes(
             rows.append((centre, ends[0], ends[1], ends[2]))
             goals.append(0.0)
     for stereo in molecule.tetrahedral_stereo:
-        if len(stereo.neighbours) == 4:
-            _, b, c, d = stereo.neighbours
-            rows.append((stereo.atom, b, c, d))
-            # Seen from the first neighbour the others turn clockwise: v2 . v3 x v4 > 0.
-            goals.append(0.77 if stereo.clockwise else -0.77)
+        first, second, third = stereo.neighbours[:3]
+        rows.append((stereo.atom, first, second, third))
+        goals.append(TETRAHEDRAL_VOLUME * handedness(stereo))
     return rows, goals
+
+
+def handedness(stereo: TetrahedralStereo) -> float:
+    """Return the sign of v1 . v2 x v3 of the first three neighbours.
+
+    Seen from the first the others turn clockwise, a lone pair counting as the last of them; that
+    last one stands opposite the other three.
+    """
+    return -1.0 if stereo.clockwise else 1.0
 
 
 def _angle_sum(known: Surroundings, centre: int) -> float:
