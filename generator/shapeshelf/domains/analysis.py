@@ -1,13 +1,12 @@
 """Every centre of a molecule: count, domains, placement, angles, departures, and the working."""
 
-import math
 from collections import Counter
-from collections.abc import Iterable
 from dataclasses import dataclass
 from itertools import combinations
 
 from shapeshelf.domains.counting import domains_at, notation_of
 from shapeshelf.domains.departing import is_fluxional, known_departure
+from shapeshelf.domains.directions import angle_degrees
 from shapeshelf.domains.fitting_departures import bonds_of, departed, needs_bonds_only
 from shapeshelf.domains.graph import BondGraph, graph_of
 from shapeshelf.domains.lewis import count_electrons
@@ -33,7 +32,7 @@ from shapeshelf.domains.tracing import (
 from shapeshelf.errors import AnalysisError
 from shapeshelf.reference.departures import KnownDeparture
 from shapeshelf.reference.metal_shapes import SHAPE_NAMES
-from shapeshelf.structure.molecule import Molecule, Vector
+from shapeshelf.structure.molecule import Molecule
 
 FLUXIONAL_METALS = frozenset({"TBPY-5", "PBPY-7", "OCF-7", "TPRS-7", "SAPR-8", "DD-8", "TPRS-9"})
 METAL_UNCERTAINTY_DEGREES = 6.0
@@ -196,13 +195,3 @@ def _angles(site: _Site, placement: Placement, uncertainty: float | None) -> tup
         )
         for i, j in combinations(range(len(neighbours)), 2)
     )
-
-
-def angle_degrees(first: Vector, second: Vector) -> float:
-    """Return the angle between two unit vectors, in degrees."""
-    cosine = _dot(zip(first, second, strict=True))
-    return math.degrees(math.acos(max(-1.0, min(1.0, cosine))))
-
-
-def _dot(pairs: Iterable[tuple[float, float]]) -> float:
-    return sum(a * b for a, b in pairs)

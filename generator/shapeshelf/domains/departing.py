@@ -70,14 +70,14 @@ def known_departure(graph: BondGraph, lewis: LewisCount, atom: int) -> KnownDepa
 
 
 def is_fluxional(domains: int, bonded: int, departure: KnownDeparture | None) -> bool:
-    """Tell whether ligands are expected to change sites quickly: five, seven or more domains.
+    """Tell whether ligands are expected to change sites quickly.
 
-    Five domains with at least four bonds by the pseudorotation of R. S. Berry, J. Chem. Phys. 32
-    (1960) 933; seven and more after Gillespie and Hargittai (1991); both recalled from memory.
+    Five domains with four or five bonds by the pseudorotation of R. S. Berry, J. Chem. Phys. 32
+    (1960) 933, seven and more after Gillespie and Hargittai (1991); recalled from memory.
     """
     if departure is known.FLUXIONAL_HEXAFLUORIDE:
         return True
-    return (domains == 5 and bonded >= 4) or domains >= 7
+    return (domains == 5 and bonded >= 4) or bonded >= 7
 
 
 def _inert_pair(here: Surroundings) -> KnownDeparture | None:
@@ -121,6 +121,20 @@ def _oxygen_bridge(here: Surroundings) -> KnownDeparture | None:
         return known.LINEAR_ALKALI_OXIDE
     in_ring = any(here.atom in ring for ring in here.graph.rings)
     return known.WIDE_DISILOXANE if set(here.ligands) <= SILYL and not in_ring else None
+
+
+def _cumulated(here: Surroundings) -> KnownDeparture | None:
+    if len(here.ligands) != 2:
+        return None
+    heteroallene = [k for k in here.pi_neighbours() if here.graph.degree(k) == 2]
+    if here.element == "N" and here.pairs == 1 and heteroallene and set(here.ligands) & SILYL:
+        return known.WIDE_SILYL_ISOCYANATE
+    oxides = [k for k in heteroallene if _ends_in_oxygen(here.graph, k)]
+    return known.FLOPPY_CUMULENE if here.element == "C" and len(oxides) == 2 else None
+
+
+def _ends_in_oxygen(graph: BondGraph, atom: int) -> bool:
+    return any(graph.elements[k] == "O" and graph.degree(k) == 1 for k in graph.neighbours(atom))
 
 
 def _alkaline_earth(here: Surroundings) -> KnownDeparture | None:
@@ -168,6 +182,7 @@ RULES: tuple[Callable[[Surroundings], KnownDeparture | None], ...] = (
     _inert_pair,
     _amine,
     _oxygen_bridge,
+    _cumulated,
     _alkaline_earth,
     _bridging_hydrogen,
     _planar_radical,

@@ -14,12 +14,12 @@ C9  Single electrons on different atoms are parallel where no multiplicity is st
 from itertools import islice, product
 
 from shapeshelf.domains.delocalisation import pairs_in_pi
-from shapeshelf.domains.electrons import Drawing, draw, shell
+from shapeshelf.domains.electrons import Drawing, draw, shell, strain
 from shapeshelf.domains.graph import BondGraph, graph_of
 from shapeshelf.domains.metals import unpaired_d_electrons
 from shapeshelf.domains.model import LewisAtom, LewisCount, ResonanceForm
 from shapeshelf.domains.pi_systems import pi_systems
-from shapeshelf.domains.resonance import Resonance, equal_drawings
+from shapeshelf.domains.resonance import Resonance, bonds_within, equal_drawings
 from shapeshelf.errors import AnalysisError
 from shapeshelf.reference.elements import ELEMENTS
 from shapeshelf.structure.molecule import Molecule
@@ -44,14 +44,18 @@ def count_electrons(molecule: Molecule) -> LewisCount:
         for k in range(len(molecule.atoms))
     )
     orders = _mean_orders(molecule, graph, drawing, systems)
-    return LewisCount(atoms, orders, _forms(drawing, systems), multiplicity)
+    return LewisCount(atoms, orders, _forms(graph, drawing, systems), multiplicity)
 
 
 def _resonance(graph: BondGraph, drawing: Drawing) -> tuple[Drawing, list[Resonance]]:
-    """Return the best drawing of all, and the drawings of each pi system on top of it."""
-    for atoms in pi_systems(graph, drawing):
-        drawing = equal_drawings(graph, drawing, atoms).drawings[0]
-    return drawing, [equal_drawings(graph, drawing, atoms) for atoms in pi_systems(graph, drawing)]
+    """Return the best drawing of all, and the drawings of each pi system."""
+    systems = [equal_drawings(graph, drawing, atoms) for atoms in pi_systems(graph, drawing)]
+    best = _combined(graph, drawing, systems, tuple(system.drawings[0] for system in systems))
+    everywhere = tuple(range(len(graph.elements)))
+    if strain(graph, best, everywhere) < strain(graph, drawing, everywhere):
+        # A better drawing may join its pi electrons otherwise: look again from there.
+        return _resonance(graph, best)
+    return best, systems
 
 
 def _drawings_at(drawing: Drawing, systems: list[Resonance]) -> list[tuple[Drawing, ...]]:
@@ -85,8 +89,7 @@ def _mean_orders(
     """C6."""
     orders = [float(order) for order in drawing.orders]
     for system in systems:
-        inside = set(system.atoms)
-        bonds = [n for n, b in enumerate(graph.bonds) if b.begin in inside and b.end in inside]
+        bonds = bonds_within(graph, system.atoms)
         for n in bonds:
             orders[n] = sum(d.orders[n] for d in system.drawings) / len(system.drawings)
         if not system.complete:
@@ -106,23 +109,29 @@ def _average_alike(molecule: Molecule, bonds: list[int], orders: list[float]) ->
             orders[n] = mean
 
 
-def _forms(drawing: Drawing, systems: list[Resonance]) -> tuple[ResonanceForm, ...]:
+def _forms(
+    graph: BondGraph, drawing: Drawing, systems: list[Resonance]
+) -> tuple[ResonanceForm, ...]:
     """Combine the drawings of the pi systems, at most ``MOST_FORMS`` of them."""
     choices = islice(product(*(system.drawings for system in systems)), MOST_FORMS)
-    return tuple(_combined(drawing, systems, choice) for choice in choices)
+    combined = (_combined(graph, drawing, systems, choice) for choice in choices)
+    return tuple(ResonanceForm(form.orders, form.charges) for form in combined)
 
 
 def _combined(
-    drawing: Drawing, systems: list[Resonance], choice: tuple[Drawing, ...]
-) -> ResonanceForm:
-    orders, charges = list(drawing.orders), list(drawing.charges)
+    graph: BondGraph,
+    drawing: Drawing,
+    systems: list[Resonance],
+    choice: tuple[Drawing, ...],
+) -> Drawing:
+    """Return ``drawing`` with every pi system as in the drawing chosen for it."""
+    orders, free, charges = list(drawing.orders), list(drawing.free), list(drawing.charges)
     for system, chosen in zip(systems, choice, strict=True):
         for atom in system.atoms:
-            charges[atom] = chosen.charges[atom]
-        for n, (old, new) in enumerate(zip(drawing.orders, chosen.orders, strict=True)):
-            if new != old:
-                orders[n] = new
-    return ResonanceForm(tuple(orders), tuple(charges))
+            free[atom], charges[atom] = chosen.free[atom], chosen.charges[atom]
+        for bond in bonds_within(graph, system.atoms):
+            orders[bond] = chosen.orders[bond]
+    return Drawing(tuple(orders), tuple(free), tuple(charges))
 
 
 def _multiplicity(molecule: Molecule, graph: BondGraph, drawing: Drawing) -> int:

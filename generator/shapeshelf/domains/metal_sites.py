@@ -19,6 +19,7 @@ from itertools import combinations
 import numpy as np
 import numpy.typing as npt
 
+from shapeshelf.domains.directions import angle_degrees
 from shapeshelf.domains.graph import BondGraph
 from shapeshelf.domains.metals import Donor, MetalCentre
 from shapeshelf.domains.model import Placement
@@ -174,7 +175,7 @@ def _energy(
     symbol: str,
 ) -> float:
     angles = {
-        (i, j): _angle_degrees(vertices[way[i]], vertices[way[j]])
+        (i, j): angle_degrees(vertices[way[i]], vertices[way[j]])
         for i, j in combinations(range(len(way)), 2)
     }
     energy = WEIGHTS.chelate * sum(angles[pair] > NEXT_DEGREES for pair in bitten)
@@ -195,8 +196,3 @@ def _is_misplaced(site: int, symbol: str) -> bool:
     if symbol == "TBPY-5":
         return site < 2
     return symbol in AXIAL and site >= AXIAL[symbol]
-
-
-def _angle_degrees(first: Vector, second: Vector) -> float:
-    cosine = sum(a * b for a, b in zip(first, second, strict=True))
-    return math.degrees(math.acos(max(-1.0, min(1.0, cosine))))

@@ -63,7 +63,7 @@ def _kinds(graph: BondGraph, drawing: Drawing, atom: int, pi_atoms: set[int]) ->
     kinds = []
     if vacant or free % 2 or (free >= 2 and charge < 0):
         kinds.append("electrons")
-    if charge > 0 and (vacant or atom in pi_atoms or ELEMENTS[graph.elements[atom]].period > 2):
+    if vacant or (charge > 0 and (atom in pi_atoms or ELEMENTS[graph.elements[atom]].period > 2)):
         kinds.append("hole")
     return kinds
 

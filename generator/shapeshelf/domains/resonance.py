@@ -17,11 +17,13 @@ from dataclasses import dataclass
 
 from shapeshelf.domains.electrons import Drawing, lacks_pair, strain
 from shapeshelf.domains.graph import BondGraph
-from shapeshelf.domains.ring_currents import ring_shifts
+from shapeshelf.domains.ring_currents import SearchBudget, ring_shifts
 from shapeshelf.reference.elements import ELEMENTS
 
-MOST_DRAWINGS = 400
+MOST_DRAWINGS = 300
 """Of one pi system; beyond them the drawing given is averaged over equivalent bonds."""
+MOST_STEPS = 40_000
+"""Of all ring searches in one pi system."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -38,20 +40,31 @@ class Resonance:
 def equal_drawings(graph: BondGraph, drawing: Drawing, atoms: tuple[int, ...]) -> Resonance:
     """Return the drawings of least strain that moves within ``atoms`` reach, in a fixed order."""
     best = strain(graph, drawing, atoms)
+    # Without charges, vacancies and single electrons every move but E5 only costs.
+    quiet = best == 0 and all(drawing.free[atom] % 2 == 0 for atom in atoms)
+    budget = SearchBudget(MOST_STEPS)
     found = {drawing}
     waiting = [drawing]
     while waiting:
-        for following in _moves(graph, waiting.pop(), atoms):
-            cost = strain(graph, following, atoms)
+        for following in _moves(graph, waiting.pop(), atoms, quiet, budget):
+            cost = best if quiet else strain(graph, following, atoms)
             if cost < best - 1e-9:
                 return equal_drawings(graph, following, atoms)
             if cost <= best + 1e-9 and following not in found:
                 found.add(following)
                 waiting.append(following)
-        if len(found) > MOST_DRAWINGS:
+        if len(found) > MOST_DRAWINGS or budget.left <= 0:
             return Resonance(atoms, (drawing,), complete=False)
     ranked = sorted(found, key=lambda d: (_misplacement(graph, d, atoms), d.orders, d.free))
     return Resonance(atoms, tuple(ranked))
+
+
+def bonds_within(graph: BondGraph, atoms: tuple[int, ...]) -> list[int]:
+    """Return the bonds that have both ends among ``atoms``."""
+    inside = set(atoms)
+    return sorted(
+        {link.bond for atom in atoms for link in graph.links[atom] if link.atom in inside}
+    )
 
 
 def _misplacement(graph: BondGraph, drawing: Drawing, atoms: tuple[int, ...]) -> float:
@@ -63,11 +76,13 @@ def _misplacement(graph: BondGraph, drawing: Drawing, atoms: tuple[int, ...]) ->
     return round(total, 6)
 
 
-def _moves(graph: BondGraph, drawing: Drawing, atoms: tuple[int, ...]) -> Iterator[Drawing]:
+def _moves(
+    graph: BondGraph, drawing: Drawing, atoms: tuple[int, ...], quiet: bool, budget: SearchBudget
+) -> Iterator[Drawing]:
     inside = set(atoms)
-    for start in atoms:
+    for start in () if quiet else atoms:
         yield from _moves_from(graph, drawing, start, inside)
-    for bonds in ring_shifts(graph, drawing.orders, inside):
+    for bonds in ring_shifts(graph, drawing.orders, inside, budget):
         yield _altered(drawing, {bond: 1 - 2 * (k % 2) for k, bond in enumerate(bonds)}, {}, {})
 
 

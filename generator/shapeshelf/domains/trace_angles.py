@@ -1,52 +1,94 @@
 """Which repulsion moves which angle which way, in words."""
 
-import math
+from dataclasses import dataclass
 from itertools import combinations
 
+from shapeshelf.domains.directions import angle_degrees
 from shapeshelf.domains.model import Domain, DomainKind, Placement, TraceStep
-from shapeshelf.structure.molecule import Molecule, Vector
+from shapeshelf.structure.molecule import Molecule
 
 NOTICED_DEGREES = 0.5
 """Shifts below this are left unsaid."""
 MOST_STEPS = 4
+ORDER_NOTICED = 0.1
+
+
+@dataclass(frozen=True, slots=True)
+class _Shift:
+    """One kind of angle: what it is, where it starts and ends, and why."""
+
+    name: str
+    ideal: float
+    actual: float
+    cause: str
 
 
 def angle_steps(
     molecule: Molecule, atom: int, domains: tuple[Domain, ...], placement: Placement
 ) -> list[TraceStep]:
     """Return a step for each kind of angle that leaves its ideal value, the largest shift first."""
-    shifts: dict[tuple[str, float], list[float]] = {}
+    kinds: dict[tuple[str, int], list[_Shift]] = {}
     bonds = [k for k, domain in enumerate(domains) if domain.kind is DomainKind.BOND]
     for i, j in combinations(bonds, 2):
-        ideal = _angle_degrees(placement.ideal_directions[i], placement.ideal_directions[j])
-        actual = _angle_degrees(placement.directions[i], placement.directions[j])
-        ends = sorted((_name(molecule, domains, placement, k) for k in (i, j)))
-        name = f"{ends[0]}-{molecule.atoms[atom].element}-{ends[1]}"
-        shifts.setdefault((name, round(ideal)), []).append(actual)
-    cause = _cause(domains)
-    rows = [(name, ideal, sum(found) / len(found)) for (name, ideal), found in shifts.items()]
-    rows = [row for row in rows if abs(row[2] - row[1]) >= NOTICED_DEGREES]
-    rows.sort(key=lambda row: (-abs(row[2] - row[1]), row[0]))
-    return [TraceStep("P3", _sentence(*row, cause)) for row in rows[:MOST_STEPS]]
+        shift = _shift(molecule, atom, domains, placement, (i, j))
+        kinds.setdefault((shift.name, round(shift.ideal)), []).append(shift)
+    rows = [_mean(shifts) for shifts in kinds.values()]
+    rows = [row for row in rows if abs(row.actual - row.ideal) >= NOTICED_DEGREES]
+    rows.sort(key=lambda row: (-round(abs(row.actual - row.ideal), 3), row.name))
+    return [TraceStep("P3", _sentence(row)) for row in rows[:MOST_STEPS]]
 
 
-def _sentence(name: str, ideal: float, actual: float, cause: str) -> str:
-    way = "closes" if actual < ideal else "opens"
-    return (
-        f"{name} {way} by {abs(actual - ideal):.1f} degrees, {ideal:.0f} to {actual:.1f}: {cause}."
-    )
+def _shift(
+    molecule: Molecule,
+    atom: int,
+    domains: tuple[Domain, ...],
+    placement: Placement,
+    pair: tuple[int, int],
+) -> _Shift:
+    ideal = angle_degrees(*(placement.ideal_directions[k] for k in pair))
+    actual = angle_degrees(*(placement.directions[k] for k in pair))
+    ends = sorted(_name(molecule, domains, placement, k) for k in pair)
+    name = f"{ends[0]}-{molecule.atoms[atom].element}-{ends[1]}"
+    within = [domains[k] for k in pair]
+    without = [domain for k, domain in enumerate(domains) if k not in pair]
+    cause = _why_closed(within, without) if actual < ideal else _why_opened(within, without)
+    return _Shift(name, ideal, actual, cause)
 
 
-def _cause(domains: tuple[Domain, ...]) -> str:
-    kinds = {domain.kind for domain in domains}
-    if DomainKind.LONE_PAIR in kinds:
-        return "lone pairs repel more strongly than bonds"
-    if DomainKind.SINGLE_ELECTRON in kinds:
-        return "a single electron repels less than a pair"
-    orders = {round(domain.bond_order, 1) for domain in domains}
-    if len(orders) > 1:
-        return "multiple bonds repel more strongly than single ones"
-    return "bonds to less electronegative and bulkier neighbours repel more strongly"
+def _mean(shifts: list[_Shift]) -> _Shift:
+    actual = sum(shift.actual for shift in shifts) / len(shifts)
+    nearest = min(shifts, key=lambda shift: abs(shift.actual - actual))
+    return _Shift(shifts[0].name, shifts[0].ideal, actual, nearest.cause)
+
+
+def _sentence(row: _Shift) -> str:
+    way = "closes" if row.actual < row.ideal else "opens"
+    moved = f"{abs(row.actual - row.ideal):.1f} degrees, from {row.ideal:.1f} to {row.actual:.1f}"
+    return f"{row.name} {way} by {moved}: {row.cause}."
+
+
+def _why_closed(within: list[Domain], without: list[Domain]) -> str:
+    if any(domain.kind is DomainKind.LONE_PAIR for domain in without):
+        return "the lone pair repels more strongly than a bond and pushes these two together"
+    if _order(without) > _order(within) + ORDER_NOTICED:
+        return "the multiple bond repels more strongly and pushes these two together"
+    if any(domain.kind is DomainKind.SINGLE_ELECTRON for domain in without):
+        return "the single electron still pushes these two together"
+    return "the other bonds, to less electronegative or bulkier neighbours, push these two together"
+
+
+def _why_opened(within: list[Domain], without: list[Domain]) -> str:
+    if 0 < _order(without) < _order(within) - ORDER_NOTICED:
+        return "the multiple bond repels more strongly than the others"
+    if any(domain.kind is DomainKind.SINGLE_ELECTRON for domain in without):
+        return "the single electron gives way to these two bonds"
+    if _order(within) > 1 + ORDER_NOTICED:
+        return "the multiple bonds push each other apart"
+    return "these bonds, to less electronegative or bulkier neighbours, push each other apart"
+
+
+def _order(domains: list[Domain]) -> float:
+    return max((domain.bond_order for domain in domains), default=0.0)
 
 
 def _name(molecule: Molecule, domains: tuple[Domain, ...], placement: Placement, index: int) -> str:
@@ -54,8 +96,3 @@ def _name(molecule: Molecule, domains: tuple[Domain, ...], placement: Placement,
     element = "" if neighbour is None else molecule.atoms[neighbour].element
     site = placement.sites[index]
     return f"{element}({site})" if site else element
-
-
-def _angle_degrees(first: Vector, second: Vector) -> float:
-    cosine = sum(a * b for a, b in zip(first, second, strict=True))
-    return math.degrees(math.acos(max(-1.0, min(1.0, cosine))))

@@ -1,5 +1,7 @@
 """The working of a centre in plain words, one numbered rule a step."""
 
+from collections import Counter
+
 from shapeshelf.domains.graph import valence_electrons
 from shapeshelf.domains.metal_rules import MetalShape
 from shapeshelf.domains.metals import MetalCentre
@@ -26,8 +28,9 @@ def trace_main_group(
     steps.append(_domains(domains))
     if known:
         steps.append(TraceStep("departure", f"{known.sentence} ({known.source})."))
-    steps += _placed(domains, placements)
-    steps += angle_steps(molecule, atom, domains, placements[0])
+    steps += _placed(molecule, domains, placements)
+    if known is None:
+        steps += angle_steps(molecule, atom, domains, placements[0])
     return tuple(steps)
 
 
@@ -46,10 +49,9 @@ def trace_metal(
     steps = [_oxidation(metal)]
     if found is None:
         why = metal.obstacle or "no rule covers this number of neighbours and d electrons"
-        place = "supplied coordinates" if molecule.coordinates_angstrom else "nothing yet"
-        steps.append(TraceStep("M", f"No shape by rule: {why}. It is taken from {place}."))
+        steps.append(TraceStep("M", f"No shape by rule: {why}. {_from_coordinates(molecule)}"))
         return tuple(steps)
-    steps.append(TraceStep(found.rule, f"{_capital(found.reason)} ({found.source})."))
+    steps.append(TraceStep(found.rule, f"{found.symbol}: {found.reason} ({found.source})."))
     if found.departs:
         steps.append(TraceStep("departure", f"{found.departs} ({found.source})."))
     if len(placements) > 1:
@@ -63,15 +65,23 @@ def trace_metal(
     return tuple(steps)
 
 
+def _from_coordinates(molecule: Molecule) -> str:
+    if molecule.coordinates_angstrom:
+        return "The supplied coordinates give it."
+    return "Coordinates in a file would give it."
+
+
 def _counted(molecule: Molecule, atom: int, count: LewisAtom) -> TraceStep:
     element, charge = molecule.atoms[atom].element, count.formal_charge
     valence = valence_electrons(element)
     charged = f", {-charge:+d} for its charge" if charge else ""
     left = 2 * count.lone_pairs + count.single_electrons
+    given = 2 * sum(bond.dative and bond.begin == atom for bond in molecule.bonds)
+    given_away = f", {given} are given to a neighbour" if given else ""
     return TraceStep(
         "C1",
         f"{element} brings {plural(valence, 'valence electron')}{charged}; "
-        f"{max(valence - charge - left, 0)} go into its bonds, {left} stay: "
+        f"{max(valence - charge - left - given, 0)} go into its bonds{given_away}, {left} stay: "
         f"{plural(count.lone_pairs, 'lone pair')}"
         + (f", {plural(count.single_electrons, 'single electron')}" * bool(count.single_electrons))
         + ".",
@@ -96,29 +106,43 @@ def _domains(domains: tuple[Domain, ...]) -> TraceStep:
     return TraceStep("C", f"{_capital(plural(len(domains), 'domain'))}: {', '.join(parts)}.")
 
 
-def _placed(domains: tuple[Domain, ...], placements: tuple[Placement, ...]) -> list[TraceStep]:
+def _placed(
+    molecule: Molecule, domains: tuple[Domain, ...], placements: tuple[Placement, ...]
+) -> list[TraceStep]:
     best = placements[0]
     count = len(best.directions)
     bonds = sum(domain.kind is DomainKind.BOND for domain in domains)
     text = f"{_capital(plural(count, 'domain'))} lie furthest apart as {arrangement_name(count)}"
     steps = [TraceStep("P1", f"{text}; the {plural(bonds, 'bond')} are {best.shape}.")]
+    if len(placements) > 1:
+        held = _held(molecule, domains, best)
+        steps.append(TraceStep("P2", f"Least repulsion{held} of {plural(len(placements), 'way')}."))
     for other in placements[1:3]:
-        cost = other.energy - best.energy
+        held, cost = _held(molecule, domains, other), other.energy - best.energy
         steps.append(
             TraceStep(
-                "P2", f"{other.shape} {_held(other, domains)}costs {cost:.3g} more repulsion."
+                "P2", f"{_capital(other.shape)}{held}: {cost:.3f} more, in the model's units."
             )
         )
     return steps
 
 
-def _held(placement: Placement, domains: tuple[Domain, ...]) -> str:
-    sites = [
+def _held(molecule: Molecule, domains: tuple[Domain, ...], placement: Placement) -> str:
+    """Say who stands on the axis or apex, or where the lone pairs are."""
+    bare = [
         f"{domain.kind.value} {site}"
         for domain, site in zip(domains, placement.sites, strict=False)
         if domain.kind is not DomainKind.BOND and site
     ]
-    return f"({', '.join(sites)}) " if sites else ""
+    top = [
+        f"{molecule.atoms[domain.neighbour].element} {site}"
+        for domain, site in zip(domains, placement.sites, strict=False)
+        if domain.neighbour is not None and site in ("ax", "ap")
+    ]
+    named = bare or sorted(top)
+    counted = Counter(named)
+    texts = [text if n == 1 else f"{NUMBERS[n]} times {text}" for text, n in counted.items()]
+    return f" with {', '.join(texts)}" if texts else ""
 
 
 def _oxidation(metal: MetalCentre) -> TraceStep:

@@ -2,7 +2,7 @@
 
 Each entry: the sentence for the page without its source, the source, the shape and symbol taken
 instead (``None``: the rule's own shape stays), and where one angle tells the shape, that angle in
-degrees. All values and sources are recalled from memory.
+degrees (for a pyramid the mean of the three). All values and sources are recalled from memory.
 """
 
 from dataclasses import dataclass
@@ -79,8 +79,9 @@ PLANAR_TRIARYLAMINE = KnownDeparture(
 )
 SHALLOW_AMINE = KnownDeparture(
     "The lone pair leans towards the neighbouring pi system: a pyramid shallower than that of an "
-    "alkylamine, easily flattened (H-N-H 113 degrees in aniline)",
+    "alkylamine, easily flattened (H-N-H 113 degrees in aniline, the three angles about 345 in sum)",
     GILLESPIE,
+    angle_degrees=115.0,
 )
 WIDE_DISILOXANE = KnownDeparture(
     "The angle at oxygen between two silicon or germanium atoms is far wider than two lone pairs "
@@ -89,6 +90,19 @@ WIDE_DISILOXANE = KnownDeparture(
     "bent",
     "A-2",
     144.0,
+)
+WIDE_SILYL_ISOCYANATE = KnownDeparture(
+    "The angle at nitrogen between silicon or germanium and a cumulated carbon is far wider than "
+    "a lone pair allows, with almost no force against straightening",
+    GREENWOOD,
+    "bent",
+    "A-2",
+    152.0,
+)
+FLOPPY_CUMULENE = KnownDeparture(
+    "Linear as electron domains ask, but bending costs next to nothing: in carbon suboxide the "
+    "molecule is bent at the middle on average",
+    GREENWOOD,
 )
 LINEAR_ALKALI_OXIDE = KnownDeparture(
     "Oxygen between two alkali metal atoms is linear, the bonds being ionic",
