@@ -5,6 +5,7 @@ from dataclasses import replace
 from pathlib import Path
 
 import pytest
+
 from shapeshelf.catalogue.model import (
     Catalogue,
     Entry,

@@ -18,10 +18,15 @@ def lookup_index(reports: Sequence[CompoundReport]) -> bytes:
     """Return the index as compact JSON: ``compounds`` by field, ``shapes`` by field."""
     index = {
         "schema": SCHEMA,
-        "compounds": _columns([_compound_row(report) for report in reports]),
+        "compounds": _columns([_compound_row(report) for report in by_name(reports)]),
         "shapes": _columns(_shape_rows(reports)),
     }
     return json.dumps(index, ensure_ascii=False, separators=(",", ":")).encode()
+
+
+def by_name(reports: Sequence[CompoundReport]) -> list[CompoundReport]:
+    """Return the reports in the order of a reader's alphabet."""
+    return sorted(reports, key=lambda report: (report.name.casefold(), report.id or ""))
 
 
 def shapes_held(report: CompoundReport) -> tuple[str, ...]:

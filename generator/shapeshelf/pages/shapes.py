@@ -62,13 +62,17 @@ class OverviewView:
 def shape_views(
     reports: Sequence[CompoundReport], sources: Mapping[str, Source]
 ) -> tuple[ShapeView, ...]:
-    """Return one view for every shape the catalogue or the table of shapes knows, by name."""
+    """Return one view for every shape the table of shapes or the catalogue knows.
+
+    In the table's order, which is that of the number of domains and then of lone pairs; shapes
+    that only the catalogue has come last.
+    """
     members: dict[str, list[tuple[CompoundReport, CentreReport]]] = {}
     for report in reports:
         for centre in _distinct_centres(report):
             if centre.shape:
                 members.setdefault(centre.shape, []).append((report, centre))
-    names = sorted({*members, *(known.shape for known in SHAPES.values())})
+    names = dict.fromkeys([*(known.shape for known in SHAPES.values()), *sorted(members)])
     return tuple(_shape_view(name, members.get(name, []), sources) for name in names)
 
 

@@ -12,7 +12,7 @@ from shapeshelf.pages.compound import CompoundView, compound_view, source_view
 from shapeshelf.pages.drawings import compound_figures, shape_glyph
 from shapeshelf.pages.history import Change, last_changes
 from shapeshelf.pages.home import CompoundLine, compound_line, home_view
-from shapeshelf.pages.lookup_index import lookup_index
+from shapeshelf.pages.lookup_index import by_name, lookup_index
 from shapeshelf.pages.model import SiteFile, SitePage
 from shapeshelf.pages.protocols import (
     ProtocolView,
@@ -150,8 +150,7 @@ def _sources(catalogue: Catalogue) -> list[tuple[object, list[tuple[str, str]]]]
 
 
 def _lines(reports: Reports) -> list[CompoundLine]:
-    lines = [compound_line(report, report.shape or "") for report in reports]
-    return sorted(lines, key=lambda line: line.name.casefold())
+    return [compound_line(report, report.shape or "") for report in by_name(reports)]
 
 
 def _all_ids(report: CompoundReport) -> tuple[str, ...]:

@@ -15,7 +15,6 @@ _FORMULA_TOKEN = re.compile(r"(\d+)|([^\d]+)")
 _POINT_GROUP = re.compile(r"(C|D|S|T|O|I|K)(inf|\d+)?([a-z]*)")
 _SPECIES = re.compile(r"(A|B|E|T|G|H|Sigma|Pi|Delta|Phi)(.*)")
 _GREEK = {"Sigma": "Σ", "Pi": "Π", "Delta": "Δ", "Phi": "Φ"}
-_CHARGE_SUFFIX = re.compile(r"(?:\d*[+\-\N{MINUS SIGN}]\d*)$")
 
 
 def formula_markup(formula: str, charge: int = 0) -> Markup:
@@ -36,8 +35,13 @@ def formula_text(formula: str, charge: int = 0) -> str:
 
 
 def without_charge(formula: str, charge: int) -> str:
-    """Return the formula without a charge written at its end."""
-    return _CHARGE_SUFFIX.sub("", formula) if charge else formula
+    """Return the formula without its charge at the end: ``SO42-`` or ``SO4-2`` as ``SO4``."""
+    if charge == 0:
+        return formula
+    sign, magnitude = "+" if charge > 0 else "-", str(abs(charge))
+    endings = (magnitude + sign, sign + magnitude, sign)
+    plain = formula.replace(MINUS, "-")
+    return next((plain.removesuffix(end) for end in endings if plain.endswith(end)), plain)
 
 
 def charge_text(charge: int) -> str:

@@ -1,0 +1,34 @@
+from shapeshelf.catalogue.model import Source
+from shapeshelf.pages.shapes import overview, shape_views
+from shapeshelf.reference.shapes import SHAPES
+from shapeshelf.report.model import CompoundReport
+
+
+def test_overview_puts_a_compound_by_neighbours_and_lone_pairs(sf4: CompoundReport) -> None:
+    """Four neighbours and one lone pair; every other cell stands empty."""
+    table = overview([sf4])
+    cells = {
+        (neighbours, pairs): cell.shapes
+        for neighbours, row in table.rows
+        for pairs, cell in zip(table.lone_pairs, row, strict=True)
+        if cell.shapes
+    }
+    assert cells == {(4, 1): (("see-saw", "shapes/see-saw/", 1),)}
+    assert [neighbours for neighbours, _ in table.rows] == [2, 3, 4, 5, 6, 7]
+
+
+def test_every_known_shape_has_a_page_even_without_a_compound(
+    sf4: CompoundReport, sources: dict[str, Source]
+) -> None:
+    """A link to a shape never breaks because the last compound of it has left."""
+    views = {view.name: view for view in shape_views([sf4], sources)}
+    assert set(views) == {known.shape for known in SHAPES.values()}
+    assert views["see-saw"].compounds == 1
+    assert views["octahedral"].members == ()
+
+
+def test_equivalent_centres_count_once(sf4: CompoundReport, sources: dict[str, Source]) -> None:
+    """The compound stands once on the page of its shape."""
+    (member,) = {view.name: view for view in shape_views([sf4], sources)}["see-saw"].members
+    assert member.address == "compounds/sf4/"
+    assert [angle.plain_label for angle in member.angles] == ["F(ax)-S-F(ax)", "F(eq)-S-F(eq)"]
