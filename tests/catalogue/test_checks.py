@@ -175,6 +175,14 @@ def test_ids_and_names_stand_once(tmp_path: Path, first: str, second: str, expec
     assert "0.yml:" in problem
 
 
+def test_every_repetition_names_the_first_place(tmp_path: Path) -> None:
+    """A third entry of one id points to the first, not to the second."""
+    texts = (f"id: a\nname: {name}\nstructure: N\n" for name in "ABC")
+    second, third = _problems(tmp_path, *texts)
+    assert (second[:5], third[:5]) == ("1.yml", "2.yml")
+    assert all("0.yml:1" in problem for problem in (second, third))
+
+
 FIELDS = [
     field.alias or name
     for model in (EntryFields, StructureFields, MeasuredFields)
