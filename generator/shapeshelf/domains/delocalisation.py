@@ -2,11 +2,13 @@
 
 D1  A pair that is a bond in another drawing of equal standing (carboxylate, enolate, allyl,
     azide, amidinium): planar.
-D2  One pair of N, O, S, Se or Te in a ring of 5, 7 or 9 whose other atoms bring one pi electron
-    each, 4n + 2 in all (pyrrole, furan, thiophene, imidazole).
+D2  One pair of N, O, S, Se or Te in a ring whose other atoms all have pi bonds, each bringing one
+    electron, or none where its double bond leaves the ring for O, S, Se, Te or N; 4n + 2 in all
+    (pyrrole, furan, thiophene, imidazole, 4-pyridone).
 D3  The pair of three-bonded N next to a carbon doubly bonded to O, S, Se, Te or N (amide, urea,
-    amidine, thioamide). Not where that double bond belongs to an aromatic ring (2-aminopyridine),
-    nor for a nitrile (cyanamide): those are shallow pyramids and keep the domain.
+    amidine, thioamide), or one C=C further on (vinylogous amide). Not where the double bond
+    belongs to an aromatic ring (2-aminopyridine), nor for a nitrile (cyanamide): those are
+    shallow pyramids and keep the domain.
 D4  The pair of three-bonded N next to N=O or N=N (nitrosamine, nitramine, triazene).
 D5  The pair of three-bonded N next to boron, aluminium or another atom of group 13 that lacks a
     pair (borazine, aminoborane), or next to a metal of the d or f block (its amides).
@@ -63,15 +65,36 @@ def _ring_donors(graph: BondGraph, drawing: Drawing) -> set[int]:
         if RING_DONORS.get(graph.elements[atom]) == graph.degree(atom)
         and drawing.free[atom] >= 2
         and not has_pi_bond(graph, drawing, atom)
-        and (len(ring) - 1 + 2) % 4 == 2
-        and all(_brings_one(graph, drawing, other, ring) for other in ring if other != atom)
+        and _completes_sextet(graph, drawing, atom, ring)
     }
+
+
+def _completes_sextet(
+    graph: BondGraph, drawing: Drawing, donor: int, ring: tuple[int, ...]
+) -> bool:
+    """Tell whether the donor's pair and the pi electrons of the others make 4n + 2."""
+    electrons = 2
+    for atom in ring:
+        if atom == donor:
+            continue
+        if _brings_one(graph, drawing, atom, ring):
+            electrons += 1
+        elif not _has_outer_double_bond(graph, drawing, atom):
+            return False
+    return electrons % 4 == 2 and electrons > 2
 
 
 def _brings_one(graph: BondGraph, drawing: Drawing, atom: int, ring: tuple[int, ...]) -> bool:
     """Tell whether a ring atom brings one pi electron: its pi bond lies in some ring."""
     return any(
         drawing.orders[link.bond] > 1 and (link.atom in ring or link.bond in graph.ring_bonds)
+        for link in graph.links[atom]
+    )
+
+
+def _has_outer_double_bond(graph: BondGraph, drawing: Drawing, atom: int) -> bool:
+    return any(
+        drawing.orders[link.bond] == 2 and graph.elements[link.atom] in ACCEPTORS
         for link in graph.links[atom]
     )
 
@@ -94,12 +117,21 @@ def _amine_rule(graph: BondGraph, drawing: Drawing, atom: int, ring: set[int]) -
 
 
 def _accepts(graph: BondGraph, drawing: Drawing, carbon: int, ring: set[int]) -> bool:
-    return any(
-        drawing.orders[link.bond] == 2
-        and graph.elements[link.atom] in ACCEPTORS
-        and not _in_aromatic_ring(graph, drawing, carbon, link.atom, ring)
-        for link in graph.links[carbon]
-    )
+    """Tell whether a carbon has C=X, or C=C-C=X, outside aromatic rings."""
+    for link in graph.links[carbon]:
+        if drawing.orders[link.bond] != 2:
+            continue
+        if _in_aromatic_ring(graph, drawing, carbon, link.atom, ring):
+            continue
+        if graph.elements[link.atom] in ACCEPTORS:
+            return True
+        beyond = [k for k in graph.neighbours(link.atom) if k != carbon]
+        if graph.elements[link.atom] == "C" and any(
+            graph.elements[k] in ("C", "N") and _has_outer_double_bond(graph, drawing, k)
+            for k in beyond
+        ):
+            return True
+    return False
 
 
 def _in_aromatic_ring(

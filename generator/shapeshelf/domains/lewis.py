@@ -40,7 +40,9 @@ def count_electrons(molecule: Molecule) -> LewisCount:
     apart = _pairs_apart(graph, drawing, multiplicity)
     in_pi = pairs_in_pi(graph, drawing)
     atoms = tuple(
-        _lewis_atom([d.free[k] for d in drawings[k]], drawing.charges[k], k in in_pi, k in apart)
+        _lewis_atom(
+            [d.free[k] for d in drawings[k]], drawing.charges[k], in_pi.get(k, ""), k in apart
+        )
         for k in range(len(molecule.atoms))
     )
     orders = _mean_orders(molecule, graph, drawing, systems)
@@ -67,7 +69,7 @@ def _drawings_at(drawing: Drawing, systems: list[Resonance]) -> list[tuple[Drawi
     return drawings
 
 
-def _lewis_atom(free: list[int], charge: int, in_pi: bool, apart: bool) -> LewisAtom:
+def _lewis_atom(free: list[int], charge: int, rule: str, apart: bool) -> LewisAtom:
     """C7 and C8."""
     if apart:
         return LewisAtom(free[0] // 2 - 1, 2 + free[0] % 2, charge)
@@ -78,8 +80,9 @@ def _lewis_atom(free: list[int], charge: int, in_pi: bool, apart: bool) -> Lewis
         max(pairs),
         max(singles),
         charge,
-        delocalised_pairs=max(moving, int(in_pi)),
+        delocalised_pairs=max(moving, int(bool(rule))),
         delocalised_singles=max(singles) - min(singles),
+        delocalised_by="D1" if moving else rule,
     )
 
 

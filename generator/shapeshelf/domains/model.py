@@ -17,6 +17,8 @@ class LewisAtom:
     """Of ``lone_pairs``, those that lie in a pi system and are no domain in the plane."""
     delocalised_singles: int = 0
     """Of ``single_electrons``, those that another drawing of equal standing has elsewhere."""
+    delocalised_by: str = ""
+    """The rule that put the pairs in the pi system, ``D1`` to ``D6``; empty where none are."""
 
 
 @dataclass(frozen=True, slots=True)

@@ -13,6 +13,16 @@ from shapeshelf.structure.molecule import Molecule
 
 NUMBERS = ("no", "one", "two", "three", "four", "five", "six", "seven", "eight", "nine")
 
+WHY_IN_PI = {
+    "D1": "another drawing of equal standing has a bond there",
+    "D2": "it completes the 4n + 2 electrons of a ring",
+    "D3": "a neighbouring carbon is doubly bonded to a more electronegative atom",
+    "D4": "a neighbouring nitrogen is doubly bonded to oxygen or nitrogen",
+    "D5": "a neighbour lacks a pair",
+    "D6": "a neighbouring oxygen has a single electron",
+}
+"""Reasons by rule of domains/delocalisation.py."""
+
 
 def trace_main_group(
     molecule: Molecule,
@@ -91,12 +101,14 @@ def _counted(molecule: Molecule, atom: int, count: LewisAtom) -> TraceStep:
 def _delocalised(count: LewisAtom) -> list[TraceStep]:
     steps = []
     if count.delocalised_pairs:
-        number = plural(count.delocalised_pairs, "lone pair")
-        steps.append(
-            TraceStep("D", f"{_capital(number)} in the pi system: no domain in the plane.")
-        )
+        number = _capital(plural(count.delocalised_pairs, "lone pair"))
+        verb = "lies" if count.delocalised_pairs == 1 else "lie"
+        why = WHY_IN_PI[count.delocalised_by]
+        text = f"{number} {verb} in the pi system, no domain in the plane: {why}."
+        steps.append(TraceStep(count.delocalised_by, text))
     if count.delocalised_singles:
-        steps.append(TraceStep("D", "The single electron is spread over the pi system: no domain."))
+        text = "The single electron is spread over the pi system, no domain of its own."
+        steps.append(TraceStep("D1", text))
     return steps
 
 
