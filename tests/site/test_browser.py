@@ -83,7 +83,7 @@ def test_the_field_is_a_combobox_worked_by_keyboard(visit: Visit) -> None:
     field_ = page.get_by_role("combobox", name="Find a compound or a shape")
     assert field_.get_attribute("aria-expanded") == "false"
     page.keyboard.press("/")
-    page.keyboard.type("e")
+    page.keyboard.type("t")
     page.locator("#find-answers [role=option]").first.wait_for()
     assert field_.get_attribute("aria-expanded") == "true"
     first = field_.get_attribute("aria-activedescendant")
@@ -144,7 +144,7 @@ def test_the_chosen_face_is_kept(visit: Visit) -> None:
         ("F4S", ["F4S1/null"]),
         ("SF₄", ["F4S1/null"]),
         ("sf4", ["F4S1/null"]),
-        ("NO3-", ["N1O3/-1"]),
+        ("NO3-", ["N1O1/-3", "N1O3/-1"]),
         ("[NO3]−", ["N1O3/-1"]),
         ("SO₄²⁻", ["O4S1/-2"]),
         ("SO4 2-", ["O4S1/-2"]),
@@ -153,7 +153,7 @@ def test_the_chosen_face_is_kept(visit: Visit) -> None:
         ("(CH3)3SiN3", ["C3H9N3Si1/null"]),
         ("[Co(NH3)6]3+", ["Co1H18N6/3"]),
         ("no2", ["N1O2/null", "No2/null"]),
-        ("water", []),
+        ("benzene", []),
         ("see-saw", []),
     ],
 )
