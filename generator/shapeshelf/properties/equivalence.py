@@ -21,8 +21,9 @@ from shapeshelf.geometry.model import Symmetry
 from shapeshelf.structure.molecule import Molecule
 
 FREE_TURNING_ORDER = 1.2
-"""Highest averaged bond order about which rotation at room temperature is fast; the amide C-N
-bond (above) turns slowly (common practice, no source)."""
+"""Highest averaged bond order about which rotation at room temperature is fast (common practice,
+no source)."""
+AMIDE_ACCEPTORS = frozenset({"O", "S", "Se", "N"})
 
 
 def alike_sets(
@@ -67,15 +68,37 @@ def _join_turning_ligands(
     lewis: LewisCount,
     parents: list[int],
 ) -> None:
-    orders = {
+    stiff = {
+        other
+        for other, order in _orders(molecule, lewis, atom).items()
+        if order > FREE_TURNING_ORDER or _is_amide(molecule, lewis, atom, other)
+    }
+    for first, last in combinations(neighbours[atom], 2):
+        if colours[first] == colours[last] and stiff <= {first, last}:
+            _join(parents, first, last)
+
+
+def _orders(molecule: Molecule, lewis: LewisCount, atom: int) -> dict[int, float]:
+    """Return the averaged order of each bond of ``atom``, by the neighbour."""
+    return {
         bond.end if bond.begin == atom else bond.begin: order
         for bond, order in zip(molecule.bonds, lewis.bond_orders, strict=True)
         if atom in (bond.begin, bond.end)
     }
-    for first, last in combinations(neighbours[atom], 2):
-        others = [order for other, order in orders.items() if other not in (first, last)]
-        if colours[first] == colours[last] and max(others, default=0.0) <= FREE_TURNING_ORDER:
-            _join(parents, first, last)
+
+
+def _is_amide(molecule: Molecule, lewis: LewisCount, donor: int, carbon: int) -> bool:
+    """Tell whether a nitrogen gives its pair to a carbon that is doubly bound to O, S or N."""
+    return (
+        molecule.atoms[donor].element == "N"
+        and molecule.atoms[carbon].element == "C"
+        and lewis.atoms[donor].delocalised_pairs > 0
+        and any(
+            order > FREE_TURNING_ORDER and molecule.atoms[other].element in AMIDE_ACCEPTORS
+            for other, order in _orders(molecule, lewis, carbon).items()
+            if other != donor
+        )
+    )
 
 
 def _carry_along(

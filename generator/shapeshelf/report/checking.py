@@ -28,10 +28,16 @@ def report_on_catalogue(root: Path) -> tuple[Catalogue, tuple[CompoundReport, ..
         if isinstance(found, CompoundReport):
             reports.append(found)
         else:
-            problems += found
+            problems += _new(found, problems)
     if problems:
         raise CatalogueError(tuple(problems))
     return catalogue, tuple(reports)
+
+
+def _new(found: list[Problem], known: list[Problem]) -> list[Problem]:
+    """Leave out what the catalogue room has said of the same field already."""
+    said = {(problem.file, problem.line, problem.field) for problem in known}
+    return [item for item in found if (item.file, item.line, item.field) not in said]
 
 
 def _report_or_problems(entry: Entry) -> CompoundReport | list[Problem]:
