@@ -40,12 +40,14 @@ def bench_view(report: CompoundReport) -> Svg:
 
 def bench_drawing(report: CompoundReport) -> Drawing:
     """Return the bench view as data."""
-    if len(report.molecule.atoms) > MOST_ATOMS:
-        return numbered_drawing(report)
+    many = len(report.molecule.atoms) > MOST_ATOMS
+    numbered = numbered_drawing(report) if many else None
+    if numbered:
+        return numbered
     scene = build_scene(report)
     stage = Stage(scene)
     body = _painted(stage)
-    angles = angle_marks(stage, key_angles(report))
+    angles = angle_marks(stage, () if many else key_angles(report))
     marks, height = framed([*angles.arcs, *body, *angles.labels], WIDTH)
     return Drawing(
         "bench", WIDTH, height, tuple(marks), f"{report.name}, bench view", describe(report)

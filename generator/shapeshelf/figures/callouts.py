@@ -61,7 +61,7 @@ def symmetry_axes(one: Painted, orders: dict[int, int], linear: bool) -> Drawn:
         marks.append(Stroke((_point(start), _point(end)), CHAIN, Role.AXIS))
         if axis == main:
             name = "C_{∞}" if linear and axis == 2 else f"C_{{{lying[axis]}}}"
-            lettering, box = _axis_name(start, end, name)
+            lettering, box = _axis_name(start, end, name, one.crowd)
             marks.append(lettering)
             crowd = discs_in_box(box)
     return marks, crowd
@@ -137,17 +137,32 @@ def _through(one: Painted, line: Array) -> tuple[Array, Array]:
     along = along[near] if near.any() else along
     low, high = float((along - reach).min()), float((along + reach).max())
     low, high = min(low, -_LEAST_SHARE * high), max(high, -_LEAST_SHARE * low)
+    every = (one.crowd[:, :2] - line[0]) @ way
+    low = max(low, float((every - one.crowd[:, 2]).min()))
+    high = min(high, float((every + one.crowd[:, 2]).max()))
     return line[0] + way * (low - _PAST), line[0] + way * (high + _PAST)
 
 
-def _axis_name(start: Array, end: Array, name: str) -> tuple[Lettering, tuple[float, ...]]:
-    """Beside the upper end of an upright axis, above the right end of a level one."""
+def _axis_name(start: Array, end: Array, name: str, crowd: Array) -> tuple[Lettering, Array]:
+    """Return the name at that end and on that side of an axis where it has most room."""
     width, height = text_width(name, _AXIS_SIZE), _AXIS_SIZE
-    tip = start if (start[1], -start[0]) < (end[1], -end[0]) else end
     upright = abs(start[0] - end[0]) < abs(start[1] - end[1])
-    x, y = (tip[0] + width / 2 + 4, tip[1] + 6) if upright else (tip[0] - width / 2, tip[1] - 8)
-    lettering = Lettering(float(x), float(y) + 0.32 * _AXIS_SIZE, name, _AXIS_SIZE, colour="soft")
-    return lettering, (float(x), float(y), width, height, 0.0)
+    low, high = sorted((start, end), key=lambda tip: (tip[1], -tip[0]))
+    rows = []
+    for tip, inward in ((low, 1), (high, -1)):
+        for side in (1, -1):
+            if upright:
+                rows.append(
+                    (tip[0] + side * (width / 2 + 4), tip[1] + inward * 6, width, height, 0)
+                )
+            else:
+                turned = math.copysign(1, (end - start)[0]) * (1 if tip is end else -1)
+                rows.append((tip[0] - turned * width / 2, tip[1] - side * 9, width, height, 0))
+    boxes = np.array(rows, dtype=float)
+    room = np.minimum(room_around(boxes, crowd), 2.0)
+    box = boxes[int(np.argmax(np.round(room, 2)))]
+    base = float(box[1]) + 0.32 * _AXIS_SIZE
+    return Lettering(float(box[0]), base, name, _AXIS_SIZE, colour="soft"), box
 
 
 def _note(one: Painted, front: int, behind: tuple[int, ...], text: str, crowd: Array) -> Drawn:

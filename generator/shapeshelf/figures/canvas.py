@@ -107,7 +107,7 @@ def _draw_strokes(renderer: Any, strokes: list[Stroke], flip: Affine2D) -> None:
 
 def _path(strokes: list[Stroke]) -> Path:
     points: list[Point] = []
-    codes: list[int] = []
+    codes: list[Any] = []
     for stroke in strokes:
         points += stroke.points
         step = Path.CURVE4 if stroke.curved else Path.LINETO

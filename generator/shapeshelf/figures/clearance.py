@@ -89,4 +89,4 @@ def _within(crowd: Array, points: Array, reach: float) -> Array:
     x, y, radius = crowd[:, 0], crowd[:, 1], crowd[:, 2]
     near = (x + radius > low[0]) & (x - radius < high[0])
     near &= (y + radius > low[1]) & (y - radius < high[1])
-    return crowd[near]
+    return np.asarray(crowd[near])

@@ -2,10 +2,9 @@
 
 from shapeshelf.figures.lettering import plain, point_group
 from shapeshelf.figures.numbers import degrees_text
-from shapeshelf.report.model import Basis, CentreReport, CompoundReport
+from shapeshelf.report.model import CentreReport, CompoundReport
 
 MOST_CENTRES = 6
-_BASIS_WORDS = {Basis.MEASURED: "measured", Basis.CALCULATED: "calculated", Basis.MODEL: "model"}
 
 
 def describe(report: CompoundReport) -> str:
@@ -27,9 +26,7 @@ def _centre_sentence(one: CentreReport) -> str:
     parts = [f"{one.atom_label}: {one.shape or 'no named shape'}"]
     if len(one.equivalent) > 1:
         parts[0] += f" ({len(one.equivalent)} alike)"
-    parts += [
-        f"{row.of} {degrees_text(row)} ({_BASIS_WORDS[row.degrees.basis]})" for row in one.angles
-    ]
+    parts += [f"{row.of} {degrees_text(row)} ({row.degrees.basis.value})" for row in one.angles]
     parts.append(_electrons(one))
     return ", ".join(part for part in parts if part) + "."
 

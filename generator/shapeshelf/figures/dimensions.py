@@ -37,7 +37,7 @@ NOT_TO_SCALE_DEGREES, NOT_TO_SCALE_ANGSTROM = 0.1, 0.005
 ROOM = 2.5
 _LINE = Style("soft", None, 1.0)
 _ARROW = 9.0
-_OFFSETS = (34.0, 42.0, 51.0, 60.0)
+_OFFSETS = (34.0, 42.0, 51.0, 60.0, 74.0, 90.0)
 _ARC_GAPS = (14.0, 22.0, 31.0, 41.0)
 """Radii of arcs inside a bond, beyond the ring of the centre."""
 _OUTER_GAP = 9.0

@@ -107,7 +107,7 @@ def _orientations() -> tuple[Array, Array]:
 
 def _about(axis: int) -> Array:
     order = np.roll(np.arange(3), axis + 1)
-    return _TURN_45[np.ix_(order, order)]
+    return np.asarray(_TURN_45[np.ix_(order, order)])
 
 
 def _worth(scene: Scene, rows: list[AngleRow], linear: bool, fronts: Array) -> Array:

@@ -4,7 +4,14 @@ import math
 
 from shapeshelf.domains.model import ResonanceForm
 from shapeshelf.figures.canvas import render, text_width
-from shapeshelf.figures.flat import Flat, bond_directions, free_directions, lay_flat
+from shapeshelf.figures.flat import (
+    Flat,
+    bond_directions,
+    crowded,
+    free_directions,
+    lay_flat,
+    letter_reach,
+)
 from shapeshelf.figures.framing import MARGIN, extent, framed, shifted
 from shapeshelf.figures.lettering import charge_script, plain
 from shapeshelf.figures.model import Drawing, Lettering, Mark, Point, Role, Stroke, Style, Svg
@@ -20,17 +27,24 @@ _PAIR_OUT, _PAIR_APART = 19.0, 4.2
 _CHARGE_OUT, _CHARGE_SIZE = 23.0, 16.0
 _ARROW, _GAP, _ROW_WIDTH = 52.0, 16.0, 760.0
 _CROWDED = 5.2
+_HALF_LETTER = 12.0
+_ENOUGH_ROOM, _FARTHER = math.radians(52), 12.0
 _UP_RIGHT = -math.pi / 4
 
 
-def lewis_structure(report: CompoundReport) -> Svg:
-    """Return the Lewis structure, its resonance forms side by side where there are several."""
-    return render(lewis_drawing(report))
+def lewis_structure(report: CompoundReport) -> Svg | None:
+    """Return the Lewis structure, resonance forms side by side; ``None`` where it cannot be
+    drawn flat without atoms on one another."""
+    drawing = lewis_drawing(report)
+    return render(drawing) if drawing else None
 
 
-def lewis_drawing(report: CompoundReport) -> Drawing:
+def lewis_drawing(report: CompoundReport) -> Drawing | None:
     """Return the Lewis structure as data."""
-    flat = lay_flat(report.molecule, _BOND * _stretch(report.molecule))
+    bond = _BOND * _stretch(report.molecule)
+    flat = lay_flat(report.molecule, bond)
+    if crowded(flat, bond):
+        return None
     forms = report.lewis.forms[:MOST_FORMS]
     marks = _in_rows([_form(report, flat, form) for form in forms])
     marks, height = framed(marks)
@@ -62,7 +76,8 @@ def _form(report: CompoundReport, flat: Flat, form: ResonanceForm) -> list[Mark]
     marks: list[Mark] = []
     for bond, order in zip(report.molecule.bonds, form.bond_orders, strict=True):
         if {bond.begin, bond.end} <= flat.shown:
-            reach = [_letter_reach(flat, atom) for atom in (bond.begin, bond.end)]
+            ends = ((bond.begin, bond.end), (bond.end, bond.begin))
+            reach = [letter_reach(flat, *pair, _HALF_LETTER, _SYMBOL) for pair in ends]
             segment = trimmed(flat.at(bond.begin), flat.at(bond.end), *reach)
             marks += lines(segment, order, bond.dative) if segment else []
     for atom in sorted(flat.shown):
@@ -70,17 +85,11 @@ def _form(report: CompoundReport, flat: Flat, form: ResonanceForm) -> list[Mark]
     return marks
 
 
-def _letter_reach(flat: Flat, atom: int) -> float:
-    if atom not in flat.lettered:
-        return 0.0
-    return 12.5 if len(flat.molecule.atoms[atom].element) == 1 else 16.5
-
-
 def _atom(report: CompoundReport, flat: Flat, form: ResonanceForm, atom: int) -> list[Mark]:
     marks: list[Mark] = []
     x, y = flat.at(atom)
     if atom in flat.lettered:
-        symbol = report.molecule.atoms[atom].element
+        symbol = flat.letters[atom]
         marks.append(Lettering(x, y + 0.36 * _SYMBOL, symbol, _SYMBOL, Role.SYMBOL, bold=True))
     pairs, singles = _electrons(report, form, atom)
     taken = bond_directions(flat, atom)
@@ -90,8 +99,9 @@ def _atom(report: CompoundReport, flat: Flat, form: ResonanceForm, atom: int) ->
         marks += _dots((x, y), way, 2 if index < pairs else 1, out)
     charge = form.formal_charges[atom]
     if charge:
-        way = _charge_direction([*taken, *ways])
-        marks += _charge((x + _CHARGE_OUT * math.cos(way), y + _CHARGE_OUT * math.sin(way)), charge)
+        way, room = _charge_direction([*taken, *ways])
+        out = _CHARGE_OUT + _wider(flat, atom) + (_FARTHER if room < _ENOUGH_ROOM else 0.0)
+        marks += _charge((x + out * math.cos(way), y + out * math.sin(way)), charge)
     return marks
 
 
@@ -112,7 +122,7 @@ def _stretch(molecule: Molecule) -> float:
 
 
 def _wider(flat: Flat, atom: int) -> float:
-    return 4.5 if len(flat.molecule.atoms[atom].element) > 1 else 0.0
+    return max(0.0, text_width(flat.letters[atom], _SYMBOL, True) / 2 - 8.5)
 
 
 def _dots(middle: Point, way: float, count: int, out: float) -> list[Mark]:
@@ -130,17 +140,18 @@ def _dots(middle: Point, way: float, count: int, out: float) -> list[Mark]:
     ]
 
 
-def _charge_direction(taken: list[float]) -> float:
-    """Return the free direction nearest to the upper right."""
+def _charge_direction(taken: list[float]) -> tuple[float, float]:
+    """Return the free direction nearest to the upper right, and the angle free around it."""
 
     def clearance(way: float) -> float:
         return min((abs(math.remainder(way - other, 2 * math.pi)) for other in taken), default=9)
 
-    candidates = [_UP_RIGHT + math.pi / 8 * step for step in range(16)]
+    candidates = [_UP_RIGHT + math.pi / 24 * step for step in range(48)]
     best = max(clearance(way) for way in candidates)
-    enough = min(best, math.radians(38))
+    enough = min(best, _ENOUGH_ROOM)
     free = [way for way in candidates if clearance(way) >= enough - 1e-6]
-    return min(free, key=lambda way: abs(math.remainder(way - _UP_RIGHT, 2 * math.pi)))
+    way = min(free, key=lambda way: abs(math.remainder(way - _UP_RIGHT, 2 * math.pi)))
+    return way, best
 
 
 def _charge(middle: Point, charge: int) -> list[Mark]:

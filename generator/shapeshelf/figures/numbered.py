@@ -2,31 +2,47 @@
 
 import math
 
+import numpy as np
+from numpy.typing import NDArray
+
 from shapeshelf.figures.canvas import text_width
+from shapeshelf.figures.clearance import EMPTY, discs_along, discs_in_box, room_around
 from shapeshelf.figures.describing import describe
-from shapeshelf.figures.flat import Flat, bond_directions, free_directions, lay_flat
+from shapeshelf.figures.flat import (
+    Flat,
+    bond_directions,
+    crowded,
+    free_directions,
+    lay_flat,
+    letter_reach,
+)
 from shapeshelf.figures.framing import MARGIN, extent, framed
 from shapeshelf.figures.lettering import charge_script
-from shapeshelf.figures.model import Drawing, Lettering, Mark, Point, Role, Style
-from shapeshelf.figures.outlines import ring
+from shapeshelf.figures.model import Drawing, Lettering, Mark, Role, Style
+from shapeshelf.figures.outlines import pill
 from shapeshelf.figures.palette import element_colour
 from shapeshelf.figures.stereo import stereo_bonds
 from shapeshelf.figures.sticks import Segment, lines, trimmed, wedge_or_hash
 from shapeshelf.report.model import CompoundReport
 
+Array = NDArray[np.float64]
+
 _BOND = 46.0
 _SYMBOL, _NUMBER = 17.0, 12.0
-_RING, _RING_WIDE = 12.0, 14.0
-_NUMBER_OUT = 14.0
+_RING = 12.0
+_ENOUGH_ROOM = 3.0
 _FEWEST_LEFT_OUT = 10
 _BOND_WIDTH = 2.4
 
 
-def numbered_drawing(report: CompoundReport) -> Drawing:
-    """Return every heavy atom with its label, ``C1``, ``N2``, as tables and cards name it."""
+def numbered_drawing(report: CompoundReport) -> Drawing | None:
+    """Return every heavy atom with its label, ``C1``, ``N2``, as tables name it; ``None`` where
+    atoms would stand on one another."""
     flat = lay_flat(report.molecule, _BOND, _FEWEST_LEFT_OUT)
-    marks = [*_bonds(report, flat), *_atoms(report, flat)]
-    marks, height = framed(marks)
+    if crowded(flat, _BOND):
+        return None
+    body = [*_bonds(report, flat), *_symbols(report, flat)]
+    marks, height = framed([*body, *_numbers(report, flat)])
     width = math.ceil(extent(marks)[2] + MARGIN)
     title = f"{report.name}, numbered drawing"
     return Drawing("bench", width, height, tuple(marks), title, describe(report))
@@ -50,7 +66,8 @@ def _bonds(report: CompoundReport, flat: Flat) -> list[Mark]:
             continue
         stereo = marked.get(frozenset((bond.begin, bond.end)))
         begin, end = (stereo.narrow, stereo.wide) if stereo else (bond.begin, bond.end)
-        segment = trimmed(flat.at(begin), flat.at(end), *(_reach(flat, k) for k in (begin, end)))
+        reach = (_reach(flat, begin, end), _reach(flat, end, begin))
+        segment = trimmed(flat.at(begin), flat.at(end), *reach)
         if segment is None:
             continue
         if stereo:
@@ -60,44 +77,65 @@ def _bonds(report: CompoundReport, flat: Flat) -> list[Mark]:
     return marks
 
 
-def _reach(flat: Flat, atom: int) -> float:
-    if atom not in flat.lettered:
-        return 0.0
-    return _ring_radius(flat.molecule.atoms[atom].element) + 1
+def _reach(flat: Flat, atom: int, other: int) -> float:
+    if atom in flat.lettered and _pill_width(flat, atom) <= 2 * _RING:
+        return _RING + 1
+    return letter_reach(flat, atom, other, _RING + 1, _SYMBOL)
 
 
-def _ring_radius(element: str) -> float:
-    return _RING if len(element) == 1 else _RING_WIDE
+def _pill_width(flat: Flat, atom: int) -> float:
+    return max(2 * _RING, text_width(flat.letters[atom], _SYMBOL, True) + 9)
 
 
-def _atoms(report: CompoundReport, flat: Flat) -> list[Mark]:
-    labels = atom_labels(report)
+def _symbols(report: CompoundReport, flat: Flat) -> list[Mark]:
+    marks: list[Mark] = []
+    for atom in sorted(flat.lettered):
+        (x, y), letters = flat.at(atom), flat.letters[atom]
+        style = Style(element_colour(report.molecule.atoms[atom].element), "paper", 2.0)
+        marks.append(pill(x, y, _pill_width(flat, atom), 2 * _RING, style))
+        base = y + 0.36 * _SYMBOL
+        marks.append(Lettering(x, base, letters, _SYMBOL, Role.SYMBOL, bold=True))
+    return marks
+
+
+def _numbers(report: CompoundReport, flat: Flat) -> list[Mark]:
+    """Return the label of every heavy atom beside it, where it touches nothing."""
+    labels, crowd = atom_labels(report), _crowd(flat)
     marks: list[Mark] = []
     for atom in sorted(flat.shown):
-        marks += _atom(report, flat, atom, labels[atom])
+        one = report.molecule.atoms[atom]
+        if one.element == "H":
+            continue
+        text = labels[atom] + charge_script(one.formal_charge)
+        boxes = _spots(flat, atom, text)
+        room = np.minimum(room_around(boxes, crowd), _ENOUGH_ROOM)
+        box = boxes[int(np.argmax(np.round(room, 2)))]
+        crowd = np.concatenate([crowd, discs_in_box(box)])
+        base = float(box[1]) + 0.36 * _NUMBER
+        marks.append(Lettering(float(box[0]), base, text, _NUMBER, Role.LABEL, "soft"))
     return marks
 
 
-def _atom(report: CompoundReport, flat: Flat, atom: int, label: str) -> list[Mark]:
-    one = report.molecule.atoms[atom]
-    x, y = flat.at(atom)
-    marks: list[Mark] = []
-    if atom in flat.lettered:
-        radius = _ring_radius(one.element)
-        marks.append(ring(x, y, radius, Style(element_colour(one.element), "paper", 2.0)))
-        symbol = Lettering(x, y + 0.36 * _SYMBOL, one.element, _SYMBOL, Role.SYMBOL, bold=True)
-        marks.append(symbol)
-    if one.element == "H":
-        return marks
-    text = label + charge_script(one.formal_charge)
-    out = _NUMBER_OUT + (9.0 if atom in flat.lettered else 0.0)
-    marks.append(_number(flat, atom, text, out))
-    return marks
+def _crowd(flat: Flat) -> Array:
+    parts = [EMPTY]
+    for bond in flat.molecule.bonds:
+        if {bond.begin, bond.end} <= flat.shown:
+            parts.append(discs_along(flat.points[[bond.begin, bond.end]], 4.5 * min(bond.order, 2)))
+    for atom in flat.lettered:
+        parts.append(discs_in_box((*flat.at(atom), _pill_width(flat, atom), 2 * _RING + 2, 0.0)))
+    return np.concatenate(parts)
 
 
-def _number(flat: Flat, atom: int, text: str, out: float) -> Lettering:
-    (way,) = free_directions(bond_directions(flat, atom), 1)
+def _spots(flat: Flat, atom: int, text: str) -> Array:
+    """Return boxes (c, 5) around an atom, the widest gap between its bonds first."""
+    (start,) = free_directions(bond_directions(flat, atom), 1)
+    width, height = text_width(text, _NUMBER), _NUMBER * 0.95
+    half = (_pill_width(flat, atom) / 2, _RING) if atom in flat.lettered else (3.0, 3.0)
     x, y = flat.at(atom)
-    wide = (text_width(text, _NUMBER) - 8) / 2 * abs(math.cos(way))
-    spot: Point = (x + (out + wide) * math.cos(way), y + out * math.sin(way))
-    return Lettering(spot[0], spot[1] + 0.36 * _NUMBER, text, _NUMBER, Role.LABEL, "soft")
+    rows = []
+    for push in (3.0, 7.0, 12.0):
+        for step in (0, 1, -1, 2, -2, 3, -3, 4, -4, 5, -5, 6, -6, 7, -7, 8):
+            way = start + step * math.pi / 8
+            out_x, out_y = half[0] + push + width / 2, half[1] + push + height / 2
+            rows.append((x + out_x * math.cos(way), y + out_y * math.sin(way), width, height, 0.0))
+    return np.array(rows)

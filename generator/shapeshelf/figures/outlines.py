@@ -20,6 +20,17 @@ def ring(x: float, y: float, radius: float, style: Style, role: Role = Role.ATOM
     return Stroke(points, style, role, curved=True, closed=True)
 
 
+def pill(x: float, y: float, width: float, height: float, style: Style) -> Stroke:
+    """Return a lying outline with round ends about (x, y)."""
+    r, reach = height / 2, max(0.0, (width - height) / 2)
+    right = arc((x + reach, y), r, -math.pi / 2, math.pi, 2)
+    left = arc((x - reach, y), r, math.pi / 2, math.pi, 2)
+    over = _third_points(right[-1], left[0])
+    back = _third_points(left[-1], right[0])
+    points = (*right, *over, *left, *back, right[0])
+    return Stroke(points, style, Role.ATOM, curved=True, closed=True)
+
+
 def lobe(apex: Point, middle: Point, radius: float, style: Style) -> Stroke:
     """Return a lobe: tangents from ``apex`` to a circle about ``middle``; seen end on, a ring."""
     dx, dy = middle[0] - apex[0], middle[1] - apex[1]

@@ -121,7 +121,7 @@ def _turn(placed: Array, real: Array, lobe: Array) -> Array:
 
 
 def _across(line: Array) -> Array:
-    return np.eye(3)[int(np.argmin(np.round(np.abs(line), 6)))]
+    return np.asarray(np.eye(3)[int(np.argmin(np.round(np.abs(line), 6)))])
 
 
 def _frame(line: Array, side: Array) -> Array:

@@ -26,6 +26,7 @@ from shapeshelf.figures.dimensions import Ground, Placed, place_dimension
 from shapeshelf.figures.frames import auxiliary_frames, principal_frames
 from shapeshelf.figures.layout import INSET, MARGIN, Layout, lay_out
 from shapeshelf.figures.model import Drawing, Mark, Role, Stroke, Style, Svg
+from shapeshelf.figures.numbers import angstrom_text, degrees_text
 from shapeshelf.figures.scene import Scene, build_scene
 from shapeshelf.figures.title_block import title_block
 from shapeshelf.figures.view_parts import Painted, paint
@@ -47,7 +48,7 @@ class Sheet:
     layout: Layout
     placed: tuple[Placed, ...]
     left_out: tuple[str, ...]
-    """Labels of rows that found no place."""
+    """Rows that found no place in a view: the title block lists them."""
 
 
 def sheet(report: CompoundReport) -> Svg | None:
@@ -71,7 +72,7 @@ def sheet_data(report: CompoundReport) -> Sheet | None:
     marks, grounds = _furniture(report, layout, painted, linear)
     placed, left_out, grounds = _dimensions(scene, [*angles, *lengths], grounds)
     marks += _callouts(report, scene, grounds)
-    everything = _assembled(report, layout, painted, marks, placed)
+    everything = _assembled(report, layout, painted, marks, placed, left_out)
     title = f"{report.name}, drawing sheet"
     drawing = Drawing(
         "sheet", layout.width, layout.height, tuple(everything), title, describe(report)
@@ -136,7 +137,7 @@ def _dimensions(
     for row in rows:
         found = place_dimension(scene, row, grounds)
         if found is None:
-            left_out.append(row.of)
+            left_out.append(_in_words(row))
             continue
         placed.append(found)
         grounds = [
@@ -144,6 +145,11 @@ def _dimensions(
             for ground in grounds
         ]
     return placed, left_out, grounds
+
+
+def _in_words(row: AngleRow | LengthRow) -> str:
+    value = degrees_text(row) if isinstance(row, AngleRow) else angstrom_text(row.angstrom) + " Å"
+    return f"{row.of.replace('-', '–')} {value}"
 
 
 def _callouts(report: CompoundReport, scene: Scene, grounds: list[Ground]) -> list[Mark]:
@@ -166,19 +172,28 @@ def _assembled(
     painted: list[Painted],
     marks: list[Mark],
     placed: list[Placed],
+    left_out: list[str],
 ) -> list[Mark]:
     """Return all marks in drawing order: lines under atoms, lettering on top."""
     axes = [mark for mark in marks if mark.role is Role.AXIS]
     others = [mark for mark in marks if mark.role is not Role.AXIS]
     body: list[Mark] = [*axes]
-    lines = [line for one in placed for line in one.lines]
-    body += sorted(lines, key=lambda line: (line.style.stroke or "", line.curved))
+    strokes = [stroke for one in placed for stroke in one.lines]
+    strokes.sort(key=lambda stroke: (stroke.style.stroke or "", stroke.curved))
+    body += strokes
     body += [mark for one in painted for mark in one.marks]
     body += others
     body += [one.lettering for one in placed]
-    revision = hashlib.sha256(repr(body).encode()).hexdigest()[:8]
-    block = title_block(report, *layout.block, layout.scale, revision)
+    block = title_block(report, layout.block, layout.scale, _revision(report, placed), left_out)
     return [_frame(layout), *body, *block]
+
+
+def _revision(report: CompoundReport, placed: list[Placed]) -> str:
+    """Return eight letters that change where what the sheet tells changes."""
+    structure = np.round(report.symmetry.coordinates_angstrom, 3) + 0.0
+    dipole = report.dipole_debye and round(report.dipole_debye.value, 3)
+    told = (report.name, report.molecule.smiles, report.point_group, structure.tolist(), dipole)
+    return hashlib.sha256(repr((told, [one.text for one in placed])).encode()).hexdigest()[:8]
 
 
 def _frame(layout: Layout) -> Stroke:

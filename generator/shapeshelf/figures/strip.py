@@ -1,8 +1,8 @@
 """The deviation strip: for each kind of angle a degree scale with every value it has.
 
 Marks differ by shape: a bar for the ideal, a diamond for the model, a triangle for the
-calculated and a filled square for the measured value; a line shows ±. All scales have the
-same degrees to the pixel, so deviations compare from line to line.
+calculated, a ring for the supplied and a filled square for the measured value; a line shows ±.
+All scales have the same degrees to the pixel, so deviations compare from line to line.
 """
 
 import math
@@ -10,6 +10,7 @@ import math
 from shapeshelf.figures.canvas import render, text_width
 from shapeshelf.figures.model import Drawing, Lettering, Mark, Role, Stroke, Style, Svg
 from shapeshelf.figures.numbers import degrees_text, plus_minus_text
+from shapeshelf.figures.outlines import ring
 from shapeshelf.report.model import AngleRow, Basis, CompoundReport
 
 WIDTH = 520.0
@@ -20,7 +21,7 @@ _LABEL_SIZE, _TICK_SIZE = 15.0, 12.5
 _SMALLEST_SPAN_DEGREES = 12.0
 _SAME_DEGREES = 0.05
 _STEPS = (1.0, 2.0, 5.0, 10.0, 20.0, 30.0)
-_KINDS = ("ideal", "model", "calculated", "measured")
+_KINDS = ("ideal", "model", "supplied", "calculated", "measured")
 
 
 def strip(report: CompoundReport) -> Svg | None:
@@ -69,6 +70,7 @@ def _value(row: AngleRow, kind: str) -> float | None:
         "model": row.degrees.model,
         "calculated": row.degrees.calculated,
         "measured": row.degrees.measured,
+        "supplied": row.degrees.supplied,
     }[kind]
 
 
@@ -79,6 +81,7 @@ def _uncertainty(row: AngleRow, kind: str) -> float:
         "model": value.model_uncertainty,
         "calculated": value.calculated_uncertainty,
         "measured": value.measured_uncertainty,
+        "supplied": None,
     }[kind] or 0.0
 
 
@@ -105,11 +108,10 @@ def _row_marks(name: str, row: AngleRow, top: float, span: float) -> list[Mark]:
         return (_LEFT + _RIGHT) / 2 + (degrees - middle) * scale
 
     best = degrees_text(row) + plus_minus_text(row.degrees.uncertainty)
-    words = {Basis.MODEL: "model", Basis.CALCULATED: "calculated", Basis.MEASURED: "measured"}
     marks: list[Mark] = [
         Lettering(_LEFT, top + 14, name, _LABEL_SIZE, anchor="start", bold=True),
         Lettering(
-            _RIGHT, top + 14, f"{best}  {words[row.degrees.basis]}", _LABEL_SIZE, anchor="end"
+            _RIGHT, top + 14, f"{best}  {row.degrees.basis.value}", _LABEL_SIZE, anchor="end"
         ),
         Stroke(((_LEFT, y), (min(_RIGHT, at(180.0)), y)), Style("line", None, 1.0), Role.AXIS),
     ]
@@ -154,6 +156,8 @@ def _symbol(kind: str, x: float, y: float) -> Stroke:
     if kind == "model":
         points = ((x, y - 6), (x + 6, y), (x, y + 6), (x - 6, y))
         return Stroke(points, Style("blue", "paper", 1.8), Role.DATA, closed=True)
+    if kind == "supplied":
+        return ring(x, y, 5.0, Style("green", "paper", 1.8), Role.DATA)
     if kind == "calculated":
         triangle = ((x, y - 11), (x + 6, y - 1), (x - 6, y - 1))
         return Stroke(triangle, Style("purple", "paper", 1.8), Role.DATA, closed=True)

@@ -15,9 +15,15 @@ _SYMBOL_WIDTH = 70.0
 
 
 def title_block(
-    report: CompoundReport, x: float, y: float, scale: float, revision: str
+    report: CompoundReport,
+    corner: tuple[float, float],
+    scale: float,
+    revision: str,
+    not_drawn: list[str],
 ) -> list[Mark]:
-    """Return the block with its upper left corner at (x, y)."""
+    """Return the block with its upper left corner at ``corner``; ``not_drawn`` are the values
+    that no view shows."""
+    x, y = corner
     rows = [
         ("shape", _shape(report)),
         ("point group", f"{point_group(report.point_group)}  {report.point_group_basis.value}"),
@@ -25,12 +31,16 @@ def title_block(
         ("method", report.structure.method),
         ("id · revision", " · ".join(part for part in (report.id, revision) if part)),
     ]
+    if not_drawn:
+        rows[3] = ("not in a view", ", ".join(not_drawn))
     marks: list[Mark] = [_box(x, y, BLOCK_WIDTH, BLOCK_HEIGHT, _THICK)]
     marks += _head(report, x, y)
     height = (BLOCK_HEIGHT - _HEAD - _FOOT) / len(rows)
     for index, (label, text) in enumerate(rows):
         marks += _row(label, text, x, y + _HEAD + index * height, height)
-    return [*marks, *_foot(x, y + BLOCK_HEIGHT - _FOOT, scale)]
+    from_model = any(row.angstrom.basis is Basis.MODEL for row in report.lengths)
+    unit = "lengths in Å, ≈ from model" if from_model else "lengths in Å"
+    return [*marks, *_foot(x, y + BLOCK_HEIGHT - _FOOT, scale, unit)]
 
 
 def fitted(text: str, room: float, size: float, smallest: float, bold: bool = False) -> Lettering:
@@ -65,7 +75,7 @@ def _row(label: str, text: str, x: float, y: float, height: float) -> list[Mark]
     ]
 
 
-def _foot(x: float, y: float, scale: float) -> list[Mark]:
+def _foot(x: float, y: float, scale: float, unit: str) -> list[Mark]:
     """The scale bar and the sign for first-angle projection."""
     split = x + BLOCK_WIDTH - _SYMBOL_WIDTH
     left, level = x + _PAD + 4, y + 30
@@ -74,20 +84,11 @@ def _foot(x: float, y: float, scale: float) -> list[Mark]:
         Stroke(((split, y), (split, y + _FOOT)), _RULE, Role.FRAME),
         Stroke(((left, level), (left + scale, level)), Style("ink", None, 2.0), Role.FRAME),
         Lettering(left + scale / 2, level - 8, "1 Å", _SMALL),
-        Lettering(
-            left + scale + 16,
-            level + 4,
-            "lengths in Å, ≈ model",
-            _SMALL,
-            Role.LABEL,
-            "soft",
-            "start",
-        ),
+        Lettering(left + scale + 16, level + 4, unit, _SMALL, Role.LABEL, "soft", "start"),
     ]
+    bar = Style("ink", None, 2.0)
     for end in (left, left + scale):
-        marks.append(
-            Stroke(((end, level - 5), (end, level + 5)), Style("ink", None, 2.0), Role.FRAME)
-        )
+        marks.append(Stroke(((end, level - 5), (end, level + 5)), bar, Role.FRAME))
     return [*marks, *_first_angle_sign(split + 8, y + _FOOT / 2)]
 
 

@@ -93,13 +93,10 @@ def _hiding(scene: Scene, view: View, radii: Array) -> dict[int, int]:
 
 
 def _covered(view: View, hidden: dict[int, int]) -> tuple[tuple[int, tuple[int, ...]], ...]:
-    fronts = sorted(set(hidden.values()))
+    nearest_first = sorted(hidden, key=lambda atom: -float(view.depth[atom]))
     return tuple(
-        (
-            front,
-            tuple(sorted((a for a in hidden if hidden[a] == front), key=lambda a: -view.depth[a])),
-        )
-        for front in fronts
+        (front, tuple(atom for atom in nearest_first if hidden[atom] == front))
+        for front in sorted(set(hidden.values()))
     )
 
 
