@@ -2,6 +2,7 @@
 
 import csv
 import random
+from functools import cache
 from pathlib import Path
 
 import chemicals
@@ -17,9 +18,10 @@ SEED = 20240501
 SAMPLE = 300
 
 
+@cache
 def rows() -> list[list[str]]:
     with TABLE.open(encoding="utf-8", newline="") as file:
-        table = [row for row in csv.reader(file, delimiter="\t", quoting=csv.QUOTE_NONE)]
+        table = list(csv.reader(file, delimiter="\t", quoting=csv.QUOTE_NONE))
     return random.Random(SEED).sample(table, SAMPLE)
 
 
@@ -47,9 +49,15 @@ def test_damaged_structures_never_crash(seed: int) -> None:
         place = chance.randrange(len(text))
         text[place] = chance.choice("CNOPSFI[]()=#$+-@/\\.:%123456789*HclnosrBe~>< \u00e9")
     damaged = "".join(text)
-    try:
-        molecule = read_smiles(damaged)
-    except StructureError as error:
-        assert "\n" not in str(error)
+    outcome = smiles_or_reason(damaged)
+    if outcome.startswith("refused: "):
+        assert "\n" not in outcome
     else:
-        assert read_smiles(molecule.smiles).smiles == molecule.smiles
+        assert read_smiles(outcome).smiles == outcome
+
+
+def smiles_or_reason(text: str) -> str:
+    try:
+        return read_smiles(text).smiles
+    except StructureError as error:
+        return f"refused: {error}"

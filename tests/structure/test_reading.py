@@ -52,6 +52,7 @@ REFUSED = [
     ("[O-3]", "9 electrons around it"),
     ("[Na-9]", "more electrons than it can hold"),
     ("[H][H][H]", "hydrogen takes one single bond"),
+    ("[H]B1([H])[H]B([H])([H])[H]1", "hydrogen takes one single bond"),
     ("C->[Fe]", "a lone pair that it does not have"),
     ("c1cccc1", "no arrangement of double bonds"),
     ("C" * 400, "1202 atoms; at most 1000"),

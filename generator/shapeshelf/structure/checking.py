@@ -53,7 +53,9 @@ def check_electrons(given: str, drawing: Drawing) -> None:
 
     Raises StructureError.
     """
-    for atom, element in enumerate(drawing.elements):
+    # Hydrogens first: a bridging one is the cause where its neighbours have too many bonds.
+    order = sorted(enumerate(drawing.elements), key=lambda item: item[1] != "H")
+    for atom, element in order:
         reason = _electron_problem(drawing, atom, element)
         if reason:
             raise StructureError(given, f"atom {atom} ({element}) {reason}")

@@ -26,6 +26,8 @@ from shapeshelf.structure.molecule import Molecule
 Coordinates = npt.NDArray[np.float64]
 
 MOST_STEPS = 2000
+MOST_TRIES = 30
+"""Starts for one conformer before the next way is tried."""
 PLACEHOLDER = 74
 MOST_NEIGHBOURS = 4
 """RDKit's own distances hold for ordinary centres only."""
@@ -82,9 +84,10 @@ def _by_preferences(molecule: Molecule, count: int, seed: int) -> list[Coordinat
         for atom in atoms
     ):
         return []
-    return _conformers(mol, count, _settings(seed, False)) or _conformers(
-        mol, count, _settings(seed, True)
-    )
+    strained = _settings(seed, True)
+    _leave_out_preferences(strained)
+    tries = (_settings(seed, False), _settings(seed, True), strained)
+    return next((found for try_ in tries if (found := _conformers(mol, count, try_))), [])
 
 
 def _by_bounds(molecule: Molecule, count: int, seed: int, bounds: Coordinates) -> list[Coordinates]:
@@ -118,7 +121,7 @@ def _settings(seed: int, random_start: bool) -> Any:
     settings.numThreads = 1
     settings.useRandomCoords = random_start
     settings.ignoreSmoothingFailures = True
-    settings.trackFailures = False
+    settings.maxIterations = MOST_TRIES
     return settings
 
 
@@ -126,7 +129,11 @@ def _use_bounds(settings: Any, bounds: Coordinates) -> None:
     smoothed = np.array(bounds, dtype=np.float64)
     DistanceGeometry.DoTriangleSmoothing(smoothed)
     settings.SetBoundsMat(smoothed)
-    # Torsion and planarity preferences belong to ordinary valences and would pull the other way.
+    _leave_out_preferences(settings)
+
+
+def _leave_out_preferences(settings: Any) -> None:
+    """Torsion and planarity preferences belong to ordinary, unstrained centres."""
     settings.useExpTorsionAnglePrefs = False
     settings.useBasicKnowledge = False
     settings.useMacrocycleTorsions = False
