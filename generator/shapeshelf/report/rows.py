@@ -2,8 +2,9 @@
 
 * E1  Two angles (or bonds) share a row where an operation of the point group carries one onto
   the other.
-* E2  So do two of the same label that the model cannot tell apart: the hydrogens of a methyl
-  group differ only by a rotation that is free.
+* E2  So do two of the same label that the domain model cannot tell apart, and that the structure
+  shows less than ``ALIKE_DEGREES`` apart: the hydrogens of a methyl group differ only by a
+  rotation that is free.
 * E3  Ligands are alike as seen from their centre where the bond graph gives them one class and
   they make the same angles there.
 * E4  Rows of one label that stay apart: the smallest angle keeps the bare label, an angle whose
@@ -22,8 +23,9 @@ from shapeshelf.geometry.vectors import angle_degrees, distance
 from shapeshelf.report.labels import angle_label
 from shapeshelf.structure.molecule import Molecule, Vector
 
-ALIKE_DEGREES = 1.0
-"""Wider than the noise of assembly, narrower than any difference a reader would act on."""
+ALIKE_DEGREES = 4.0
+"""What a conformation does to angles that rotation makes equal (common practice, no source)."""
+SAME_TO_MODEL_DEGREES = 0.5
 ALIKE_ANGSTROM = 0.01
 STRAIGHT_DEGREES = 150.0
 
@@ -38,6 +40,8 @@ class AngleSet:
     of: str
     members: tuple[Triple, ...]
     mean_degrees: float
+    domain_degrees: float
+    """What the domain model alone says; the mean where it says nothing."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -70,14 +74,14 @@ def angle_sets(
     """Return the rows of angles at ``centre``, widest first within a label."""
     neighbours = [d.neighbour for d in centre.domains if d.neighbour is not None]
     triples = [(first, centre.atom, last) for first, last in combinations(neighbours, 2)]
-    sets = [
-        AngleSet(
-            angle_label(names, centre_name, members[0][0], members[0][2]),
-            tuple(members),
-            _mean(angle_degrees(*(coordinates[atom] for atom in triple)) for triple in members),
-        )
-        for members in _orbits(triples, symmetry)
-    ]
+    alone = {frozenset((a.atoms[0], a.atoms[2])): a.model_degrees for a in centre.angles}
+    sets = []
+    for members in _orbits(triples, symmetry):
+        first, _, last = members[0]
+        mean = _mean(angle_degrees(*(coordinates[atom] for atom in one)) for one in members)
+        label = angle_label(names, centre_name, first, last)
+        domain = alone.get(frozenset((first, last)), mean)
+        sets.append(AngleSet(label, tuple(members), mean, domain))
     return tuple(_distinct_labels(_merge_alike(sets)))
 
 
@@ -140,22 +144,25 @@ def _orbits(items: Sequence[Item], symmetry: Symmetry) -> list[list[Item]]:
 def _merge_alike(sets: Iterable[AngleSet]) -> list[AngleSet]:
     merged: list[AngleSet] = []
     for row in sorted(sets, key=lambda row: (row.of, row.mean_degrees)):
-        last = merged[-1] if merged else None
-        if (
-            last is not None
-            and last.of == row.of
-            and row.mean_degrees - last.mean_degrees <= ALIKE_DEGREES
-        ):
-            merged[-1] = _joined(last, row)
+        if merged and _alike(merged[-1], row):
+            merged[-1] = _joined(merged[-1], row)
         else:
             merged.append(row)
     return merged
 
 
+def _alike(left: AngleSet, right: AngleSet) -> bool:
+    return (
+        left.of == right.of
+        and abs(left.domain_degrees - right.domain_degrees) <= SAME_TO_MODEL_DEGREES
+        and abs(left.mean_degrees - right.mean_degrees) <= ALIKE_DEGREES
+    )
+
+
 def _joined(left: AngleSet, right: AngleSet) -> AngleSet:
     members = left.members + right.members
     total = left.mean_degrees * len(left.members) + right.mean_degrees * len(right.members)
-    return AngleSet(left.of, tuple(sorted(members)), total / len(members))
+    return replace(left, members=tuple(sorted(members)), mean_degrees=total / len(members))
 
 
 def _distinct_labels(sets: Sequence[AngleSet]) -> list[AngleSet]:
