@@ -3,18 +3,22 @@
 Every domain i is a frame of two perpendicular unit vectors: u_i, its direction, and q_i, the
 direction in which the two halves of a double bond are split. The energy, in units of its own, is
 
-    E = sum over charges k, l of different domains   W_k W_l / d_kl
-      + sum over pairs of bonds i, j                 K ((R_i + R_j) / D_ij)^8
-      + sum over pairs of bonds i, j                 kappa sin^2(2 theta_ij)
+    E = - sum over charges k, l of different domains   w_k w_l ln d_kl
+        + sum over pairs of bonds i, j                 K ((R_i + R_j) / D_ij)^8
+        + sum over pairs of bonds i, j                 kappa sin^2(2 theta_ij)
 
     d_kl = |h_k - h_l|                      distance between charges on the unit sphere
     h_k  = cos(beta) u_i +- sin(beta) q_i   the two halves of a split double bond; else u_i
-    D_ij^2 = r_i^2 + r_j^2 - 2 r_i r_j cos(theta_ij)    distance between ligands
+    D_ij^2 = r_i^2 + r_j^2 - 2 r_i r_j cos(theta_ij)    distance between ligands, r bond lengths
 
 The first sum is the repulsion of domains on a sphere (R. J. Gillespie and R. S. Nyholm, Quart.
-Rev. Chem. Soc. 11 (1957) 339), the second the contact of ligands (L. S. Bartell, J. Chem. Phys.
-32 (1960) 827; R. J. Gillespie and E. A. Robinson, C. R. Chim. 8 (2005) 1631), the third the
-preference of heavy centres with a lone pair for pure p bonds. Citations recalled from memory.
+Rev. Chem. Soc. 11 (1957) 339) in its softest form, the limit of d^-n for n to 0 (L. L. Whyte,
+Am. Math. Monthly 59 (1952) 606); soft beat hard on measured angles. The second is the contact of
+ligands (L. S. Bartell, J. Chem. Phys. 32 (1960) 827; R. J. Gillespie and E. A. Robinson, C. R.
+Chim. 8 (2005) 1631). The third is no repulsion: it stands for the wish of a heavy centre with a
+lone pair to bond through p orbitals at right angles, its s electrons staying with the lone pair
+(W. Kutzelnigg, Angew. Chem. Int. Ed. 23 (1984) 272). Bent-bond halves of a double bond: L.
+Pauling, The Nature of the Chemical Bond, 3rd ed. (1960). Citations recalled from memory.
 """
 
 from dataclasses import dataclass
@@ -150,9 +154,9 @@ def _cosines(points: Array) -> Array:
 def _pair_terms(problem: Problem, cosines: Array) -> tuple[Array, Array, Array]:
     """Energy (b,), and its first and second derivatives (b, m, m) with each pair's cosine."""
     square = np.where(problem.charges != 0, np.maximum(2 - 2 * cosines, 1e-6), 1)
-    pair = problem.charges / np.sqrt(square)
-    first = pair / square
-    second = 3 * first / square
+    pair = -problem.charges * np.log(square) / 2
+    first = problem.charges / square
+    second = 2 * first / square
     count = len(problem.contact)
     inner = cosines[:, :count, :count]
     reach = np.maximum(problem.squares - problem.products * inner, 1e-6)
