@@ -35,6 +35,8 @@ from shapeshelf.reference.metal_shapes import SHAPE_NAMES
 from shapeshelf.structure.molecule import Molecule
 
 FLUXIONAL_METALS = frozenset({"TBPY-5", "PBPY-7", "OCF-7", "TPRS-7", "SAPR-8", "DD-8", "TPRS-9"})
+UNCLASSED_UNCERTAINTY_DEGREES = 3.0
+"""Of a main-group model angle whose class has no residuals (common practice, no source)."""
 METAL_UNCERTAINTY_DEGREES = 6.0
 """Of a metal's ideal angles: no residuals of ours stand behind it (common practice, no source)."""
 
@@ -191,7 +193,7 @@ def _angles(site: _Site, placement: Placement, uncertainty: float | None) -> tup
             (neighbours[i], site.atom, neighbours[j]),
             angle_degrees(placement.ideal_directions[i], placement.ideal_directions[j]),
             angle_degrees(placement.directions[i], placement.directions[j]),
-            3.0 if uncertainty is None else uncertainty,
+            UNCLASSED_UNCERTAINTY_DEGREES if uncertainty is None else uncertainty,
         )
         for i, j in combinations(range(len(neighbours)), 2)
     )
