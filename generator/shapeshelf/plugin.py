@@ -1,26 +1,28 @@
 """The one room that speaks mkdocs: it hands our pages over and keeps the last good site whole."""
 
 import logging
-import shutil
-import tempfile
 from collections.abc import Callable
 from pathlib import Path
 from typing import Any, Literal
 
+from mkdocs.commands.build import build
+from mkdocs.commands.serve import serve
+from mkdocs.config import load_config
 from mkdocs.config.base import Config
 from mkdocs.config.defaults import MkDocsConfig
-from mkdocs.exceptions import Abort
+from mkdocs.exceptions import Abort, ConfigurationError
 from mkdocs.livereload import LiveReloadServer
 from mkdocs.plugins import BasePlugin, event_priority
 from mkdocs.structure.files import File, Files, InclusionLevel
 from mkdocs.structure.pages import Page
 from mkdocs.utils import CountHandler
 
-from shapeshelf.errors import ShapeshelfError
+from shapeshelf.errors import ShapeshelfError, UsageError
 from shapeshelf.pages.assets import stylesheet
 from shapeshelf.pages.model import SiteFile, SitePage
 from shapeshelf.pages.rendering import templates_dir
 from shapeshelf.pages.site import site_files, site_pages
+from shapeshelf.pages.staging import Staging, discard, stage, swap
 from shapeshelf.report.checking import report_on_catalogue
 
 LOG = logging.getLogger("mkdocs.plugins.shapeshelf")
@@ -38,16 +40,45 @@ NAVIGATION: list[Any] = [
 ]
 
 
-class ShapeshelfOptions(Config):
+def build_site(config_file: Path, strict: bool = False) -> None:
+    """Build the site as ``mkdocs build`` does.
+
+    Raises CatalogueError with all problems of the catalogue, UsageError where the configuration
+    cannot be used, ShapeshelfError where a strict build met a warning.
+    """
+    _speak()
+    try:
+        config = load_config(str(config_file), strict=strict)
+        config.plugins.on_startup(command="build", dirty=False)
+        try:
+            build(config)
+        finally:
+            config.plugins.on_shutdown()
+    except (Abort, ConfigurationError, FileNotFoundError) as error:
+        raise _as_ours(error) from error
+
+
+def serve_site(config_file: Path, address: str = "127.0.0.1:8000") -> None:
+    """Show the site at ``HOST:PORT`` and follow changes, as ``mkdocs serve`` does.
+
+    Raises as ``build_site``, for the first build; later mistakes are reported and waited out.
+    """
+    _speak()
+    try:
+        serve(str(config_file), dev_addr=address)
+    except (Abort, ConfigurationError, FileNotFoundError) as error:
+        raise _as_ours(error) from error
+
+
+class ShapeshelfOptions(Config):  # type: ignore[no-untyped-call]
     """The plugin takes no options: what it needs stands in the catalogue."""
 
 
-class ShapeshelfPlugin(BasePlugin[ShapeshelfOptions]):
+class ShapeshelfPlugin(BasePlugin[ShapeshelfOptions]):  # type: ignore[no-untyped-call]
     """Generates every page from the catalogue in ``docs_dir``."""
 
     def __init__(self) -> None:
-        self._staging: Path | None = None
-        self._final: Path | None = None
+        self._staging: Staging | None = None
         self._serving = False
         self._in_place = False
 
@@ -59,31 +90,32 @@ class ShapeshelfPlugin(BasePlugin[ShapeshelfOptions]):
     @event_priority(LAST)
     def on_config(self, config: MkDocsConfig) -> MkDocsConfig:
         """Put our theme before the installed one, and build beside the site that stands."""
-        theme = templates_dir() / "theme"
-        if str(theme) not in config.theme.dirs:
-            config.theme.dirs.insert(1 if config.theme.custom_dir else 0, str(theme))
+        theme = str(templates_dir() / "theme")
+        if theme not in config.theme.dirs:
+            config.theme.dirs.insert(1 if config.theme.custom_dir else 0, theme)
         config.theme["shapeshelf"] = {"serving": self._serving}
         config.use_directory_urls = True
         config.nav = config.nav or NAVIGATION
         if not config.site_url:
             config.theme.static_templates.discard("sitemap.xml")
         if not self._in_place:
-            self._stage(config)
+            self._discard()
+            self._staging = stage(Path(config.site_dir))
+            config.site_dir = str(self._staging.folder)
         return config
 
     def on_files(self, files: Files, *, config: MkDocsConfig) -> Files:
         """Replace the catalogue's own files by the pages made from them."""
         try:
             catalogue, reports = report_on_catalogue(Path(config.docs_dir))
-            pages = list(site_pages(catalogue, reports, config.site_name))
-            held = list(site_files(catalogue, reports))
+            pages = [*site_pages(catalogue, reports, config.site_name)]
+            ready = [*site_files(catalogue, reports), _stylesheet(config)]
         except ShapeshelfError as error:
             raise Abort(str(error)) from error
         kept = [file for file in files if not _is_replaced(file, config)]
-        handwritten = _handwritten(config)
         generated = [_page_file(page, config) for page in pages]
-        others = [_StaticFile(file, config) for file in [*held, _stylesheet(config)]]
-        return Files([*kept, *handwritten, *generated, *others])
+        others = [_StaticFile(file, config) for file in ready]
+        return Files([*kept, *_handwritten(config), *generated, *others])
 
     def on_serve(
         self, server: LiveReloadServer, *, config: MkDocsConfig, builder: Callable[..., None]
@@ -95,14 +127,14 @@ class ShapeshelfPlugin(BasePlugin[ShapeshelfOptions]):
     @event_priority(LAST)
     def on_post_build(self, *, config: MkDocsConfig) -> None:
         """Swap the new site in, unless a strict build is about to refuse it."""
-        if self._staging is None or self._final is None:
+        if self._staging is None:
             return
+        config.site_dir = str(self._staging.final)
         if config.strict and _warnings_counted():
             self._discard()
         else:
-            swap(self._staging, self._final)
+            swap(self._staging)
             self._staging = None
-        config.site_dir = str(self._final)
 
     def on_build_error(self, *, error: Exception, **_: object) -> None:
         """Leave nothing of a build that failed."""
@@ -112,35 +144,10 @@ class ShapeshelfPlugin(BasePlugin[ShapeshelfOptions]):
         """Leave nothing of a build that was interrupted."""
         self._discard()
 
-    def _stage(self, config: MkDocsConfig) -> None:
-        self._discard()
-        final = Path(config.site_dir)
-        final.parent.mkdir(parents=True, exist_ok=True)
-        self._final = final
-        self._staging = Path(tempfile.mkdtemp(prefix=f".{final.name}-", dir=final.parent))
-        config.site_dir = str(self._staging)
-
     def _discard(self) -> None:
         if self._staging is not None:
-            shutil.rmtree(self._staging, ignore_errors=True)
+            discard(self._staging)
             self._staging = None
-
-
-def swap(staging: Path, final: Path) -> None:
-    """Put the folder ``staging`` in the place of ``final``, which is put back if that fails."""
-    staging.chmod(0o755)
-    aside = Path(tempfile.mkdtemp(prefix=f".{final.name}-old-", dir=final.parent))
-    earlier = aside / final.name
-    if final.exists():
-        final.rename(earlier)
-    try:
-        staging.rename(final)
-    except OSError:
-        if earlier.exists():
-            earlier.rename(final)
-        raise
-    finally:
-        shutil.rmtree(aside, ignore_errors=True)
 
 
 class _HtmlPage(Page):
@@ -169,7 +176,7 @@ class _HtmlPage(Page):
 class _LateHtml(str):
     """Stands where mkdocs keeps a page's HTML; the text is made when it is printed."""
 
-    __slots__ = ("_make",)
+    _make: Callable[[], str]
 
     def __new__(cls, make: Callable[[], str]) -> "_LateHtml":
         late = super().__new__(cls)
@@ -195,7 +202,7 @@ class _StaticFile(File):
         self.generated_by = "shapeshelf"
         self._make = site_file.content
 
-    @property
+    @property  # type: ignore[misc]
     def content_bytes(self) -> bytes:
         return self._make()
 
@@ -206,36 +213,26 @@ class _StaticFile(File):
 
 
 def _page_file(page: SitePage, config: MkDocsConfig) -> File:
-    """Return the mkdocs file of a page; compounds and shapes stay out of the navigation."""
-    file = File.generated(
-        config,
-        _source_name(page.address),
-        content="",
-        inclusion=InclusionLevel.NOT_IN_NAV,
-    )
+    """Return the mkdocs file of a page; what the navigation does not name stays out of it."""
+    file = _virtual_file(f"{page.address}index.md", "", config)
     _HtmlPage(page, file, config)
     return file
-
-
-def _source_name(address: str) -> str:
-    return f"{address}index.md"
 
 
 def _handwritten(config: MkDocsConfig) -> list[File]:
     folder = templates_dir() / "pages"
     return [
-        File.generated(
-            config,
-            path.relative_to(folder).as_posix(),
-            content=path.read_text("utf-8"),
-            inclusion=InclusionLevel.NOT_IN_NAV,
-        )
+        _virtual_file(path.relative_to(folder).as_posix(), path.read_text("utf-8"), config)
         for path in sorted(folder.rglob("*.md"))
     ]
 
 
+def _virtual_file(name: str, content: str, config: MkDocsConfig) -> File:
+    return File.generated(config, name, content=content, inclusion=InclusionLevel.NOT_IN_NAV)
+
+
 def _is_replaced(file: File, config: MkDocsConfig) -> bool:
-    """Tell whether a file is the catalogue's, or an asset of the theme that our face has no use for."""
+    """Tell whether a file is the catalogue's, or one of the theme's that our face leaves out."""
     if file.src_dir is not None and Path(file.src_dir) == Path(config.docs_dir):
         return True
     return file.src_uri.startswith(UNUSED_FROM_THEME)
@@ -248,20 +245,38 @@ def _stylesheet(config: MkDocsConfig) -> SiteFile:
 
 def _warnings_counted() -> bool:
     handlers = logging.getLogger("mkdocs").handlers
-    return any(
-        count
-        for handler in handlers
-        if isinstance(handler, CountHandler)
-        for _, count in handler.get_counts()
-    )
+    counters = [handler for handler in handlers if isinstance(handler, CountHandler)]
+    return any(count for counter in counters for _, count in counter.get_counts())
 
 
 def _forgiving(builder: Callable[[], None]) -> Callable[[], None]:
-    def build() -> None:
+    """Wrap a builder of the server; an exception would leave every request waiting."""
+
+    def build_or_report() -> None:
         try:
             builder()
         except Abort as error:
             for line in str(error).splitlines():
                 LOG.error(line)
 
-    return build
+    return build_or_report
+
+
+def _as_ours(error: Exception) -> ShapeshelfError:
+    """Return the error of our own tree that an error of mkdocs stands for."""
+    if isinstance(error.__cause__, ShapeshelfError):
+        return error.__cause__
+    if isinstance(error, Abort):
+        return ShapeshelfError(str(error))
+    return UsageError(" ".join(str(error).split()))
+
+
+def _speak() -> None:
+    """Let mkdocs' own messages be seen where no command of its own has arranged for that."""
+    logger = logging.getLogger("mkdocs")
+    if not logger.handlers:
+        handler = logging.StreamHandler()
+        handler.setFormatter(logging.Formatter("%(message)s"))
+        logger.addHandler(handler)
+        logger.setLevel(logging.INFO)
+        logger.propagate = False

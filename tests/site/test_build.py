@@ -9,6 +9,8 @@ import pytest
 from mkdocs.exceptions import Abort
 
 from shapeshelf import plugin
+from shapeshelf.errors import CatalogueError, UsageError
+from shapeshelf.pages.staging import Staging, swap
 
 ADDRESSES = (
     "index.html",
@@ -146,8 +148,25 @@ def test_a_swap_that_fails_puts_the_old_site_back(
 
     monkeypatch.setattr(Path, "rename", fail_for_the_new)
     with pytest.raises(OSError, match="no room"):
-        plugin.swap(staging, final)
+        swap(Staging(staging, final))
     assert (final / "index.html").read_text() == "site"
+
+
+def test_the_command_and_mkdocs_build_the_same_site(bench: Path, rebuilt) -> None:
+    """Two ways in, one site."""
+    rebuilt(bench)
+    by_mkdocs = _content(bench / "site")
+    plugin.build_site(bench / "mkdocs.yml")
+    assert _content(bench / "site") == by_mkdocs
+
+
+def test_the_command_raises_errors_of_our_own(bench: Path) -> None:
+    """So that the command line prints one line each and no traceback."""
+    with pytest.raises(UsageError, match="nowhere"):
+        plugin.build_site(bench / "nowhere.yml")
+    (bench / "compounds/water.yml").write_text("id: water\nname: Water\nstructre: O\n")
+    with pytest.raises(CatalogueError, match="structre"):
+        plugin.build_site(bench / "mkdocs.yml")
 
 
 def test_a_strict_build_with_a_warning_leaves_the_last_good_site(
