@@ -6,6 +6,9 @@ from shapeshelf.domains.analysis import analyse
 from shapeshelf.domains.model import DomainKind
 from shapeshelf.structure.reading import read_smiles
 
+ANGLE_DIGITS = 3
+"""Angles of one kind agree to the rounding of the polyhedron's tabulated vertices."""
+
 
 def centres_of(smiles, multiplicity=None):
     return analyse(read_smiles(smiles, multiplicity=multiplicity))[1]
@@ -78,9 +81,13 @@ def test_known_departure(smiles, symbol, words):
 
 
 def test_hexafluoridoxenon():
-    """XeF6 keeps its lone pair as a domain, is distorted and fluxional."""
+    """XeF6 keeps its lone pair over one face of the octahedron (C3v), and is fluxional."""
     centre = only_centre("F[Xe](F)(F)(F)(F)F")
-    assert centre.notation == "AX6E"
+    assert (centre.notation, centre.arrangement) == ("AX6E", "capped octahedral")
+    assert centre.shape == "distorted octahedral"
+    # Threefold: 15 angles of five kinds, three of each.
+    values = [round(angle.model_degrees, ANGLE_DIGITS) for angle in centre.angles]
+    assert sorted(values.count(value) for value in set(values)) in ([3, 3, 3, 6], [3, 3, 3, 3, 3])
     assert centre.fluxional
     assert "fluxional" in centre.departure.sentence
 

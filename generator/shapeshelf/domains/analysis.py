@@ -96,7 +96,11 @@ def _arrangement(
     counted: tuple[Domain, ...], placements: tuple[Placement, ...], known: KnownDeparture | None
 ) -> str:
     """Name the arrangement of what takes room: of the bonds alone where a pair is inactive."""
-    return placements[0].shape if needs_bonds_only(known) else arrangement_name(len(counted))
+    if needs_bonds_only(known):
+        return placements[0].shape
+    if known and known.polyhedron:
+        return SHAPE_NAMES[known.polyhedron]
+    return arrangement_name(len(counted))
 
 
 def _placements(

@@ -10,7 +10,9 @@ from shapeshelf.reference.departures import KnownDeparture
 
 def needs_bonds_only(departure: KnownDeparture | None) -> bool:
     """Tell whether the departure gives the neighbours their places by itself."""
-    return departure is not None and departure.symbol is not None and departure.symbol != "A-2"
+    if departure is None or departure.polyhedron is not None:
+        return False
+    return departure.symbol is not None and departure.symbol != "A-2"
 
 
 def departed(placement: Placement, departure: KnownDeparture, bonds: int) -> Placement:
@@ -18,6 +20,8 @@ def departed(placement: Placement, departure: KnownDeparture, bonds: int) -> Pla
     if departure.shape is None:
         return _pressed(placement, departure)
     named = replace(placement, shape=departure.shape, polyhedral_symbol=departure.symbol)
+    if departure.polyhedron is not None:
+        return _capped(named, departure.polyhedron)
     if departure.angle_degrees is not None:
         return replace(named, directions=opened(placement.directions, departure.angle_degrees))
     if placement.polyhedral_symbol == departure.symbol or departure.symbol is None:
@@ -41,3 +45,11 @@ def _pressed(placement: Placement, departure: KnownDeparture) -> Placement:
     if departure.angle_degrees is None:
         return placement
     return replace(placement, directions=flattened(placement.directions, departure.angle_degrees))
+
+
+def _capped(placement: Placement, polyhedron: str) -> Placement:
+    """Put the lone pair, the last domain, on the first vertex and the bonds on the others."""
+    cap, *others = directions_of(len(placement.directions), polyhedron)
+    vertices = (*others, cap)
+    sites = ("",) * len(vertices)
+    return replace(placement, ideal_directions=vertices, directions=vertices, sites=sites)

@@ -37,10 +37,11 @@ def trace_main_group(
     steps = [_counted(molecule, atom, count), *_delocalised(count)]
     steps.append(_domains(domains))
     if known:
+        steps.append(_by_rule(domains))
         steps.append(TraceStep("departure", f"{known.sentence} ({known.source})."))
+        return tuple(steps)
     steps += _placed(molecule, domains, placements)
-    if known is None:
-        steps += angle_steps(molecule, atom, domains, placements[0])
+    steps += angle_steps(molecule, atom, domains, placements[0])
     return tuple(steps)
 
 
@@ -116,6 +117,12 @@ def _domains(domains: tuple[Domain, ...]) -> TraceStep:
     kinds = [domain.kind for domain in domains]
     parts = [plural(kinds.count(kind), kind.value) for kind in DomainKind if kinds.count(kind)]
     return TraceStep("C", f"{_capital(plural(len(domains), 'domain'))}: {', '.join(parts)}.")
+
+
+def _by_rule(domains: tuple[Domain, ...]) -> TraceStep:
+    """Say what the rule alone would give where the centre is known to leave it."""
+    count = len(domains)
+    return TraceStep("P1", f"By the rule: {plural(count, 'domain')}, {arrangement_name(count)}.")
 
 
 def _placed(

@@ -31,6 +31,8 @@ class KnownDeparture:
     shape: str | None = None
     symbol: str | None = None
     angle_degrees: float | None = None
+    polyhedron: str | None = None
+    """IUPAC symbol of the polyhedron of all domains, its first vertex that of the lone pair."""
 
 
 INERT_OCTAHEDRON = KnownDeparture(
@@ -56,6 +58,9 @@ FLUXIONAL_HEXAFLUORIDE = KnownDeparture(
     "The lone pair only distorts the octahedron, through one face (C3v), and wanders quickly from "
     "face to face: the free molecule is fluxional",
     GILLESPIE,
+    "distorted octahedral",
+    "OC-6",
+    polyhedron="OCF-7",
 )
 PLANAR_SILYLAMINE = KnownDeparture(
     "Nitrogen with two or more silyl or germyl groups is planar although it has a lone pair "
