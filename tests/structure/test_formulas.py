@@ -43,7 +43,7 @@ WRITTEN = [
     ("P", "PH3"), ("O=[Xe](=O)(F)F", "XeO2F2"), ("O=S(=O)(F)F", "SO2F2"), ("OS(=O)(=O)O", "H2SO4"),
     ("O[N+](=O)[O-]", "HNO3"), ("OP(O)(O)=O", "H3PO4"), ("O=Cl(=O)F", "ClO2F"), ("Cl", "HCl"),
     ("NN", "N2H4"), ("B1NBNBN1", "B3N3H6"), ("N=[N+]=[N-]", "HN3"), ("ClSSCl", "S2Cl2"),
-    ("CCO", "C2H6O"), ("FC(F)(F)Cl", "CClF3"), ("O=C(F)F", "CF2O"), ("[O-]S(=O)(=O)[O-]", "SO42-"),
+    ("CCO", "C2H6O"), ("FC(F)(F)Cl", "CClF3"), ("O=C(F)F", "CF2O"), ("[O-]S(=O)(=O)[O-]", "SO4^2-"),
     ("F[P-](F)(F)(F)(F)F", "PF6-"), ("[NH4+]", "NH4+"), ("[SiH3]O[SiH3]", "Si2H6O"),
     ("[NH3]->[Ag+]<-[NH3]", "AgN2H6+"),
 ]  # fmt: skip

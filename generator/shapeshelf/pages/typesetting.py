@@ -35,11 +35,11 @@ def formula_text(formula: str, charge: int = 0) -> str:
 
 
 def without_charge(formula: str, charge: int) -> str:
-    """Return the formula without its charge at the end: ``SO42-`` or ``SO4-2`` as ``SO4``."""
+    """Return the formula without its charge at the end: ``SO4^2-`` or ``SO4-2`` as ``SO4``."""
     if charge == 0:
         return formula
     sign, magnitude = "+" if charge > 0 else "-", str(abs(charge))
-    endings = (magnitude + sign, sign + magnitude, sign)
+    endings = ("^" + magnitude + sign, magnitude + sign, sign + magnitude, sign)
     plain = formula.replace(MINUS, "-")
     return next((plain.removesuffix(end) for end in endings if plain.endswith(end)), plain)
 

@@ -72,10 +72,13 @@ def formula_of(atoms: tuple[Atom, ...], bonds: tuple[Bond, ...]) -> str:
 
 
 def charge_suffix(charge: int) -> str:
-    """Return ``-``, ``2-``, ``+``, ``3+``, or nothing for a neutral molecule."""
+    """Return ``-``, ``^2-``, ``+``, ``^3+``, or nothing for a neutral molecule.
+
+    The caret keeps the charge of ``SO4^2-`` apart from the count before it.
+    """
     if charge == 0:
         return ""
-    number = "" if abs(charge) == 1 else str(abs(charge))
+    number = "" if abs(charge) == 1 else f"^{abs(charge)}"
     return number + ("+" if charge > 0 else "-")
 
 
