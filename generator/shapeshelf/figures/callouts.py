@@ -23,11 +23,11 @@ Drawn = tuple[list[Mark], Array]
 CHAIN = Style("line", None, 0.9, (12.0, 3.0, 2.0, 3.0))
 _PAST = 16.0
 """Pixels a symmetry axis runs past what it divides."""
-_LEAST_SHARE = 0.6
-"""An axis reaches at least this far to its shorter side, in shares of the longer one."""
 _AXIS_SIZE, _NOTE_SIZE, _CAPTION_SIZE, _DIPOLE_SIZE = 13.0, 13.0, 12.5, 15.0
 _PIXELS_PER_DEBYE, _SHORTEST, _LONGEST = 24.0, 28.0, 74.0
 _LEAST_DEBYE = 0.005
+_ON_AN_AXIS = 6.0
+"""Cost of a level or upright leader: symmetry axes run there."""
 _NOTE_PUSHES = (14.0, 22.0, 32.0, 44.0, 58.0)
 
 
@@ -128,19 +128,13 @@ def looking_arrow(view: View, grounds: list[Ground]) -> Drawn:
 
 
 def _through(one: Painted, line: Array) -> tuple[Array, Array]:
+    """Return the ends of a line that crosses all that a view holds and a little more."""
     way = line[1] - line[0]
     way = way / np.linalg.norm(way)
     along = (one.crowd[:, :2] - line[0]) @ way
-    across = np.abs((one.crowd[:, :2] - line[0]) @ np.array([way[1], -way[0]]))
-    near = across <= one.crowd[:, 2] + 1
-    reach = one.crowd[near, 2] if near.any() else one.crowd[:, 2]
-    along = along[near] if near.any() else along
-    low, high = float((along - reach).min()), float((along + reach).max())
-    low, high = min(low, -_LEAST_SHARE * high), max(high, -_LEAST_SHARE * low)
-    every = (one.crowd[:, :2] - line[0]) @ way
-    low = max(low, float((every - one.crowd[:, 2]).min()))
-    high = min(high, float((every + one.crowd[:, 2]).max()))
-    return line[0] + way * (low - _PAST), line[0] + way * (high + _PAST)
+    low = float((along - one.crowd[:, 2]).min()) - _PAST
+    high = float((along + one.crowd[:, 2]).max()) + _PAST
+    return line[0] + way * low, line[0] + way * high
 
 
 def _axis_name(start: Array, end: Array, name: str, crowd: Array) -> tuple[Lettering, Array]:
@@ -197,7 +191,9 @@ def _note_spots(middle: Array, radius: float, text: str) -> tuple[Array, Array, 
     y = middle[1] + sine * (radius + pushes)
     flat = np.ones_like(x)
     boxes = np.column_stack([x, y, width * flat, height * flat, 0 * flat])
-    return np.column_stack([cosine, sine, pushes]), boxes, pushes - 3 * np.abs(cosine)
+    straight = np.minimum(np.abs(cosine), np.abs(sine)) < 0.1
+    costs = pushes - 3 * np.abs(cosine) + _ON_AN_AXIS * straight
+    return np.column_stack([cosine, sine, pushes]), boxes, costs
 
 
 def _noted(leader: Array, box: Array, text: str) -> list[Mark]:

@@ -16,6 +16,7 @@ from numpy.typing import NDArray
 
 from shapeshelf.figures.canvas import text_width
 from shapeshelf.figures.clearance import (
+    EMPTY,
     discs_along,
     discs_in_box,
     gaps_along,
@@ -34,6 +35,8 @@ Array = NDArray[np.float64]
 
 TEXT_SIZE = 15.0
 NOT_TO_SCALE_DEGREES, NOT_TO_SCALE_ANGSTROM = 0.1, 0.005
+_ROUNDED_DEGREES = 0.5
+"""Half of the last digit of an angle that is printed as approximate."""
 ROOM = 2.5
 _LINE = Style("soft", None, 1.0)
 _ARROW = 9.0
@@ -41,8 +44,9 @@ _OFFSETS = (34.0, 42.0, 51.0, 60.0, 74.0, 90.0)
 _ARC_GAPS = (14.0, 22.0, 31.0, 41.0)
 """Radii of arcs inside a bond, beyond the ring of the centre."""
 _OUTER_GAP = 9.0
-_FRACTIONS = (0.5, 0.4, 0.6, 0.28, 0.72)
+_FRACTIONS = (0.5, 0.4, 0.6, 0.28, 0.72, 0.16, 0.84)
 _OVER_SOMETHING, _MEETS_DIMENSION = 0.8, 12.0
+_WITHOUT_LINES = 26.0
 _USED_VIEW = 3.0
 _MOST_MEMBERS = 24
 
@@ -59,6 +63,8 @@ class Placed:
     lettering: Lettering
     crowd: Array
     """Discs (n, 3) of lines and text."""
+    letters: Array
+    """Discs (k, 3) of the text alone."""
     path: Array
     """Discs (m, 3) of the lines alone."""
 
@@ -77,18 +83,23 @@ _Offer = tuple[float, Callable[[], _Candidate]]
 
 @dataclass(frozen=True, slots=True)
 class Ground:
-    """A view and what it already holds: everything, and the lines of dimensions alone."""
+    """A view and what it already holds: everything; lettering alone, which no line may cross;
+    the lines of dimensions alone."""
 
     painted: Painted
     crowd: Array
+    letters: Array
     lines: Array
     dimensions: int = 0
 
-    def with_more(self, crowd: Array, lines: Array, dimensions: int = 0) -> "Ground":
+    def with_more(
+        self, crowd: Array, letters: Array, lines: Array, dimensions: int = 0
+    ) -> "Ground":
         """Return the ground with more on it."""
         return Ground(
             self.painted,
             np.concatenate([self.crowd, crowd]),
+            np.concatenate([self.letters, letters]),
             np.concatenate([self.lines, lines]),
             self.dimensions + dimensions,
         )
@@ -115,9 +126,10 @@ def place_dimension(
 
 
 def to_scale(scene: Scene, row: LengthRow | AngleRow, atoms: tuple[int, ...]) -> bool:
-    """Tell whether the drawn atoms show the value that is printed."""
+    """Tell whether the drawn atoms show the value that is printed, as exactly as it is printed."""
     if isinstance(row, AngleRow):
-        return abs(angle(scene.points, atoms) - row.degrees.value) <= NOT_TO_SCALE_DEGREES
+        printed = _ROUNDED_DEGREES if degrees_text(row).startswith("≈") else NOT_TO_SCALE_DEGREES
+        return abs(angle(scene.points, atoms) - row.degrees.value) <= printed
     drawn = float(np.linalg.norm(scene.points[atoms[0]] - scene.points[atoms[1]]))
     return abs(drawn - row.angstrom.value) <= NOT_TO_SCALE_ANGSTROM
 
@@ -156,6 +168,8 @@ def _settle(
     others = [index for index, atom in enumerate(one.view.shown) if atom not in atoms]
     if room_along(candidate.path, one.rings[others]) < ROOM:
         return None
+    if room_along(candidate.path, ground.letters) < 1.0:
+        return None
     costs = candidate.box_costs + np.where(
         room_around(candidate.boxes, ground.crowd) >= ROOM, 0.0, np.inf
     )
@@ -166,7 +180,7 @@ def _settle(
     cost += float(costs[pick]) + _crossing_cost(candidate.path, ground)
     lines = candidate.lines if to_scale(scene, row, atoms) else (*candidate.lines, _underline(box))
     text = degrees_text(row) if isinstance(row, AngleRow) else angstrom_text(row.angstrom)
-    line = discs_along(candidate.path, 1.0)
+    line = discs_along(candidate.path, 1.0) if len(candidate.path) else EMPTY
     return Placed(
         one.view.name,
         atoms,
@@ -175,6 +189,7 @@ def _settle(
         lines,
         _lettering(text, box),
         np.concatenate([line, discs_in_box(box)]),
+        discs_in_box(box),
         line,
     )
 
@@ -190,6 +205,7 @@ def _lengths(one: Painted, atoms: tuple[int, ...], text: str) -> Iterator[_Offer
     for rank, offset in enumerate(_offsets(one, atoms)):
         for side in (1.0, -1.0):
             yield 4.0 + 3.0 * rank, partial(_length_candidate, one, atoms, side, offset, text)
+    yield _WITHOUT_LINES, partial(_along_bond, one, atoms, text)
 
 
 def _length_candidate(
@@ -207,6 +223,20 @@ def _length_candidate(
     lines = (*(_line(*foot) for foot in feet), *_dimension_line(a, b))
     boxes, costs = _along_line(a, b, normal, text_width(text, TEXT_SIZE))
     return _Candidate(lines, path, boxes, costs)
+
+
+def _along_bond(one: Painted, atoms: tuple[int, ...], text: str) -> _Candidate:
+    """Return text beside the bond itself, for a bond that dimension lines cannot reach."""
+    start, end = one.view.points[atoms[0]], one.view.points[atoms[1]]
+    way = (end - start) / np.linalg.norm(end - start)
+    width = text_width(text, TEXT_SIZE)
+    tables = []
+    for side in (1.0, -1.0):
+        shift = side * 5.0 * np.array([way[1], -way[0]])
+        tables.append(_along_line(start + shift, end + shift, shift, width))
+        tables.append(_along_line(start + 0.4 * shift, end + 0.4 * shift, shift, width))
+    boxes, costs = (np.concatenate(parts) for parts in zip(*tables, strict=True))
+    return _Candidate((), np.empty((0, 2)), boxes, costs)
 
 
 def _offsets(one: Painted, atoms: tuple[int, ...]) -> list[float]:

@@ -34,15 +34,28 @@ def drawn_coordinates(report: CompoundReport) -> Array:
         for trio in row.members
     ]
     now = start.copy()
+    moves = [(np.array(one.matrix), list(one.permutation)) for one in report.symmetry.operations]
     for _ in range(_ROUNDS):
         residuals, slopes = _linearised(now, lengths, angles)
         if not len(residuals) or np.abs(residuals).max() < 1e-6:
             break
         hold = _HOLD * np.eye(now.size)
         system = slopes.T @ slopes + hold**2
-        step = np.linalg.solve(system, slopes.T @ residuals)
-        now = now + step.reshape(now.shape)
+        step: Array = np.asarray(np.linalg.solve(system, slopes.T @ residuals), dtype=float)
+        now = now + _kept_symmetric(step.reshape(now.shape), moves)
     return now
+
+
+def _kept_symmetric(step: Array, moves: list[tuple[Array, list[int]]]) -> Array:
+    """Return the part of a step (n, 3) that every symmetry operation leaves as it is.
+
+    Without this a planar centre whose values add up to more than 360 degrees would be pushed
+    out of its plane by rounding alone.
+    """
+    kept = np.zeros_like(step)
+    for matrix, permutation in moves:
+        kept[permutation] += step @ matrix.T
+    return kept / max(1, len(moves))
 
 
 def _linearised(

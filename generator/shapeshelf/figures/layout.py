@@ -21,7 +21,7 @@ INSET = 12.0
 MARGIN = 42.0
 """Room for dimensions around what is drawn in each view."""
 CAPTION = 17.0
-BLOCK_WIDTH, BLOCK_HEIGHT = 344.0, 200.0
+BLOCK_WIDTH, BLOCK_HEIGHT = 344.0, 244.0
 _TALLEST = 690.0
 _LARGEST_SCALE, _SMALLEST_SCALE = 92.0, 30.0
 
@@ -139,8 +139,9 @@ def _placed(
     width = min(WIDEST, max(_NARROWEST, needed))
     spare = max(0.0, width - 2 * INSET - left - right - third)
     gap = spare / (3 if third else 2)
+    indent = min(gap / 2, max(0.0, width - 2 * INSET - left - lower))
     middles = _Middles(
-        left=INSET + gap / 2 + left / 2,
+        left=INSET + indent + left / 2,
         right=INSET + left + gap * 1.5 + right / 2,
         upper=INSET + MARGIN + z.size * scale / 2,
         lower=INSET + first_row + MARGIN + y.size * scale / 2,

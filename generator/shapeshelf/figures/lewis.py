@@ -2,8 +2,12 @@
 
 import math
 
+import numpy as np
+from numpy.typing import NDArray
+
 from shapeshelf.domains.model import ResonanceForm
 from shapeshelf.figures.canvas import render, text_width
+from shapeshelf.figures.clearance import EMPTY, discs_along, discs_in_box, gaps_along
 from shapeshelf.figures.flat import (
     Flat,
     bond_directions,
@@ -12,7 +16,7 @@ from shapeshelf.figures.flat import (
     lay_flat,
     letter_reach,
 )
-from shapeshelf.figures.framing import MARGIN, extent, framed, shifted
+from shapeshelf.figures.framing import MARGIN, extent, framed, lettering_box, shifted
 from shapeshelf.figures.lettering import charge_script, plain
 from shapeshelf.figures.model import Drawing, Lettering, Mark, Point, Role, Stroke, Style, Svg
 from shapeshelf.figures.outlines import arrowhead, ring
@@ -21,6 +25,8 @@ from shapeshelf.reference.elements import ELEMENTS
 from shapeshelf.report.model import CompoundReport
 from shapeshelf.structure.molecule import Molecule
 
+Array = NDArray[np.float64]
+
 MOST_FORMS = 4
 _BOND, _SYMBOL, _DOT = 56.0, 22.0, 2.3
 _PAIR_OUT, _PAIR_APART = 19.0, 4.2
@@ -28,7 +34,7 @@ _CHARGE_OUT, _CHARGE_SIZE = 23.0, 16.0
 _ARROW, _GAP, _ROW_WIDTH = 52.0, 16.0, 760.0
 _CROWDED = 5.2
 _HALF_LETTER = 12.0
-_ENOUGH_ROOM, _FARTHER = math.radians(52), 12.0
+_CHARGE_ROOM = 2.0
 _UP_RIGHT = -math.pi / 4
 
 
@@ -82,7 +88,7 @@ def _form(report: CompoundReport, flat: Flat, form: ResonanceForm) -> list[Mark]
             marks += lines(segment, order, bond.dative) if segment else []
     for atom in sorted(flat.shown):
         marks += _atom(report, flat, form, atom)
-    return marks
+    return [*marks, *_charges(flat, form, marks)]
 
 
 def _atom(report: CompoundReport, flat: Flat, form: ResonanceForm, atom: int) -> list[Mark]:
@@ -97,11 +103,6 @@ def _atom(report: CompoundReport, flat: Flat, form: ResonanceForm, atom: int) ->
     for index, way in enumerate(ways):
         out = _PAIR_OUT + _wider(flat, atom) * abs(math.cos(way))
         marks += _dots((x, y), way, 2 if index < pairs else 1, out)
-    charge = form.formal_charges[atom]
-    if charge:
-        way, room = _charge_direction([*taken, *ways])
-        out = _CHARGE_OUT + _wider(flat, atom) + (_FARTHER if room < _ENOUGH_ROOM else 0.0)
-        marks += _charge((x + out * math.cos(way), y + out * math.sin(way)), charge)
     return marks
 
 
@@ -140,29 +141,43 @@ def _dots(middle: Point, way: float, count: int, out: float) -> list[Mark]:
     ]
 
 
-def _charge_direction(taken: list[float]) -> tuple[float, float]:
-    """Return the free direction nearest to the upper right, and the angle free around it."""
-
-    def clearance(way: float) -> float:
-        return min((abs(math.remainder(way - other, 2 * math.pi)) for other in taken), default=9)
-
-    candidates = [_UP_RIGHT + math.pi / 24 * step for step in range(48)]
-    best = max(clearance(way) for way in candidates)
-    enough = min(best, _ENOUGH_ROOM)
-    free = [way for way in candidates if clearance(way) >= enough - 1e-6]
-    way = min(free, key=lambda way: abs(math.remainder(way - _UP_RIGHT, 2 * math.pi)))
-    return way, best
+def _charges(flat: Flat, form: ResonanceForm, marks: list[Mark]) -> list[Mark]:
+    """Return formal charges in small circles, to the upper right where that has room."""
+    crowd = np.concatenate([EMPTY, *(_occupied(mark) for mark in marks)])
+    found: list[Mark] = []
+    for atom in sorted(flat.shown):
+        if form.formal_charges[atom]:
+            drawn, occupied = _charge(flat, atom, form.formal_charges[atom], crowd)
+            found += drawn
+            crowd = np.concatenate([crowd, occupied])
+    return found
 
 
-def _charge(middle: Point, charge: int) -> list[Mark]:
+def _occupied(mark: Mark) -> Array:
+    if isinstance(mark, Lettering):
+        x, y, width, height, angle = lettering_box(mark)
+        return discs_in_box((x, y, width * 0.8, height * 0.8, angle))
+    return discs_along(mark.points, max(2.0, mark.style.width / 2))
+
+
+def _charge(flat: Flat, atom: int, charge: int, crowd: Array) -> tuple[list[Mark], Array]:
     text = plain(charge_script(charge))
-    width = text_width(text, _CHARGE_SIZE, True)
-    return [
-        ring(*middle, max(8.0, width / 2 + 2.5), Style("soft", "paper", 1.0), Role.FRAME),
-        Lettering(
-            middle[0], middle[1] + 0.35 * _CHARGE_SIZE, text, _CHARGE_SIZE, Role.LABEL, bold=True
-        ),
+    radius = max(8.0, text_width(text, _CHARGE_SIZE, True) / 2 + 2.5)
+    x, y = flat.at(atom)
+    outs = _CHARGE_OUT + (radius - 8.0) + _wider(flat, atom) + np.array([0.0, 6.0, 13.0, 21.0])
+    turns = np.arange(48) * math.pi / 24
+    out, turn = (grid.ravel() for grid in np.meshgrid(outs, turns))
+    spots = np.column_stack([x + out * np.cos(turn), y + out * np.sin(turn)])
+    room = np.minimum(gaps_along(spots, crowd) - radius, _CHARGE_ROOM)
+    away = np.abs(np.remainder(turn - _UP_RIGHT + math.pi, 2 * math.pi) - math.pi)
+    best = int(np.argmin(np.round(away + 0.15 * (out - outs[0]) - 5.0 * room, 4)))
+    middle = (float(spots[best, 0]), float(spots[best, 1]))
+    base = middle[1] + 0.35 * _CHARGE_SIZE
+    marks: list[Mark] = [
+        ring(*middle, radius, Style("soft", "paper", 1.0), Role.FRAME),
+        Lettering(middle[0], base, text, _CHARGE_SIZE, Role.LABEL, bold=True),
     ]
+    return marks, np.array([[*middle, radius]])
 
 
 def _in_rows(forms: list[list[Mark]]) -> list[Mark]:

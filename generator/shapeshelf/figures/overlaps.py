@@ -30,16 +30,28 @@ class Overlap:
 def label_overlaps(drawing: Drawing) -> list[Overlap]:
     """Return every overlap of lettering with lettering, atoms, bonds or lobes.
 
-    An atom's own symbol may lie on its ring; a charge may lie in its circle.
+    A symbol lies in the ring of its atom, and what is drawn before a ring is covered by it: a
+    symbol is only struck by what is drawn after it.
     """
     letters = [mark for mark in drawing.marks if isinstance(mark, Lettering)]
-    solids = [mark for mark in drawing.marks if isinstance(mark, Stroke) and mark.role in _SOLID]
     boxes = [_corners(mark) for mark in letters]
     found = _between_letters(letters, boxes)
+    solids: list[Stroke] = []
+    for mark in reversed(drawing.marks):
+        if isinstance(mark, Stroke) and mark.role in _SOLID:
+            solids.append(mark)
+        elif isinstance(mark, Lettering) and mark.role is Role.SYMBOL:
+            found += _on_solids(mark, _inner(_corners(mark)), solids)
     for mark, box in zip(letters, boxes, strict=True):
         if mark.role is not Role.SYMBOL:
             found += _on_solids(mark, box, solids)
     return found
+
+
+def _inner(box: list[Point]) -> list[Point]:
+    """Return the middle three quarters of a symbol's box: letters are narrower than it."""
+    x, y = (sum(values) / 4 for values in zip(*box, strict=True))
+    return [(x + 0.75 * (px - x), y + 0.75 * (py - y)) for px, py in box]
 
 
 def _between_letters(letters: list[Lettering], boxes: list[list[Point]]) -> list[Overlap]:

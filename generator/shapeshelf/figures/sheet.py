@@ -98,12 +98,18 @@ def _furniture(
     orders = axis_orders(report.symmetry)
     marks: list[Mark] = []
     crowds = [_edges(layout), *(one.crowd for one in painted)]
+    letters = [EMPTY]
     for one in painted:
         for drawn, crowd in (symmetry_axes(one, orders, linear), caption(one, _caption_base(one))):
             marks += drawn
-            crowds.append(crowd)
-    everything = np.concatenate(crowds)
-    return marks, [Ground(one, everything[_near(one, everything)], EMPTY) for one in painted]
+            letters.append(crowd)
+    words = np.concatenate(letters)
+    everything = np.concatenate([*crowds, words])
+    grounds = [
+        Ground(one, everything[_near(one, everything)], words[_near(one, words)], EMPTY)
+        for one in painted
+    ]
+    return marks, grounds
 
 
 def _caption_base(one: Painted) -> float:
@@ -141,7 +147,9 @@ def _dimensions(
             continue
         placed.append(found)
         grounds = [
-            ground.with_more(found.crowd, found.path, ground.painted.view.name == found.view)
+            ground.with_more(
+                found.crowd, found.letters, found.path, ground.painted.view.name == found.view
+            )
             for ground in grounds
         ]
     return placed, left_out, grounds
@@ -158,11 +166,11 @@ def _callouts(report: CompoundReport, scene: Scene, grounds: list[Ground]) -> li
     for ground in list(grounds):
         drawn, crowd = looking_arrow(ground.painted.view, grounds)
         marks += drawn
-        grounds = [one.with_more(crowd, EMPTY) for one in grounds]
+        grounds = [one.with_more(crowd, EMPTY, EMPTY) for one in grounds]
     for index in range(len(grounds)):
         drawn, crowd = hidden_notes(scene, grounds[index])
         marks += drawn
-        grounds = [one.with_more(crowd, EMPTY) for one in grounds]
+        grounds = [one.with_more(crowd, EMPTY, EMPTY) for one in grounds]
     return [*marks, *dipole_arrow(report, grounds)]
 
 

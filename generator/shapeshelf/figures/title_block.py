@@ -9,7 +9,9 @@ from shapeshelf.report.model import Basis, CompoundReport, Value
 
 _HEAD, _FOOT = 40.0, 44.0
 _PAD, _LABEL_COLUMN = 12.0, 96.0
-_NAME_SIZE, _SMALLEST_NAME, _TEXT, _SMALL = 19.0, 13.0, 14.0, 12.0
+_NAME_SIZE, _SMALLEST_NAME = 19.0, 13.0
+_TEXT, _SMALLEST_TEXT, _SMALL = 14.0, 12.0, 12.0
+_ROOM = BLOCK_WIDTH - _LABEL_COLUMN - _PAD
 _RULE, _THICK = Style("ink", None, 0.8), Style("ink", None, 1.6)
 _SYMBOL_WIDTH = 70.0
 
@@ -27,17 +29,21 @@ def title_block(
     rows = [
         ("shape", _shape(report)),
         ("point group", f"{point_group(report.point_group)}  {report.point_group_basis.value}"),
-        ("basis", _basis(report)),
-        ("method", report.structure.method),
+        ("angles", _bases([row.degrees for one in report.centres for row in one.angles])),
+        ("lengths", _bases([row.angstrom for row in report.lengths])),
+        ("structure", report.structure.method),
         ("id · revision", " · ".join(part for part in (report.id, revision) if part)),
     ]
     if not_drawn:
-        rows[3] = ("not in a view", ", ".join(not_drawn))
+        rows.insert(4, ("not in a view", ", ".join(not_drawn)))
     marks: list[Mark] = [_box(x, y, BLOCK_WIDTH, BLOCK_HEIGHT, _THICK)]
     marks += _head(report, x, y)
-    height = (BLOCK_HEIGHT - _HEAD - _FOOT) / len(rows)
-    for index, (label, text) in enumerate(rows):
-        marks += _row(label, text, x, y + _HEAD + index * height, height)
+    total = sum(_lines(text) for _, text in rows)
+    each = (BLOCK_HEIGHT - _HEAD - _FOOT) / total
+    top = y + _HEAD
+    for label, text in rows:
+        marks += _row(label, text, x, top, each * _lines(text))
+        top += each * _lines(text)
     from_model = any(row.angstrom.basis is Basis.MODEL for row in report.lengths)
     unit = "lengths in Å, ≈ from model" if from_model else "lengths in Å"
     return [*marks, *_foot(x, y + BLOCK_HEIGHT - _FOOT, scale, unit)]
@@ -65,14 +71,32 @@ def _head(report: CompoundReport, x: float, y: float) -> list[Mark]:
     ]
 
 
+def _lines(text: str) -> int:
+    """Return how many lines a row's text takes, two at most."""
+    return 1 if text_width(text, _SMALLEST_TEXT) <= _ROOM else 2
+
+
 def _row(label: str, text: str, x: float, y: float, height: float) -> list[Mark]:
-    base = y + height / 2 + 5
-    shown = fitted(text, BLOCK_WIDTH - _LABEL_COLUMN - _PAD, _TEXT, 11.0)
-    return [
+    lines = _wrapped(text) if _lines(text) > 1 else [text]
+    step = height / len(lines)
+    marks: list[Mark] = [
         Stroke(((x, y), (x + BLOCK_WIDTH, y)), _RULE, Role.FRAME),
-        Lettering(x + _PAD, base, label, _SMALL, colour="soft", anchor="start"),
-        Lettering(x + _LABEL_COLUMN, base, shown.text, shown.size, anchor="start"),
+        Lettering(x + _PAD, y + step / 2 + 5, label, _SMALL, colour="soft", anchor="start"),
     ]
+    for index, line in enumerate(lines):
+        shown = fitted(line, _ROOM, _TEXT, _SMALLEST_TEXT)
+        base = y + (index + 0.5) * step + 5 + (1.5 - 3 * index if len(lines) > 1 else 0)
+        marks.append(Lettering(x + _LABEL_COLUMN, base, shown.text, shown.size, anchor="start"))
+    return marks
+
+
+def _wrapped(text: str) -> list[str]:
+    """Return two lines, broken at the last space that fits."""
+    words = text.split(" ")
+    count = len(words)
+    while count > 1 and text_width(" ".join(words[:count]), _SMALLEST_TEXT) > _ROOM:
+        count -= 1
+    return [" ".join(words[:count]), " ".join(words[count:])]
 
 
 def _foot(x: float, y: float, scale: float, unit: str) -> list[Mark]:
@@ -115,13 +139,6 @@ def _shape(report: CompoundReport) -> str:
     for one in report.centres:
         return "  ".join(part for part in (one.shape or "unnamed", one.polyhedral_symbol) if part)
     return report.shape or "unnamed"
-
-
-def _basis(report: CompoundReport) -> str:
-    angles = [row.degrees for one in report.centres for row in one.angles]
-    lengths = [row.angstrom for row in report.lengths]
-    parts = [("angles", angles), ("lengths", lengths)]
-    return ", ".join(f"{name} {_bases(values)}" for name, values in parts if values)
 
 
 def _bases(values: list[Value]) -> str:

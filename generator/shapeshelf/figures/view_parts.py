@@ -20,6 +20,7 @@ _LARGEST_SYMBOL = 24.0
 _BOND_WIDTH = 2.6
 _RING_WIDTH = 2.3
 _SAME_PLACE = 1.5
+_LOBES, _BONDS, _RINGS = range(3)
 _END_ON_RIM = 5.0
 """Pixels by which a lobe that points at the viewer shows around the ring of its atom."""
 _HIDDEN_DASH = (3.5, 3.0)
@@ -47,7 +48,7 @@ def paint(scene: Scene, view: View) -> Painted:
     radii = scene.radii * view.scale
     hidden = _hiding(scene, view, radii)
     marks: list[Mark] = []
-    for _, drawn in sorted(_items(scene, view, radii, hidden), key=lambda item: item[0]):
+    for _, _, drawn in sorted(_items(scene, view, radii, hidden), key=lambda item: item[:2]):
         marks += drawn
     for atom, front in hidden.items():
         if _outline_differs(view, radii, atom, front):
@@ -60,19 +61,23 @@ def paint(scene: Scene, view: View) -> Painted:
 
 def _items(
     scene: Scene, view: View, radii: Array, hidden: dict[int, int]
-) -> list[tuple[float, list[Mark]]]:
-    items: list[tuple[float, list[Mark]]] = []
+) -> list[tuple[int, float, list[Mark]]]:
+    """Return (layer, depth, marks): lobes lie under bonds, bonds under rings, so that no symbol
+    is struck through; what hides what is told by the rings."""
+    items: list[tuple[int, float, list[Mark]]] = []
     for atom in view.shown:
-        items.append((float(view.depth[atom]), _atom(scene, view, radii, atom, atom in hidden)))
+        items.append(
+            (_RINGS, float(view.depth[atom]), _atom(scene, view, radii, atom, atom in hidden))
+        )
     for stick in scene.sticks:
         if {stick.begin, stick.end} <= set(view.shown):
-            depth = float(min(view.depth[stick.begin], view.depth[stick.end])) - 0.01
-            items.append((depth, _bond(view, radii, stick)))
+            depth = float(min(view.depth[stick.begin], view.depth[stick.end]))
+            items.append((_BONDS, depth, _bond(view, radii, stick)))
     if view.lobes:
         ends, depths = view.place(lobe_ends(scene)), lobe_ends(scene) @ view.frame[2]
         for index, one in enumerate(scene.lobes):
-            depth = min(float(depths[index]), float(view.depth[one.atom]) - 0.02)
-            items.append((depth, _lobe(view, radii, one.atom, ends[index], one.electrons)))
+            depth = float(depths[index])
+            items.append((_LOBES, depth, _lobe(view, radii, one.atom, ends[index], one.electrons)))
     return items
 
 
