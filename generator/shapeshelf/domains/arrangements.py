@@ -1,11 +1,12 @@
 """Arrangements of two to nine equal domains, found by minimising their repulsion.
 
-Nothing is looked up but the names: points on a sphere are relaxed from fixed random starts
+Nothing is looked up but the names: points on a sphere are relaxed from fixed starts
 under repulsion 1 / d^n, n = 1 (soft) and 8 (hard). For seven domains soft and hard repulsion
 favour different polyhedra (D. L. Kepert, Inorganic Stereochemistry (1982), recalled from
 memory), so both are kept.
 """
 
+import math
 from dataclasses import dataclass
 from functools import cache
 
@@ -16,7 +17,7 @@ from shapeshelf.domains.repulsion import frames_for, problem_for, relax
 from shapeshelf.reference.shapes import ARRANGEMENTS, SITES
 
 Array = npt.NDArray[np.float64]
-STARTS = 6
+STARTS, STEPS, SHAKE = 4, 60, 0.3
 
 
 @dataclass(frozen=True, slots=True)
@@ -50,10 +51,18 @@ def _spread(count: int, soft: bool) -> Array:
     """Return (n, 3) unit vectors of least repulsion among the fixed starts."""
     ones, none = np.ones(count), np.zeros(count)
     problem = problem_for(ones if soft else none, none, ones, ones / 2, float(not soft), 0.0)
-    random = np.random.default_rng(count)
-    starts = frames_for(_unit(random.normal(size=(STARTS, count, 3))))
-    frames, energies = relax(problem, starts, steps=120)
+    frames, energies = relax(problem, frames_for(_starts(count)), steps=STEPS)
     return np.asarray(frames[int(np.argmin(np.round(energies, 6))), 0])
+
+
+def _starts(count: int) -> Array:
+    """Return (b, n, 3) unit vectors: a spiral from pole to pole, shaken in fixed ways."""
+    height = 1 - (2 * np.arange(count) + 1) / count
+    around = np.arange(count) * math.pi * (3 - math.sqrt(5))
+    ring = np.sqrt(1 - height**2)
+    spiral = np.stack([ring * np.cos(around), ring * np.sin(around), height], axis=1)
+    shake = np.random.default_rng(count).normal(size=(STARTS, count, 3))
+    return _unit(spiral + SHAKE * shake)
 
 
 def _describe(rough: Array) -> Arrangement:

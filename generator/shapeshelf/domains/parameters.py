@@ -40,15 +40,15 @@ class Parameters:
     """The numbers fitted to measured angles by tests/benchmarks/fit_domain_model.py."""
 
     electronegativity: float = 0.154
-    order: float = 0.526
-    order_shared: float = -0.253
-    hydrogen_heavy: float = -0.189
-    lone_pair_light: float = 0.616
-    lone_pair_heavy: float = 0.527
-    single_electron: float = 0.062
-    ln_contact: float = -2.565
-    radius_angstrom: float = 0.328
-    size_angstrom: float = 0.068
+    order: float = 0.525
+    order_shared: float = -0.251
+    hydrogen_heavy: float = -0.190
+    lone_pair_light: float = 0.613
+    lone_pair_heavy: float = 0.524
+    single_electron: float = 0.045
+    ln_contact: float = -2.545
+    radius_angstrom: float = 0.324
+    size_angstrom: float = 0.067
     orthogonality: float = 0.017
 
 
@@ -61,7 +61,7 @@ class DomainTraits:
 
     kind: DomainKind
     element: str = ""
-    order: float = 0.0
+    order: float = 0.525
     neighbours: int = 0
     """Atoms bonded to the atom at the other end, this centre among them; at most 3 are told."""
 

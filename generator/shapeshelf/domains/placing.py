@@ -18,7 +18,8 @@ from shapeshelf.domains.arrangements import Arrangement, arrangement_name, arran
 from shapeshelf.domains.layouts import layouts
 from shapeshelf.domains.model import Domain, DomainKind, LewisCount, Placement
 from shapeshelf.domains.parameters import DomainTraits, problem_of
-from shapeshelf.domains.repulsion import Problem, frames_for, relax, stable, turn
+from shapeshelf.domains.relaxing import relax_from, settle
+from shapeshelf.domains.repulsion import Problem
 from shapeshelf.domains.site_names import shape_of, site_names
 from shapeshelf.errors import AnalysisError
 from shapeshelf.structure.molecule import Molecule, Vector
@@ -29,7 +30,7 @@ Array = npt.NDArray[np.float64]
 KEPT = 6
 SAME_ENERGY = 1e-6
 FLAT_FROM, FLAT_ENERGY = 7, 0.008
-NUDGE_RADIANS = 0.02
+"""Of P4; the spread of the three seven-domain polyhedra of IF7 and TeF7- in this model."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -117,58 +118,12 @@ def _relaxed(
 ) -> list[_Relaxed]:
     """Relax every placement on one arrangement, first as symmetric as it stands."""
     rows = layouts(arrangement, traits)
-    frames, energies = _best_split(problem, arrangement.directions[rows])
-    frames, energies = _settled(problem, frames, energies)
+    gain = FLAT_ENERGY if len(traits) >= FLAT_FROM else SAME_ENERGY
+    frames, energies = settle(problem, *relax_from(problem, arrangement.directions[rows]), gain)
     return [
         _described(arrangement, traits, row, frame[0], float(value))
         for row, frame, value in zip(rows, frames, energies, strict=True)
     ]
-
-
-def _best_split(problem: Problem, ideal: Array) -> tuple[Array, Array]:
-    """Relax (b, n, 3) directions with double bonds split either way, and keep the lower."""
-    towards = _towards_nearest(ideal)
-    starts = [frames_for(ideal, np.cross(ideal, towards))]
-    if len(problem.owner) > ideal.shape[1] > 3:
-        starts.append(frames_for(ideal, towards))
-    frames, energies = relax(problem, starts[0])
-    for start in starts[1:]:
-        other, value = relax(problem, start)
-        lower = value < energies - SAME_ENERGY
-        frames = np.where(lower[:, None, None, None], other, frames)
-        energies = np.where(lower, value, energies)
-    return frames, energies
-
-
-def _towards_nearest(directions: Array) -> Array:
-    """Return (b, n, 3) unit vectors across each direction towards the domain nearest to it.
-
-    For a domain whose nearest lies straight across, any perpendicular, turned by a quarter from
-    one such domain to the next, as the pi planes of a cumulene are.
-    """
-    cosines = np.round(directions @ directions.transpose(0, 2, 1), 6)
-    nearest = np.argmax(cosines - 3 * np.eye(directions.shape[1]), axis=2)
-    toward = np.take_along_axis(directions, nearest[..., None], axis=1)
-    straight = np.abs((toward * directions).sum(-1, keepdims=True)) > 0.999
-    axes = np.eye(3)[np.argsort(np.abs(directions), axis=-1)[..., :2]]
-    aside = np.where((np.arange(directions.shape[1]) % 2)[:, None], axes[:, :, 1], axes[:, :, 0])
-    toward = np.where(straight, aside, toward)
-    toward = toward - (toward * directions).sum(-1, keepdims=True) * directions
-    return np.asarray(toward / np.linalg.norm(toward, axis=-1, keepdims=True))
-
-
-def _settled(problem: Problem, frames: Array, energies: Array) -> tuple[Array, Array]:
-    """Let the best placement leave a saddle that its symmetry held it on (but see P4)."""
-    best = int(np.argmin(np.round(energies, 9)))
-    chosen = frames[best : best + 1]
-    if stable(problem, chosen)[0]:
-        return frames, energies
-    random = np.random.default_rng(0).normal(size=(1, frames.shape[2], 3))
-    moved, value = relax(problem, turn(chosen, NUDGE_RADIANS * random))
-    gain = FLAT_ENERGY if frames.shape[2] >= FLAT_FROM else SAME_ENERGY
-    if value[0] < energies[best] - gain:
-        frames[best], energies[best] = moved[0], value[0]
-    return frames, energies
 
 
 def _described(
