@@ -4,6 +4,7 @@ import pytest
 
 from shapeshelf.domains.analysis import analyse
 from shapeshelf.domains.model import DomainKind
+from shapeshelf.domains.uncertainty import CROSS_VALIDATED, class_uncertainty_degrees
 from shapeshelf.structure.reading import read_smiles
 
 ANGLE_DIGITS = 3
@@ -150,3 +151,19 @@ def test_more_domains_than_can_be_placed():
     crowded = centres_of("[K+]" + "(<-O)" * 9 + "<-O")[0]
     assert (crowded.element, crowded.bonded, crowded.shape) == ("K", 10, None)
     assert "2 to 9 can be placed" in crowded.trace[0].text
+
+
+@pytest.mark.parametrize("smiles", ["FS(F)(F)F", "O", "CC(=O)N"])
+def test_uncertainty_is_that_of_the_class(smiles):
+    """A model angle carries the half-width of its class of centre."""
+    for centre in centres_of(smiles):
+        empty = len(centre.domains) - centre.bonded
+        width = class_uncertainty_degrees(centre.element, centre.bonded, empty)
+        assert {angle.uncertainty_degrees for angle in centre.angles} == {width}
+
+
+def test_uncertainty_without_a_fit():
+    """Angles of a metal or of a departure claim less than any fitted class."""
+    widest = max(CROSS_VALIDATED.by_class.values())
+    for smiles in ("Cl[Ba]Cl", "Cl[Pt-2](Cl)(Cl)Cl"):
+        assert all(a.uncertainty_degrees > widest for a in only_centre(smiles).angles)

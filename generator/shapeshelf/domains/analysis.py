@@ -29,16 +29,17 @@ from shapeshelf.domains.tracing import (
     trace_metal,
     trace_unplaceable,
 )
+from shapeshelf.domains.uncertainty import class_uncertainty_degrees
+from shapeshelf.domains.uncertainty import class_uncertainty_degrees
 from shapeshelf.errors import AnalysisError
 from shapeshelf.reference.departures import KnownDeparture
 from shapeshelf.reference.metal_shapes import SHAPE_NAMES
 from shapeshelf.structure.molecule import Molecule
 
 FLUXIONAL_METALS = frozenset({"TBPY-5", "PBPY-7", "OCF-7", "TPRS-7", "SAPR-8", "DD-8", "TPRS-9"})
-UNCLASSED_UNCERTAINTY_DEGREES = 3.0
-"""Of a main-group model angle whose class has no residuals (common practice, no source)."""
-METAL_UNCERTAINTY_DEGREES = 6.0
-"""Of a metal's ideal angles: no residuals of ours stand behind it (common practice, no source)."""
+UNFITTED_UNCERTAINTY_DEGREES = 6.0
+"""Of angles that no fit stands behind: a metal's, and those of known departures (common
+practice, no source)."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -125,9 +126,11 @@ def _centre(
     bonded = kinds[DomainKind.BOND]
     pairs, singles = kinds[DomainKind.LONE_PAIR], kinds[DomainKind.SINGLE_ELECTRON]
     best = placements[0] if placements else None
+    element = site.graph.elements[site.atom]
+    uncertainty = None if known else class_uncertainty_degrees(element, bonded, pairs + singles)
     return Centre(
         atom=site.atom,
-        element=site.graph.elements[site.atom],
+        element=element,
         label=site.label,
         domains=counted if domains is None else domains,
         bonded=bonded,
@@ -138,7 +141,7 @@ def _centre(
         shape=best.shape if best else None,
         polyhedral_symbol=best.polyhedral_symbol if best else None,
         placements=placements,
-        angles=_angles(site, best, None) if best else (),
+        angles=_angles(site, best, uncertainty) if best else (),
         departure=_departure(known.sentence, known.source) if known else None,
         trace=trace,
         fluxional=is_fluxional(len(counted), bonded, known) and not _is_ringed(site),
@@ -169,7 +172,7 @@ def _metal(site: _Site) -> Centre:
         shape=SHAPE_NAMES[symbol] if symbol else None,
         polyhedral_symbol=symbol,
         placements=placements,
-        angles=_angles(site, placements[0], METAL_UNCERTAINTY_DEGREES) if placements else (),
+        angles=_angles(site, placements[0], UNFITTED_UNCERTAINTY_DEGREES) if placements else (),
         departure=_metal_departure(metal, found),
         trace=trace_metal(metal, found, placements, site.molecule),
         fluxional=symbol in FLUXIONAL_METALS and not _is_ringed(site),
@@ -190,14 +193,14 @@ def _departure(sentence: str, source: str) -> Departure:
     return Departure(f"{sentence} ({source}).", source)
 
 
-def _angles(site: _Site, placement: Placement, uncertainty: float | None) -> tuple[ModelAngle, ...]:
+def _angles(site: _Site, placement: Placement, uncertainty: float) -> tuple[ModelAngle, ...]:
     neighbours = site.graph.neighbours(site.atom)
     return tuple(
         ModelAngle(
             (neighbours[i], site.atom, neighbours[j]),
             angle_degrees(placement.ideal_directions[i], placement.ideal_directions[j]),
             angle_degrees(placement.directions[i], placement.directions[j]),
-            UNCLASSED_UNCERTAINTY_DEGREES if uncertainty is None else uncertainty,
+            uncertainty,
         )
         for i, j in combinations(range(len(neighbours)), 2)
     )
