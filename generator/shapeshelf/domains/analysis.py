@@ -30,7 +30,6 @@ from shapeshelf.domains.tracing import (
     trace_unplaceable,
 )
 from shapeshelf.domains.uncertainty import class_uncertainty_degrees
-from shapeshelf.domains.uncertainty import class_uncertainty_degrees
 from shapeshelf.errors import AnalysisError
 from shapeshelf.reference.departures import KnownDeparture
 from shapeshelf.reference.metal_shapes import SHAPE_NAMES
@@ -127,7 +126,8 @@ def _centre(
     pairs, singles = kinds[DomainKind.LONE_PAIR], kinds[DomainKind.SINGLE_ELECTRON]
     best = placements[0] if placements else None
     element = site.graph.elements[site.atom]
-    uncertainty = None if known else class_uncertainty_degrees(element, bonded, pairs + singles)
+    fitted = class_uncertainty_degrees(element, bonded, pairs + singles)
+    uncertainty = fitted if known is None else UNFITTED_UNCERTAINTY_DEGREES
     return Centre(
         atom=site.atom,
         element=element,
