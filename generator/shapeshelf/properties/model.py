@@ -28,6 +28,8 @@ class Hybridisation:
     """What Bent's rule says here and whether the numbers agree."""
     pyramidalisation_degrees: float | None
     """Pi-orbital axis vector angle minus 90 degrees (Haddon), for three-coordinate centres."""
+    basis: str = ""
+    """One sentence: where the s-characters come from and what they do not say."""
 
 
 @dataclass(frozen=True, slots=True)
