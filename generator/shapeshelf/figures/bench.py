@@ -29,6 +29,8 @@ _ROOM = (400.0, 330.0)
 _LARGEST_SCALE = 108.0
 _SLOPE = 0.26
 """Sine of the angle to the paper, about 15 degrees, from which a bond is wedged or hashed."""
+_NEAR_GROWTH = 1.14
+"""How much larger perspective draws what is near, allowed for when gaps are judged."""
 _SYMBOL_SHARE = 0.78
 _LARGEST_SYMBOL = 26.0
 
@@ -99,7 +101,7 @@ def choose_view(scene: Scene) -> Array:
     spokes = np.array(
         [(one.atom, len(scene.points) + k) for k, one in enumerate(scene.lobes)], dtype=int
     ).reshape(-1, 2)
-    toward = choose_direction(points, radii, bonds, spokes)
+    toward = choose_direction(points, _NEAR_GROWTH * radii, bonds, spokes)
     return looking_along(toward, _upright(scene, toward))
 
 

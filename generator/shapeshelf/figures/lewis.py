@@ -9,6 +9,7 @@ from shapeshelf.domains.model import ResonanceForm
 from shapeshelf.figures.canvas import render, text_width
 from shapeshelf.figures.clearance import EMPTY, discs_along, discs_in_box, gaps_along
 from shapeshelf.figures.flat import (
+    MANY_ATOMS,
     Flat,
     bond_directions,
     crowded,
@@ -51,12 +52,17 @@ def lewis_drawing(report: CompoundReport) -> Drawing | None:
     flat = lay_flat(report.molecule, bond)
     if crowded(flat, bond):
         return None
-    forms = report.lewis.forms[:MOST_FORMS]
+    forms = report.lewis.forms[: _forms_drawn(report.molecule)]
     marks = _in_rows([_form(report, flat, form) for form in forms])
     marks, height = framed(marks)
     width = math.ceil(extent(marks)[2] + MARGIN)
     title = f"{report.name}, Lewis structure"
     return Drawing("lewis", width, height, tuple(marks), title, _in_words(report))
+
+
+def _forms_drawn(molecule: Molecule) -> int:
+    """One form for many atoms: there, forms mostly shift the double bonds of rings."""
+    return 1 if len(molecule.atoms) >= MANY_ATOMS else MOST_FORMS
 
 
 def nonbonding(molecule: Molecule, form: ResonanceForm, atom: int) -> int | None:

@@ -30,6 +30,7 @@ Array = NDArray[np.float64]
 _BOND = 46.0
 _SYMBOL, _NUMBER = 17.0, 12.0
 _RING = 12.0
+_NARROWEST = 480.0
 _ENOUGH_ROOM = 3.0
 _FEWEST_LEFT_OUT = 10
 _BOND_WIDTH = 2.4
@@ -42,8 +43,10 @@ def numbered_drawing(report: CompoundReport) -> Drawing | None:
     if crowded(flat, _BOND):
         return None
     body = [*_bonds(report, flat), *_symbols(report, flat)]
-    marks, height = framed([*body, *_numbers(report, flat)])
-    width = math.ceil(extent(marks)[2] + MARGIN)
+    everything = [*body, *_numbers(report, flat)]
+    left, _, right, _ = extent(everything)
+    width = max(_NARROWEST, math.ceil(right - left + 2 * MARGIN))
+    marks, height = framed(everything, width)
     title = f"{report.name}, numbered drawing"
     return Drawing("bench", width, height, tuple(marks), title, describe(report))
 

@@ -21,7 +21,7 @@ _IN_PLANE = 0.24
 """Sine of the angle, about 14 degrees, below which a bond counts as lying in the paper."""
 _LONG_ENOUGH = 0.62
 _WELL_APART = np.radians(36.0)
-_LOBE_SHOWN = 0.85
+_LOBE_SHOWN = 0.7
 _UPRIGHT, _TILTED = 0.5, 0.36
 """Worth of a main axis that leans less than about 21 degrees to the paper."""
 
@@ -61,9 +61,11 @@ def choose_direction(points: Array, radii: Array, bonds: Array, spokes: Array) -
     score += _UPRIGHT * (np.abs(directions[:, 2]) < _TILTED)
     if len(bonds):
         score += _bond_score(points, directions, bonds)
+        score += 0.8 * _spread(points, directions, bonds, bonds)
     if len(spokes):
         _, shown = _slopes(points, directions, spokes)
         score += 3 * np.minimum(shown, _LOBE_SHOWN).min(axis=0)
+        score += 0.6 * _spread(points, directions, bonds, spokes)
     return np.asarray(directions[int(np.argmax(np.round(score, 6)))])
 
 
@@ -96,7 +98,7 @@ def _bond_score(points: Array, directions: Array, bonds: Array) -> Array:
     slope = np.abs(vectors @ directions.T)
     flat = (slope < _IN_PLANE).mean(axis=0)
     score: Array = 1.5 * np.minimum(drawn, _LONG_ENOUGH).min(axis=0) + 1.5 * flat
-    score += 0.8 * _spread(vectors, directions, bonds) - 0.05 * slope.mean(axis=0)
+    score -= 0.05 * slope.mean(axis=0)
     return score
 
 
@@ -108,23 +110,26 @@ def _slopes(points: Array, directions: Array, pairs: Array) -> tuple[Array, Arra
     return vectors, shown
 
 
-def _spread(vectors: Array, directions: Array, bonds: Array) -> Array:
-    """Return the smallest drawn angle between bonds at one atom, 1 where it is wide enough."""
+def _spread(points: Array, directions: Array, bonds: Array, others: Array) -> Array:
+    """Return the smallest drawn angle between a bond and another line (a bond, a spoke) at one
+    atom, as a share of what is wide enough, at most 1."""
     outward = [
-        (
-            vectors[i] if bonds[i][0] == shared else -vectors[i],
-            vectors[j] if bonds[j][0] == shared else -vectors[j],
-        )
-        for i in range(len(bonds))
-        for j in range(i)
-        for shared in set(bonds[i].tolist()) & set(bonds[j].tolist())
+        (points[_far(bond, shared)] - points[shared], points[_far(other, shared)] - points[shared])
+        for index, bond in enumerate(bonds)
+        for other in (others[:index] if others is bonds else others)
+        for shared in set(bond.tolist()) & set(other.tolist())
     ]
     if not outward:
         return np.ones(len(directions))
-    one, other = np.array([pair[0] for pair in outward]), np.array([pair[1] for pair in outward])
-    depth_one, depth_other = one @ directions.T, other @ directions.T
-    inner = (one * other).sum(axis=1)[:, None] - depth_one * depth_other
-    lengths = np.sqrt(np.maximum((1 - depth_one**2) * (1 - depth_other**2), 1e-12))
+    pairs = np.array(outward)
+    pairs /= np.linalg.norm(pairs, axis=2)[:, :, None]
+    depth = pairs @ directions.T
+    inner = (pairs[:, 0] * pairs[:, 1]).sum(axis=1)[:, None] - depth[:, 0] * depth[:, 1]
+    lengths = np.sqrt(np.maximum((1 - depth[:, 0] ** 2) * (1 - depth[:, 1] ** 2), 1e-12))
     angle = np.arccos(np.clip(inner / lengths, -1, 1))
     smallest: Array = np.minimum(angle / _WELL_APART, 1).min(axis=0)
     return smallest
+
+
+def _far(pair: NDArray[np.int_], shared: int) -> int:
+    return int(pair[1] if pair[0] == shared else pair[0])
