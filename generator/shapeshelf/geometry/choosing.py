@@ -20,7 +20,8 @@ SNAP_ANGSTROM = 0.08
 NEARLY_ANGSTROM = 0.6
 """How far a structure may be from a symmetric one for the symmetric one to be tried."""
 SAME_ENERGY = 1e-3
-MOST_COMPARED = 4
+MOST_COMPARED = 3
+MOST_FOR_TRIAL = 40
 
 Relaxed = tuple[Array, float]
 
@@ -40,6 +41,8 @@ def most_symmetric(
     limit = ranked[0][1] + margin
     low = _distinct([one for one in ranked if one[1] <= limit])[:MOST_COMPARED]
     counted = [(_operations(elements, points), points) for points, _ in low]
+    if len(elements) > MOST_FOR_TRIAL:
+        return max(counted, key=lambda one: one[0])[1]
     trial, count = symmetrised(elements, low[0][0], NEARLY_ANGSTROM)
     if count > max(count for count, _ in counted):
         points, energy = relax(trial)

@@ -16,6 +16,7 @@ from shapeshelf.geometry.choosing import (
 )
 from shapeshelf.geometry.forces import minimised, settled_down
 from shapeshelf.geometry.ordering import renumbered, settled_order
+from shapeshelf.geometry.rotors import scanned, turning_bonds
 from shapeshelf.geometry.surroundings import MULTIPLE_ORDER, Surroundings, joined_without
 from shapeshelf.geometry.targets import bounds_of, terms_of
 from shapeshelf.geometry.torsions import Turn, chain_turns, turns_of
@@ -24,10 +25,12 @@ from shapeshelf.structure.embedding import embed, relax_mmff
 from shapeshelf.structure.molecule import Molecule
 
 SEED = 20050
-FIRST_STEPS = 120
+FIRST_STEPS = 200
+FIRST_SLOPE = 0.01
 KEPT_TORSION_HEIGHT = 30.0
-SMALL = 20
-"""Up to so many atoms a conformer costs next to nothing."""
+MOST_TRIES = ((12, 12), (20, 8), (40, 6), (70, 6), (1000, 3))
+"""Up to so many atoms, so many conformers at most: a structure has to come while one waits."""
+MOST_FOR_SCAN = 40
 MOST_SETTLED = 3
 ROUGHLY_SAME_ENERGY = 0.02
 
@@ -50,20 +53,27 @@ def by_force_field(molecule: Molecule, known: Surroundings) -> Conformers:
         moved, energy = relax_mmff(settled, points[list(order)])
         return _in_given_order(moved, order), energy
 
-    starts = embed(settled, _count(molecule, known, 20), SEED)
+    bonds = turning_bonds(molecule.classes, known)
+    starts = embed(settled, _count(molecule, known, len(bonds)), SEED)
     relaxed = [relax(_in_given_order(start, order)) for start in starts]
+    if len(molecule.atoms) <= MOST_FOR_SCAN:
+        lowest = min(relaxed, key=lambda one: one[1])
+        relaxed += scanned(lowest, _in_order(bonds, order), known, relax)
     best = most_symmetric(_elements(molecule), relaxed, relax, FORCE_FIELD_ERROR_KCAL_MOL)
-    return Conformers(_ends_aligned(molecule, known, best), "lowest MMFF94s conformer", len(starts))
+    return Conformers(
+        _ends_aligned(molecule, known, best), "lowest MMFF94s conformer", len(relaxed)
+    )
 
 
 def by_rules(molecule: Molecule, known: Surroundings) -> Conformers:
     """Return the lowest conformer under our own lengths, angles, contacts and torsion rules."""
     order = settled_order(molecule)
     bounds = _settled_bounds(bounds_of(molecule, known), order)
-    starts = embed(renumbered(molecule, order), _count(molecule, known, 12), SEED, bounds)
+    count = _count(molecule, known, 4 * len(turning_bonds(molecule.classes, known)))
+    starts = embed(renumbered(molecule, order), count, SEED, bounds)
     given = np.stack([_in_given_order(start, order) for start in starts])
     terms = terms_of(molecule, known, turns_of(known))
-    rough, energies = minimised(terms, given, FIRST_STEPS, slope=0.05)
+    rough, energies = minimised(terms, given, FIRST_STEPS, FIRST_SLOPE)
     if not np.isfinite(energies).all():
         raise AnalysisError(molecule.formula, "no three-dimensional structure fits the distances")
 
@@ -88,15 +98,22 @@ def _lowest_distinct(energies: Array) -> list[int]:
     return kept[:MOST_SETTLED]
 
 
-def _count(molecule: Molecule, known: Surroundings, most: int) -> int:
-    """Return how many conformers to try: more for more single bonds to turn or rings to fold."""
-    turning = folding = 0
-    for (b, c), order in known.orders.items():
-        if min(len(known.neighbours[b]), len(known.neighbours[c])) > 1 and order < MULTIPLE_ORDER:
-            ring = joined_without(known, b, c)
-            folding += ring
-            turning += not ring
-    return int(np.clip(2 + 5 * turning + folding, 4, most if len(molecule.atoms) <= SMALL else 12))
+def _count(molecule: Molecule, known: Surroundings, turning: int) -> int:
+    """Return how many random starts: more for more bonds to turn or rings to fold."""
+    folding = sum(
+        1
+        for (b, c), order in known.orders.items()
+        if order < MULTIPLE_ORDER and joined_without(known, b, c)
+    )
+    most = next(tries for size, tries in MOST_TRIES if len(molecule.atoms) <= size)
+    return int(np.clip(2 + turning + folding, 4, most))
+
+
+def _in_order(bonds: Sequence[tuple[int, int]], order: tuple[int, ...]) -> list[tuple[int, int]]:
+    """Return the bonds, and the ends of each, as they stand in the settled order."""
+    place = {atom: k for k, atom in enumerate(order)}
+    sided = [bond if place[bond[0]] < place[bond[1]] else bond[::-1] for bond in bonds]
+    return sorted(sided, key=lambda bond: (place[bond[0]], place[bond[1]]))
 
 
 def _in_given_order(points: Array, order: tuple[int, ...]) -> Array:

@@ -21,9 +21,11 @@ from shapeshelf.geometry.vectors import Array
 
 Indices = NDArray[np.int64]
 
-MOST_FOR_NEWTON = 30
-NEWTON_STEPS = 30
-LAST_STEPS = 1500
+MOST_FOR_NEWTON = 18
+NEWTON_STEPS = 20
+LAST_STEPS = 400
+LAST_SLOPE = 5e-3
+NEWTON_SLOPE = 1e-3
 DIFFERENCE_ANGSTROM = 1e-4
 
 
@@ -91,10 +93,12 @@ def settled_down(terms: Terms, points: Array) -> tuple[Array, float]:
     Newton steps on the Hessian by differences of gradients, so that soft torsions settle as
     tightly as stiff bonds; for many atoms the slower descent alone.
     """
-    if len(points) > MOST_FOR_NEWTON:
-        moved, energies = minimised(terms, points[None], LAST_STEPS)
-        return moved[0], float(energies[0])
-    energy = float(energy_and_gradient(terms, points[None])[0][0])
+    exactly = len(points) <= MOST_FOR_NEWTON
+    slope = NEWTON_SLOPE if exactly else LAST_SLOPE
+    moved, found = minimised(terms, points[None], LAST_STEPS, slope)
+    points, energy = moved[0], float(found[0])
+    if not exactly:
+        return points, energy
     for _ in range(NEWTON_STEPS):
         step = _newton_step(terms, points)
         tried = points + np.array([1.0, 0.5, 0.1, 0.01])[:, None, None] * step

@@ -47,7 +47,11 @@ def closed_operations(numbers: Indices, points: Array, tolerance: float) -> Oper
     ``numbers`` (n,) tell unlike atoms apart. The identity comes first; matrices are exact to
     rounding. ``tolerance`` in ångström: the furthest an atom may land from its image.
     """
-    trials = _trial_matrices(numbers, points, tolerance)
+    alike = _alike(numbers, points, tolerance)
+    if alike.sum() == len(points) and not _is_flat(points, tolerance):
+        identity = np.eye(3)[None], np.arange(len(points))[None], np.zeros(1)
+        return OperationSet(*identity)
+    trials = _trial_matrices(alike, points, tolerance)
     found = _distinct(_refined(trials, numbers, points, tolerance))
     group, table = _largest_group(found)
     matrices = _exact_representation(group.matrices, table)
@@ -63,10 +67,28 @@ def averaged(points: Array, matrices: Array, permutations: Indices) -> Array:
     return total / len(matrices)
 
 
-def _trial_matrices(numbers: Indices, points: Array, tolerance: float) -> Array:
+def _alike(numbers: Indices, points: Array, tolerance: float) -> NDArray[np.bool_]:
+    """Return which atoms (n, n) an operation may exchange.
+
+    They are of one kind, equally far from the centre, and see the others at equal distances.
+    """
+    radii = np.linalg.norm(points, axis=1)
+    alike = np.asarray(numbers[:, None] == numbers)
+    alike &= np.abs(radii[:, None] - radii) <= 2 * tolerance
+    views = np.sort(np.linalg.norm(points[:, None] - points, axis=2), axis=1)
+    first, second = np.nonzero(alike)
+    alike[first, second] = np.abs(views[first] - views[second]).max(axis=1) <= 2 * tolerance
+    return alike
+
+
+def _is_flat(points: Array, tolerance: float) -> bool:
+    _, _, axes = np.linalg.svd(points, full_matrices=False)
+    return bool(np.abs(points @ axes[-1]).max() <= tolerance)
+
+
+def _trial_matrices(alike: NDArray[np.bool_], points: Array, tolerance: float) -> Array:
     """Return matrices (m, 3, 3) worth refining (S1), the identity and its mirror among them."""
     radii = np.linalg.norm(points, axis=1)
-    alike = (numbers[:, None] == numbers) & (np.abs(radii[:, None] - radii) <= 2 * tolerance)
     first, second = _reference_pair(points, radii, alike.sum(1))
     images, other_images = np.nonzero(alike[first])[0], np.nonzero(alike[second])[0]
     pairs = np.array([(a, b) for a in images for b in other_images if a != b])

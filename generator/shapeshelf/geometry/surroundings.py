@@ -4,13 +4,15 @@ from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 from shapeshelf.domains.bond_lengths import bond_length_angstrom
-from shapeshelf.domains.model import Centre, LewisCount
+from shapeshelf.domains.model import Centre, LewisCount, ModelAngle
 from shapeshelf.structure.molecule import Molecule
 
 LINEAR_DEGREES = 168.0
 """An angle this wide is treated as a straight line."""
 FLAT_SUM_DEGREES = 357.0
 """Three angles that add up to this lie in a plane."""
+ALIKE_SITES = ("tetrahedral", "trigonal pyramidal", "trigonal planar")
+"""Shapes whose sites are of one kind only."""
 MULTIPLE_ORDER = 1.15
 """From this averaged bond order a bond has a share of pi bonding."""
 
@@ -53,7 +55,7 @@ def surroundings_of(
         lengths[key] = bond_length_angstrom(
             molecule.atoms[bond.begin].element, molecule.atoms[bond.end].element, order
         )
-    angles = dict(_angles(centres))
+    angles = dict(_angles(molecule, centres))
     linear = frozenset(c.atom for c in centres if c.bonded == 2 and _widest(c) > LINEAR_DEGREES)
     return Surroundings(
         neighbours=neighbours,
@@ -84,11 +86,29 @@ def joined_without(
     return False
 
 
-def _angles(centres: Sequence[Centre]) -> Iterator[tuple[tuple[int, int, int], float]]:
+def _angles(
+    molecule: Molecule, centres: Sequence[Centre]
+) -> Iterator[tuple[tuple[int, int, int], float]]:
+    """Yield the angles, equal ones where all sites of an arrangement are alike.
+
+    On a tetrahedron or triangle, angles between neighbours of the same classes differ only by
+    the way a placement happens to be turned; on other arrangements they may be real.
+    """
     for centre in centres:
+        alike = centre.placements[0].shape in ALIKE_SITES
+        by_kind: dict[tuple[int, int], list[float]] = {}
         for angle in centre.angles:
-            yield angle.atoms, angle.model_degrees
-            yield angle.atoms[::-1], angle.model_degrees
+            by_kind.setdefault(_kind(molecule, angle), []).append(angle.model_degrees)
+        for angle in centre.angles:
+            same = by_kind[_kind(molecule, angle)]
+            degrees = sum(same) / len(same) if alike else angle.model_degrees
+            yield angle.atoms, degrees
+            yield angle.atoms[::-1], degrees
+
+
+def _kind(molecule: Molecule, angle: ModelAngle) -> tuple[int, int]:
+    first, last = sorted((molecule.classes[angle.atoms[0]], molecule.classes[angle.atoms[2]]))
+    return first, last
 
 
 def _widest(centre: Centre) -> float:

@@ -78,7 +78,7 @@ def _special(known: Surroundings, atoms: tuple[int, int, int, int], share: float
         yield Turn(atoms, 4.0 * share, 1, 0.0)
     bonds = ((a, b), (b, c), (c, d))
     if all(known.order(*bond) > MULTIPLE_ORDER for bond in bonds) and _in_six_ring(known, atoms):
-        yield Turn(atoms, 8.0, 1, 0.0)
+        yield Turn(atoms, 30.0, 1, 0.0)
 
 
 def _is_anomeric(known: Surroundings, donor: int, centre: int, acceptor: int) -> bool:
