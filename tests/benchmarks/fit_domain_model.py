@@ -36,6 +36,7 @@ CURVE = (
     ("orthogonality",),
     ("order_shared",),
     ("size_angstrom",),
+    ("lone_pair_pyramidal",),
 )
 
 

@@ -79,6 +79,12 @@ def test_runners_up_cost_energy(smiles):
     assert energies[1] > energies[0]
 
 
+@pytest.mark.parametrize("smiles", ["FI(F)(F)(F)(F)(F)F", "F[Te-](F)(F)(F)(F)(F)F"])
+def test_seven_equal_ligands_have_one_placement(smiles):
+    """Polyhedra that seven ligands pass through freely are one placement, the bipyramid."""
+    assert [p.polyhedral_symbol for p in placements_at(smiles, 1)[2]] == ["PBPY-7"]
+
+
 def test_every_placement_of_two_unlike_domains_on_a_bipyramid():
     """Three chlorines and two fluorines have three placements: both, one or no fluorine axial."""
     molecule, domains, placements = placements_at("FP(F)(Cl)(Cl)Cl", 1)

@@ -2,7 +2,7 @@
 
     bond to X:       ln w = -a (chi_X - chi_A) + h [X = H, A in period 3 or below]
                             + (D + D_s [A in period 2, X has more ligands]) (n - 1)
-    lone pair:       ln w = L_2 (A in period 2) or L_3 (A in period 3 or below)
+    lone pair:       ln w = L_2 + L_p [three bonds] (A in period 2) or L_3 (A in period 3 or below)
     single electron: ln w = s
     contact radius:  R_X = single-bond covalent radius + delta + size [X has two more ligands]
     right angles:    kappa (period of A - 2), A in period 3 or below with a lone pair and at most
@@ -39,16 +39,17 @@ SHARED_ORDERS = (1.2, 2.5)
 class Parameters:
     """The numbers fitted to measured angles by tests/benchmarks/fit_domain_model.py."""
 
-    electronegativity: float = 0.154
-    order: float = 0.525
-    order_shared: float = -0.251
-    hydrogen_heavy: float = -0.190
-    lone_pair_light: float = 0.613
-    lone_pair_heavy: float = 0.524
-    single_electron: float = 0.045
-    ln_contact: float = -2.545
-    radius_angstrom: float = 0.324
-    size_angstrom: float = 0.067
+    electronegativity: float = 0.150
+    order: float = 0.536
+    order_shared: float = -0.250
+    hydrogen_heavy: float = -0.180
+    lone_pair_light: float = 0.653
+    lone_pair_heavy: float = 0.541
+    lone_pair_pyramidal: float = -0.238
+    single_electron: float = 0.057
+    ln_contact: float = -2.531
+    radius_angstrom: float = 0.331
+    size_angstrom: float = 0.070
     orthogonality: float = 0.017
 
 
@@ -61,7 +62,7 @@ class DomainTraits:
 
     kind: DomainKind
     element: str = ""
-    order: float = 0.525
+    order: float = 0.0
     neighbours: int = 0
     """Atoms bonded to the atom at the other end, this centre among them; at most 3 are told."""
 
@@ -74,7 +75,7 @@ def problem_of(
     paired = any(domain.kind is DomainKind.LONE_PAIR for domain in domains)
     right_angles = max(period - 2, 0) if paired and len(domains) <= P_ORBITAL_DOMAINS else 0
     return problem_for(
-        np.array([math.exp(_log_weight(element, domain, parameters)) for domain in domains]),
+        np.array([math.exp(value) for value in _log_weights(element, domains, parameters)]),
         np.array([split_radians(element, domain) for domain in domains]),
         np.array([_length(element, domain, len(domains)) for domain in domains]),
         np.array([_contact_radius(domain, parameters) for domain in domains]),
@@ -91,12 +92,24 @@ def split_radians(element: str, domain: DomainTraits) -> float:
     return SPLIT_RADIANS * (1 - abs(domain.order - 2)) if planar else 0.0
 
 
-def _log_weight(element: str, domain: DomainTraits, parameters: Parameters) -> float:
+def _log_weights(
+    element: str, domains: tuple[DomainTraits, ...], parameters: Parameters
+) -> list[float]:
+    pair = parameters.lone_pair_heavy
+    if ELEMENTS[element].period <= 2:
+        bonds = sum(domain.kind is DomainKind.BOND for domain in domains)
+        pair = parameters.lone_pair_light + parameters.lone_pair_pyramidal * (bonds == 3)
+    unshared = {DomainKind.LONE_PAIR: pair, DomainKind.SINGLE_ELECTRON: parameters.single_electron}
+    return [
+        unshared[domain.kind]
+        if domain.kind in unshared
+        else _bond_log_weight(element, domain, parameters)
+        for domain in domains
+    ]
+
+
+def _bond_log_weight(element: str, domain: DomainTraits, parameters: Parameters) -> float:
     light = ELEMENTS[element].period <= 2
-    if domain.kind is DomainKind.LONE_PAIR:
-        return parameters.lone_pair_light if light else parameters.lone_pair_heavy
-    if domain.kind is DomainKind.SINGLE_ELECTRON:
-        return parameters.single_electron
     difference = _electronegativity(domain.element) - _electronegativity(element)
     low, high = SHARED_ORDERS
     shared = light and domain.neighbours >= 2 and low < domain.order < high

@@ -93,8 +93,10 @@ def _placements(element: str, traits: tuple[DomainTraits, ...]) -> tuple[Placeme
         for arrangement in arrangements(len(traits))
         for relaxed in _relaxed(problem, arrangement, traits)
     ]
-    ranked = sorted(_distinct(found), key=_rank_energy)
-    return tuple(one.placement for one in ranked[:KEPT])
+    best, *others = sorted(_distinct(found), key=_rank_energy)
+    # P4: what lies on the same flat stretch of the energy is no placement of its own.
+    dearer = [one for one in others if one.usual or one.placement.energy > best.placement.energy]
+    return tuple(one.placement for one in (best, *dearer)[:KEPT])
 
 
 def _distinct(found: list[_Relaxed]) -> list[_Relaxed]:
