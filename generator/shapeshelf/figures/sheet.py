@@ -14,7 +14,6 @@ from numpy.typing import NDArray
 from shapeshelf.figures.callouts import (
     axis_orders,
     caption,
-    dipole_arrow,
     hidden_notes,
     looking_arrow,
     symmetry_axes,
@@ -23,6 +22,7 @@ from shapeshelf.figures.canvas import render
 from shapeshelf.figures.clearance import EMPTY
 from shapeshelf.figures.describing import describe
 from shapeshelf.figures.dimensions import Ground, Placed, place_dimension
+from shapeshelf.figures.dipole import dipole_arrow
 from shapeshelf.figures.frames import auxiliary_frames, principal_frames
 from shapeshelf.figures.layout import INSET, MARGIN, Layout, lay_out
 from shapeshelf.figures.model import Drawing, Mark, Role, Stroke, Style, Svg
