@@ -143,3 +143,21 @@ def test_description_is_one_plain_sentence(sf4: CompoundReport, catalogue_of) ->
     """For the head of the page."""
     view = compound_view(sf4, catalogue_of(sf4), "0")
     assert view.description == "Sulfur tetrafluoride (SF₄): see-saw, C2v."
+
+
+def test_telling_centres_come_before_plain_carbon(sf4: CompoundReport, catalogue_of) -> None:
+    """A phosphorus is asked for before the carbons that come before it in the SMILES."""
+    (first,) = sf4.centres
+    kinds = [("C", 0), ("C", 0), ("C", 1), ("P", 1)]
+    centres = tuple(
+        replace(
+            first,
+            centre=replace(
+                first.centre, atom=atom, element=element, label=f"{element}{atom}", lone_pairs=pairs
+            ),
+            equivalent=(atom,),
+        )
+        for atom, (element, pairs) in enumerate(kinds)
+    )
+    view = compound_view(replace(sf4, centres=centres, shape=None), catalogue_of(sf4), "0")
+    assert [centre.labels[0] for centre in view.key_centres] == ["C2", "P3", "C0", "C1"]

@@ -1,4 +1,5 @@
 from shapeshelf.catalogue.model import Source
+from shapeshelf.pages.drawings import shape_glyph
 from shapeshelf.pages.shapes import overview, shape_views
 from shapeshelf.reference.shapes import SHAPES
 from shapeshelf.report.model import CompoundReport
@@ -32,3 +33,12 @@ def test_equivalent_centres_count_once(sf4: CompoundReport, sources: dict[str, S
     (member,) = {view.name: view for view in shape_views([sf4], sources)}["see-saw"].members
     assert member.address == "compounds/sf4/"
     assert [angle.plain_label for angle in member.angles] == ["F(ax)-S-F(ax)", "F(eq)-S-F(eq)"]
+
+
+def test_a_glyph_may_stand_several_times_on_a_page() -> None:
+    """It has no id, and a screen reader passes over it: the name stands beside it."""
+    markup = shape_glyph("see-saw")
+    assert markup.startswith("<svg ")
+    assert 'aria-hidden="true"' in markup
+    for left_out in ("id=", "<title", "<desc", "role=", "labelledby"):
+        assert left_out not in markup

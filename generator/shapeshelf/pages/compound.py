@@ -38,6 +38,9 @@ from shapeshelf.report.model import Caution, CompoundReport
 KEY_ANGLES = 4
 """As many as the title block holds without pushing the cautions off the first screen."""
 KEY_CENTRES = 6
+PLAIN_ELEMENT = "C"
+"""Carbon without a lone pair is what an organic molecule is made of; other centres are asked
+for first."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -90,6 +93,7 @@ class CompoundView:
     key_angles: tuple[AngleView, ...]
     more_angles: int
     centres: tuple[CentreView, ...]
+    key_centres: tuple[CentreView, ...]
     lengths: tuple[LengthView, ...]
     polarity: PolarityView
     symmetry: SymmetryView
@@ -143,6 +147,7 @@ def compound_view(
         key_angles=angles[:KEY_ANGLES],
         more_angles=max(0, len(angles) - KEY_ANGLES),
         centres=centres,
+        key_centres=_key_centres(centres),
         lengths=lengths,
         polarity=polarity_view(report, sources),
         symmetry=symmetry_view(report),
@@ -191,6 +196,12 @@ def _key_angles(report: CompoundReport, sources: Mapping[str, Source]) -> tuple[
     """Return the angles of the only kind of centre, measured ones first."""
     rows = sorted(report.centres[0].angles, key=lambda row: row.degrees.basis != "measured")
     return tuple(angle_view(row, sources) for row in rows)
+
+
+def _key_centres(centres: tuple[CentreView, ...]) -> tuple[CentreView, ...]:
+    """Return as many centres as the first screen holds, the telling ones first."""
+    telling = sorted(centres, key=lambda c: c.element == PLAIN_ELEMENT and not c.lone_pairs)
+    return tuple(telling[:KEY_CENTRES])
 
 
 def _length_views(report: CompoundReport, sources: Mapping[str, Source]) -> tuple[LengthView, ...]:

@@ -1,16 +1,21 @@
 """Which figures stand on which page, as markup that is safe to place."""
 
+import re
 from dataclasses import dataclass
+from functools import cache
 
 from markupsafe import Markup
 
 from shapeshelf.figures.bench import bench_view
-from shapeshelf.figures.glyph import glyph
+from shapeshelf.figures.glyph import glyph, shape_drawing
 from shapeshelf.figures.lewis import lewis_structure
 from shapeshelf.figures.model import Svg
 from shapeshelf.figures.sheet import sheet
 from shapeshelf.figures.strip import strip
 from shapeshelf.report.model import CompoundReport
+
+_NAMING_ATTRIBUTE = re.compile(r' (?:role|aria-[a-z]+|font-family)="[^"]*"')
+_NAMING_ELEMENT = re.compile(r"<(title|desc)\b.*?</\1>")
 
 
 @dataclass(frozen=True, slots=True)
@@ -33,9 +38,21 @@ def compound_figures(report: CompoundReport) -> CompoundFigures:
     )
 
 
+@cache
 def shape_glyph(shape: str) -> Markup:
-    """Return the small drawing of a shape."""
-    return _markup(glyph(shape))
+    """Return the small drawing of a shape for places where its name stands beside it.
+
+    Without title and ids: it may stand several times on a page, and a screen reader that has
+    the name need not hear of the picture.
+    """
+    opening, body = glyph(shape).markup.split(">", 1)
+    bare = _NAMING_ATTRIBUTE.sub("", opening)
+    return Markup(f'{bare} aria-hidden="true" focusable="false">{_NAMING_ELEMENT.sub("", body)}')
+
+
+def shape_figure(shape: str) -> Markup | None:
+    """Return the large drawing of a shape, lone pairs with it."""
+    return _maybe(shape_drawing(shape))
 
 
 def _maybe(svg: Svg | None) -> Markup | None:

@@ -9,7 +9,7 @@ from pathlib import Path
 from shapeshelf.catalogue.model import Catalogue, Entry
 from shapeshelf.pages import addresses
 from shapeshelf.pages.compound import CompoundView, compound_view, source_view
-from shapeshelf.pages.drawings import compound_figures, shape_glyph
+from shapeshelf.pages.drawings import compound_figures, shape_figure, shape_glyph
 from shapeshelf.pages.history import Change, last_changes
 from shapeshelf.pages.home import CompoundLine, compound_line, home_view
 from shapeshelf.pages.lookup_index import by_name, lookup_index
@@ -83,7 +83,7 @@ def _page(address: str, title: str, part: str, **values: object) -> SitePage:
 
 def _shape_page(shape: ShapeView) -> SitePage:
     title = shape.name[:1].upper() + shape.name[1:]
-    return _page(shape.address, title, "shape.html", shape=shape)
+    return _page(shape.address, title, "shape.html", shape=shape, figure=shape_figure(shape.name))
 
 
 def _compound_pages(
