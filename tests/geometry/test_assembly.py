@@ -84,6 +84,9 @@ GROUPS = [
         "Oh",
     ),
     ("tetracyanonickelate(II)", "[Ni-2](C#N)(C#N)(C#N)C#N", "D4h"),
+    ("cyclopentadienide", "c1cc[cH-]c1", "D5h"),
+    ("tropylium", "c1cc[cH+]ccc1", "D7h"),
+    ("guanidinium", "NC(N)=[NH2+]", "D3h"),
     ("hydrogen", "[H][H]", "Dinfh"),
     ("hydrogen chloride", "Cl", "Cinfv"),
 ]

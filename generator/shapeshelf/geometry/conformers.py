@@ -27,6 +27,8 @@ from shapeshelf.structure.molecule import Molecule
 SEED = 20050
 FIRST_STEPS = 200
 FIRST_SLOPE = 0.01
+UNEVEN_ANGSTROM = 0.01
+"""Bonds of like atoms differ less than this in the two halves of any one conformer."""
 KEPT_TORSION_HEIGHT = 30.0
 MOST_TRIES = ((12, 12), (20, 8), (40, 6), (70, 6), (1000, 3))
 """Up to so many atoms, so many conformers at most: a structure has to come while one waits."""
@@ -60,9 +62,7 @@ def by_force_field(molecule: Molecule, known: Surroundings) -> Conformers:
         lowest = min(relaxed, key=lambda one: one[1])
         relaxed += scanned(lowest, _in_order(bonds, order), known, relax)
     best = most_symmetric(_elements(molecule), relaxed, relax, FORCE_FIELD_ERROR_KCAL_MOL)
-    return Conformers(
-        _ends_aligned(molecule, known, best), "lowest MMFF94s conformer", len(relaxed)
-    )
+    return Conformers(_finished(molecule, known, best), "lowest MMFF94s conformer", len(relaxed))
 
 
 def by_rules(molecule: Molecule, known: Surroundings) -> Conformers:
@@ -130,18 +130,36 @@ def _settled_bounds(bounds: Array, order: tuple[int, ...]) -> Array:
     return np.asarray(np.triu(upper, 1) + np.tril(lower, -1))
 
 
-def _ends_aligned(molecule: Molecule, known: Surroundings, points: Array) -> Array:
-    """Return the structure with its ends aligned across straight chains, where no force acts."""
+def _finished(molecule: Molecule, known: Surroundings, points: Array) -> Array:
+    """Return the structure with what the force field leaves undone.
+
+    Ends are aligned across straight chains, where it has no force; bonds that resonance makes
+    equal, and it reads from one drawing (cyclopentadienide), are given their mean length.
+    """
     turns = chain_turns(known)
-    if not turns:
+    lengths = {(a, b): distance(points[a], points[b]) for a, b in known.lengths}
+    even = _mean_lengths(molecule, known, lengths)
+    spread = max((abs(even[bond] - lengths[bond]) for bond in lengths), default=0.0)
+    if not turns and spread < UNEVEN_ANGSTROM:
         return points
-    measured = replace(
-        known,
-        angles={abc: angle_degrees(*points[list(abc)]) for abc in known.angles},
-        lengths={(a, b): distance(points[a], points[b]) for a, b in known.lengths},
-    )
+    angles = {abc: angle_degrees(*points[list(abc)]) for abc in known.angles}
+    measured = replace(known, angles=angles, lengths=even)
     terms = terms_of(molecule, measured, [*_kept_turns(known, points), *turns], guarded=False)
     return settled_down(terms, points)[0]
+
+
+def _mean_lengths(
+    molecule: Molecule, known: Surroundings, lengths: dict[tuple[int, int], float]
+) -> dict[tuple[int, int], float]:
+    """Return lengths in ångström averaged over bonds of equal order between like atoms."""
+    kinds = {
+        (a, b): (*sorted((molecule.classes[a], molecule.classes[b])), round(known.orders[a, b], 3))
+        for a, b in lengths
+    }
+    groups: dict[tuple[float, ...], list[float]] = {}
+    for bond, length in lengths.items():
+        groups.setdefault(kinds[bond], []).append(length)
+    return {bond: float(np.mean(groups[kinds[bond]])) for bond in lengths}
 
 
 def _kept_turns(known: Surroundings, points: Array) -> Sequence[Turn]:
