@@ -9,9 +9,11 @@ from shapeshelf.report.model import Analysis, LengthRow
 from shapeshelf.report.rows import BondSet, bond_sets
 from shapeshelf.report.values import structure_value
 
-LENGTH_UNCERTAINTY_ANGSTROM = 0.03
-"""68 % half-width of the model's bond lengths against the geometries of ase.data.g2; measured
-by ``tests/benchmarks/``."""
+FORCE_FIELD = "MMFF94s"
+FORCE_FIELD_ANGSTROM = 0.01
+RADII_ANGSTROM = 0.04
+"""68 % half-widths of the model's bond lengths, from a force field and from covalent radii, as
+``tests/benchmarks/lengths_of_the_demo.py`` measures them against the demo's measured bonds."""
 
 
 def length_rows(
@@ -56,7 +58,7 @@ def _row(
         angstrom=structure_value(
             analysis.structure,
             row.mean_angstrom,
-            LENGTH_UNCERTAINTY_ANGSTROM,
+            FORCE_FIELD_ANGSTROM if FORCE_FIELD in analysis.structure.method else RADII_ANGSTROM,
             None,
             measurement,
         ),

@@ -69,7 +69,7 @@ def structure_value(
             measurement,
             supplied=in_structure,
         )
-    return best_value(in_structure, uncertainty, measurement)
+    return best_value(in_structure, uncertainty, measurement, model_name=structure.method)
 
 
 def most_precise(measurements: Iterable[Measurement]) -> Measurement | None:
