@@ -135,6 +135,7 @@ class ShapeshelfPlugin(BasePlugin[ShapeshelfOptions]):  # type: ignore[no-untype
         else:
             swap(self._staging)
             self._staging = None
+            LOG.info("The site stands in %s", config.site_dir)
 
     def on_build_error(self, *, error: Exception, **_: object) -> None:
         """Leave nothing of a build that failed."""

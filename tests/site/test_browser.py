@@ -32,6 +32,15 @@ def demo_visit(browser: Any, serve: Callable[[Path], str], demo: Path) -> Iterat
     yield from _visit(browser, serve(demo))
 
 
+@pytest.fixture(scope="module")
+def modules(browser: Any, serve: Callable[[Path], str], three: Path) -> Iterator[Any]:
+    """One page from which the lookup's modules are imported and asked."""
+    page = browser.new_page()
+    page.goto(serve(three))
+    yield page
+    page.close()
+
+
 @pytest.mark.parametrize(
     ("typed", "name"),
     [
@@ -158,11 +167,10 @@ def test_the_chosen_face_is_kept(visit: Visit) -> None:
     ],
 )
 def test_formulas_are_read_in_any_order_and_script(
-    visit: Visit, text: str, keys: list[str]
+    modules: Any, text: str, keys: list[str]
 ) -> None:
     """Compositions with alphabetical keys; charges as people write them."""
-    visit.page.goto(visit.home)
-    found = visit.page.evaluate(
+    found = modules.evaluate(
         """async (text) => {
           const { readFormula } = await import("./js/formula.js");
           return readFormula(text).map(({ key, charge }) => `${key}/${charge}`);
@@ -181,11 +189,10 @@ def test_formulas_are_read_in_any_order_and_script(
     ],
 )
 def test_slips_of_the_pen_are_counted(
-    visit: Visit, typed: str, held: str, limit: int, expected: int
+    modules: Any, typed: str, held: str, limit: int, expected: int
 ) -> None:
     """Swapped neighbours are one slip; the end of a longer name costs nothing."""
-    visit.page.goto(visit.home)
-    found = visit.page.evaluate(
+    found = modules.evaluate(
         """async ([typed, held, limit]) => {
           const { distance } = await import("./js/rank.js");
           return distance(typed, held, limit);
@@ -212,3 +219,35 @@ def _visit(browser: Any, home: str) -> Iterator[Visit]:
     )
     yield visit
     context.close()
+
+
+@pytest.mark.parametrize(
+    ("text", "expected"),
+    [
+        ("7783-60-0", "sf4"),
+        ("7783600", "sf4"),
+        ("CAS 7783-60-0", "sf4"),
+        ("TB-017", "sf4"),
+        ("tb017", "sf4"),
+        ("Sulphur tetrafluoride", "sf4"),
+        ("sulfur(IV) fluoride", "sf4"),
+        ("sulfer tetraflouride", "sf4"),
+        ("H2O", "water"),
+        ("OH2", "water"),
+        ("wat", "water"),
+        ("nitrate", "nitrate"),
+        ("NO3", "nitrate"),
+        ("[NO3]-", "nitrate"),
+    ],
+)
+def test_the_compound_meant_stands_first(modules: Any, text: str, expected: str) -> None:
+    """Identifiers in full, names with slips, formulas with and without their charge."""
+    found = modules.evaluate(
+        """async (text) => {
+          const { loadIndex } = await import("./js/index.js");
+          const { find } = await import("./js/rank.js");
+          return find(await loadIndex("./"), text, 1).map((row) => row.id);
+        }""",
+        text,
+    )
+    assert found == [expected]
