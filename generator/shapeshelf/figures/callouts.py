@@ -66,6 +66,8 @@ def symmetry_axes(one: Painted, orders: dict[int, int], linear: bool) -> Drawn:
 def caption(one: Painted, base: float) -> Drawn:
     """Return the view's name below it, its baseline at ``base``."""
     text = one.view.name.upper()
+    if one.view.auxiliary:
+        text += "  " + one.view.auxiliary.row.of.replace("-", "–")
     x = float((one.rings[:, 0].min() + one.rings[:, 0].max()) / 2)
     width = text_width(text, _CAPTION_SIZE)
     box = (x, base - 0.3 * _CAPTION_SIZE, width, _CAPTION_SIZE, 0.0)

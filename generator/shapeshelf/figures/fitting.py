@@ -14,6 +14,7 @@ Array = NDArray[np.float64]
 
 LARGEST_MOLECULE = 14
 _ROUNDS = 12
+_SETTLED_ANGSTROM = 1e-6
 _HOLD = 1e-3
 """Weight of staying where an atom is, against 1 for a measured value."""
 _MODEL_WEIGHT = 0.1
@@ -42,7 +43,10 @@ def drawn_coordinates(report: CompoundReport) -> Array:
         hold = _HOLD * np.eye(now.size)
         system = slopes.T @ slopes + hold**2
         step: Array = np.asarray(np.linalg.solve(system, slopes.T @ residuals), dtype=float)
-        now = now + _kept_symmetric(step.reshape(now.shape), moves)
+        moved = _kept_symmetric(step.reshape(now.shape), moves)
+        now = now + moved
+        if np.abs(moved).max() < _SETTLED_ANGSTROM:
+            break
     return now
 
 
