@@ -16,7 +16,9 @@ from shapeshelf.properties.charges import electronegativity
 from shapeshelf.structure.molecule import Molecule
 
 ALIKE = 1e-3
-"""Sum of unit vectors under which bonds cancel: rounding of a symmetrised structure."""
+"""Mean of unit vectors under which bonds cancel: rounding of a symmetrised structure."""
+NEARLY = 0.15
+"""Mean of unit vectors, as of a pair at 163 degrees, under which bonds nearly cancel."""
 AT_THE_END_ANGSTROM = 0.2
 """Atoms this near the furthest one make the negative end together."""
 CUBIC = ("T", "O", "I")
@@ -87,17 +89,20 @@ def _all_cancel(molecule: Molecule) -> str:
 
 
 def _cancelling_sets(molecule: Molecule, symmetry: Symmetry) -> list[str]:
-    """Return a sentence on the polar bonds that cancel among themselves, if any do."""
+    """Return sentences on the polar bonds that cancel, or nearly cancel, among themselves."""
     coordinates = np.array(symmetry.coordinates_angstrom)
-    names: list[str] = []
+    exact: list[str] = []
+    nearly: list[str] = []
     for members in _equivalent_bonds(molecule, symmetry):
         begin, end = members[0]
         if len(members) < 2 or not _differs(molecule, begin, end):
             continue
-        total = np.sum([unit(coordinates[b] - coordinates[a]) for a, b in members], axis=0)
-        if float(np.linalg.norm(total)) < ALIKE:
-            names.extend([_bond_name(molecule, begin, end)] * len(members))
-    return [f"Of the bonds, {_counted(names)} cancel."] if names else []
+        mean = np.mean([unit(coordinates[b] - coordinates[a]) for a, b in members], axis=0)
+        names = [_bond_name(molecule, begin, end)] * len(members)
+        if float(np.linalg.norm(mean)) < NEARLY:
+            (exact if float(np.linalg.norm(mean)) < ALIKE else nearly).extend(names)
+    said = [f"Of the bonds, {_counted(exact)} cancel."] if exact else []
+    return [*said, f"Of the bonds, {_counted(nearly)} nearly cancel."] if nearly else said
 
 
 def _equivalent_bonds(molecule: Molecule, symmetry: Symmetry) -> list[list[tuple[int, int]]]:
