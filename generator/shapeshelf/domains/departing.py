@@ -3,6 +3,7 @@
 from collections.abc import Callable
 from dataclasses import dataclass
 
+from shapeshelf.domains.bridges import is_bridge
 from shapeshelf.domains.graph import BondGraph
 from shapeshelf.domains.model import LewisCount
 from shapeshelf.reference import departures as known
@@ -144,7 +145,9 @@ def _alkaline_earth(here: Surroundings) -> KnownDeparture | None:
     return known.BENT_ALKALINE_EARTH.get((here.element, min(kinds)))
 
 
-def _bridging_hydrogen(here: Surroundings) -> KnownDeparture | None:
+def _three_centre_bridge(here: Surroundings) -> KnownDeparture | None:
+    if here.element == "C" and is_bridge(here.graph, here.atom):
+        return known.BRIDGING_CARBON
     bridging = here.element == "H" and len(here.ligands) == 2
     # Between electronegative atoms it is a hydrogen bond, and straight.
     shared = bridging and set(here.ligands) <= {"B", "Be", "Al", "Ga"}
@@ -184,7 +187,7 @@ RULES: tuple[Callable[[Surroundings], KnownDeparture | None], ...] = (
     _oxygen_bridge,
     _cumulated,
     _alkaline_earth,
-    _bridging_hydrogen,
+    _three_centre_bridge,
     _planar_radical,
     _five_without_pair,
     _trans_bent,

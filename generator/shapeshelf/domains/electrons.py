@@ -8,11 +8,12 @@ C2  The d electrons of a metal (groups 3 to 12, f block) are no domains and are 
 C3  An atom left with an odd electron by a plain bond to such a metal gives its pair instead.
 C4  A bridge drawn with plain bonds (chlorine with two, aluminium with four) is read as a pair
     given by the bridging atom.
-C5  A hydrogen with two bonds, and its neighbours, share three-centre pairs.
+C5  The middle of a three-centre bond, and its neighbours, share its pair (bridges.py).
 """
 
 from dataclasses import dataclass
 
+from shapeshelf.domains.bridges import is_bridge
 from shapeshelf.domains.graph import BondGraph, valence_electrons
 from shapeshelf.errors import AnalysisError
 from shapeshelf.reference.elements import ELEMENTS
@@ -118,7 +119,7 @@ def _read_bridges(graph: BondGraph, free: list[int], charges: list[int]) -> None
 
 def _without_debt(graph: BondGraph, atom: int, count: int) -> int:
     around = graph.neighbours(atom)
-    bridged = any(graph.elements[k] == "H" and graph.degree(k) > 1 for k in (atom, *around))
+    bridged = any(is_bridge(graph, k) for k in (atom, *around))
     if bridged or any(graph.metals[k] for k in around):
         return 0
     subject = f"{graph.elements[atom]} (atom {atom})"

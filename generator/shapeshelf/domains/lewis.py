@@ -13,6 +13,7 @@ C9  Single electrons on different atoms are parallel where no multiplicity is st
 
 from itertools import islice, product
 
+from shapeshelf.domains.bridges import HALF, half_bonds
 from shapeshelf.domains.delocalisation import pairs_in_pi
 from shapeshelf.domains.electrons import Drawing, draw, shell, strain
 from shapeshelf.domains.graph import BondGraph, graph_of
@@ -91,6 +92,8 @@ def _mean_orders(
 ) -> tuple[float, ...]:
     """C6."""
     orders = [float(order) for order in drawing.orders]
+    for n in half_bonds(graph):
+        orders[n] = HALF
     for system in systems:
         bonds = bonds_within(graph, system.atoms)
         for n in bonds:

@@ -121,9 +121,10 @@ def _bond_log_weight(element: str, domain: DomainTraits, parameters: Parameters)
 
 
 def _repelling_order(domain: DomainTraits) -> float:
+    """Return the order that counts in repulsion: below one for half of a three-centre bond."""
     if domain.element in CHALCOGENS and domain.neighbours == 1:
         return max(domain.order, TERMINAL_ORDER)
-    return max(domain.order, 1.0)
+    return domain.order
 
 
 def _length(element: str, domain: DomainTraits, domains: int) -> float:

@@ -134,8 +134,14 @@ def _filled_vacancy(
     row = ELEMENTS[graph.elements[end]]
     heavy = row.period >= 3 and (row.group or 0) >= 14
     joins = heavy and drawing.charges[end] > 0 and drawing.charges[start] < 0
+    if row.group == 17 and _strength(graph, start) < _strength(graph, end):
+        joins = False  # a halogen bridge, as in I2Cl6, gave that pair itself
     if not graph.metals[end] and (joins or lacks_pair(graph, drawing, end)):
         yield _altered(drawing, {bond: 1}, {start: -2}, {start: 1, end: -1})
+
+
+def _strength(graph: BondGraph, atom: int) -> float:
+    return ELEMENTS[graph.elements[atom]].electronegativity or 0.0
 
 
 def _altered(

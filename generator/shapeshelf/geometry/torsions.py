@@ -79,6 +79,8 @@ def _special(known: Surroundings, atoms: tuple[int, int, int, int], share: float
     bonds = ((a, b), (b, c), (c, d))
     if all(known.order(*bond) > MULTIPLE_ORDER for bond in bonds) and _in_six_ring(known, atoms):
         yield Turn(atoms, 30.0, 1, 0.0)
+    if a in known.neighbours[d] and any(known.order(*bond) < 1 for bond in bonds):
+        yield Turn(atoms, 30.0, 1, 0.0)
 
 
 def _is_anomeric(known: Surroundings, donor: int, centre: int, acceptor: int) -> bool:
@@ -114,9 +116,7 @@ def _rule(
 ) -> tuple[float, int, float] | None:
     """Return height, fold and minimum of the rule that applies to the bond b-c."""
     flat = (b in known.flat) + (c in known.flat)
-    paired = (b in known.paired and b not in known.flat) + (
-        c in known.paired and c not in known.flat
-    )
+    paired = _holds_pair_aside(known, b) + _holds_pair_aside(known, c)
     if flat == 2:
         return (60.0 if known.order(b, c) > DOUBLE_ORDER else 12.0, 2, 0.0)
     if flat == 1 and paired == 1:
@@ -126,6 +126,11 @@ def _rule(
     if flat == 0:
         return _staggered(known, b, c)
     return None
+
+
+def _holds_pair_aside(known: Surroundings, atom: int) -> bool:
+    """Tell whether a lone pair stands beside the bonds as in a pyramid or a bent centre."""
+    return atom in known.paired - known.flat and len(known.neighbours[atom]) <= 3
 
 
 def _staggered(known: Surroundings, b: int, c: int) -> tuple[float, int, float] | None:

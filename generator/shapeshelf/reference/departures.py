@@ -124,6 +124,13 @@ BRIDGING_HYDROGEN = KnownDeparture(
     "A-2",
     83.0,
 )
+BRIDGING_CARBON = KnownDeparture(
+    "The bridging carbon shares one pair with both metal atoms (three-centre bond): five "
+    "neighbours but four pairs, and a sharp angle between the metals (Al-C-Al about 75 degrees in "
+    "the dimer of trimethylaluminium)",
+    GREENWOOD,
+    "irregular",
+)
 PLANAR_RADICAL = KnownDeparture(
     "The single electron stays in a p orbital: the radical is planar, like methyl",
     HERZBERG,

@@ -4,6 +4,12 @@ from rdkit import Chem
 
 from shapeshelf.errors import StructureError
 from shapeshelf.reference.elements import ELEMENTS
+from shapeshelf.structure.bridge_rules import (
+    bridging_bonds,
+    is_electron_poor,
+    is_three_centre_bridge,
+    shared_debt,
+)
 from shapeshelf.structure.drawing import (
     Drawing,
     free_electrons,
@@ -109,13 +115,15 @@ def _electron_problem(drawing: Drawing, atom: int, element: str) -> str | None:
     if element == "H":
         return _hydrogen_problem(drawing, atom)
     free = free_electrons(drawing, atom)
-    if free < 0:
+    if is_three_centre_bridge(drawing, atom):
+        return None
+    if free < -shared_debt(drawing, atom):
         orders = sum(bond.order for bond in bonds if not bond.dative)
         return (
             f"has bonds of total order {orders} and charge {drawing.charges[atom]}; "
             f"that takes {-free} more electrons than it has"
         )
-    if free < 2 * given_pairs(drawing, atom) and not any(bond.order > 1 for bond in bonds):
+    if max(free, 0) < 2 * given_pairs(drawing, atom) and not any(bond.order > 1 for bond in bonds):
         return "gives away a lone pair that it does not have"
     return _shell_problem(drawing, atom, element, free)
 
@@ -145,8 +153,23 @@ def _metal_charge_problem(drawing: Drawing, atom: int, element: str, free: int) 
 
 def _hydrogen_problem(drawing: Drawing, atom: int) -> str | None:
     count = len(drawing.at[atom])
+    if count == 2 and _is_shared_hydrogen(drawing, atom):
+        return None
     if count > 1 or any(bond.order > 1 or bond.dative for bond in drawing.at[atom]):
         return f"has {count} bonds or a multiple one; hydrogen takes one single bond"
     if abs(drawing.charges[atom]) > 1 or (count and drawing.charges[atom]):
         return f"has charge {drawing.charges[atom]}, which its bonds do not allow"
     return None
+
+
+def _is_shared_hydrogen(drawing: Drawing, atom: int) -> bool:
+    """Tell whether two atoms hold the hydrogen: B-H-B without charge, F-H-F with its electrons."""
+    bonds = drawing.at[atom]
+    if any(bond.order > 1 or bond.dative for bond in bonds):
+        return False
+    if drawing.charges[atom] == 0:
+        return len(bridging_bonds(drawing, atom)) == 2
+    ends = [bond.other(atom) for bond in bonds]
+    return drawing.charges[atom] == -1 and not any(
+        is_electron_poor(drawing, end) or drawing.elements[end] == "H" for end in ends
+    )

@@ -12,7 +12,8 @@ N4  An atom of period 2 with more than an octet gives up one bond of a multiple 
     most electronegative neighbour, terminal ones first, takes the pair, N=O is N(+)-O(-).
 N5  An atom of period 2 with less than an octet and a positive charge takes a pair from a
     negative neighbour: C(+)-O(-) is C=O. So does an atom of groups 14 to 18 from period 3 on,
-    whatever its shell: S(+)-O(-) is S=O, P(+)-C(-) is P=C.
+    whatever its shell: S(+)-O(-) is S=O, P(+)-C(-) is P=C. A halogen takes none from a less
+    electronegative neighbour, to which it is a bridge.
 N6  A negative charge on an atom of groups 14 to 18, period 3 or later, goes to a doubly bonded
     terminal atom that is more electronegative: I(-)=O is I-O(-). So does that of a metal whose
     neighbours are terminal oxygens only: Mn(-)=O is Mn-O(-).
@@ -27,6 +28,10 @@ N9  A terminal carbon with a sextet takes a lone pair of its multiply bonded nei
 N10 A carbanion next to C=O, C=S or N(+)=O is an enolate: C(-)-C=O is C=C-O(-). At a positive
     nitrogen between two atoms the charge goes to the terminal nitrogen: N(-)-N(+)#N is
     N=N(+)=N(-), C(-)-N(+)#N is C=N(+)=N(-).
+N11 A bridge drawn with plain bonds and no charges is one by a lone pair: X-A with one bond too
+    many at X (groups 15 to 17) and an electron missing at A is X(+)-A(-), as in Al2Cl6.
+N12 A hydrogen or carbon that bridges electron-poor atoms (groups 1 to 13) by a three-centre bond
+    is neutral: B(-)-H(+)-B is B-H-B.
 
 Atoms are visited, and chosen where several would do, in the order of their colour classes: the
 order they stand in decides nothing.
@@ -44,6 +49,7 @@ from shapeshelf.structure.arrow_rules import (
     plain_anion_arrow,
     plain_main_group_arrow,
 )
+from shapeshelf.structure.bridge_rules import bridge_by_pair, neutral_bridge
 from shapeshelf.structure.charge_rules import (
     charge_along_chain,
     charge_to_electronegative,
@@ -65,6 +71,8 @@ Rule = Callable[[Drawing, int], bool]
 RULES: tuple[Rule, ...] = (
     plain_anion_arrow,
     plain_main_group_arrow,
+    bridge_by_pair,
+    neutral_bridge,
     arrow_onto_metal,
     carbonyl_arrow,
     octet_of_period_two,
@@ -78,7 +86,7 @@ RULES: tuple[Rule, ...] = (
 
 
 def normalise(drawing: Drawing) -> None:
-    """Bring ``drawing`` to the one normalised form, in place, by rules N1 to N10."""
+    """Bring ``drawing`` to the one normalised form, in place, by rules N1 to N12."""
     drawing.ranks = _ranks(drawing)
     order = sorted(range(len(drawing.elements)), key=lambda atom: drawing.ranks[atom])
     # Every rule lowers a count (arrows, charges, excess electrons) or moves a charge one way, so

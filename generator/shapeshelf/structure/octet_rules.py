@@ -112,8 +112,17 @@ def _gives_pair(drawing: Drawing, bond: DrawnBond, atom: int) -> bool:
         and bond.order < 3
         and drawing.charges[other] < 0
         and not is_metal(drawing.elements[other])
+        and not _bridges_heavier(drawing, atom, other)
         and free_electrons(drawing, other) - 2 * given_pairs(drawing, other) >= 2
     )
+
+
+def _bridges_heavier(drawing: Drawing, atom: int, other: int) -> bool:
+    """Tell whether ``atom`` is a halogen bridge that gave its pair to ``other``, as in I2Cl6."""
+    difference = electronegativity(drawing.elements[atom]) - electronegativity(
+        drawing.elements[other]
+    )
+    return ELEMENTS[drawing.elements[atom]].group == 17 and difference > 0
 
 
 def _partner_rank(drawing: Drawing, other: int) -> tuple[bool, float, int]:
