@@ -1,4 +1,8 @@
-"""The command line: parse, call, print, exit status. 0 fine, 1 problems in the input, 2 usage."""
+"""The command line: parse, call, print, exit status. 0 fine, 1 problems in the input, 2 usage.
+
+Each command imports what it needs when it runs: reading RDKit and mkdocs takes longer than
+``cited`` may take in a pre-commit hook.
+"""
 
 import argparse
 import json
@@ -7,11 +11,7 @@ from collections.abc import Iterable, Sequence
 from pathlib import Path
 
 from shapeshelf import __version__
-from shapeshelf.errors import CatalogueError, ShapeshelfError, UsageError
-from shapeshelf.report.building import report_on_structure
-from shapeshelf.report.checking import report_on_catalogue
-from shapeshelf.report.json import report_json
-from shapeshelf.report.text import report_text
+from shapeshelf.errors import CatalogueError, Problem, ShapeshelfError, UsageError
 
 FINE, PROBLEMS, WRONG_USAGE = 0, 1, 2
 STANDARD_INPUT = "-"
@@ -52,7 +52,24 @@ def _parser() -> argparse.ArgumentParser:
         "structure", help="a SMILES string, a .xyz, .mol or .sdf file, or - for one a line"
     )
     assess.add_argument("--json", action="store_true")
+    _linking_commands(commands)
     return parser
+
+
+def _linking_commands(commands: "argparse._SubParsersAction[argparse.ArgumentParser]") -> None:
+    draft = _command(commands, "draft", _draft, "write an entry to fill in, or one a line of a CSV")
+    draft.add_argument("structure", help="a SMILES, a .xyz, .mol or .sdf file, or a .csv of many")
+    draft.add_argument("--id", help="the permanent address; made from the name if left out")
+    draft.add_argument("--name")
+    cited = _command(commands, "cited", _cited, "hold protocols against the present values")
+    cited.add_argument("paths", nargs="+", type=Path, metavar="PATH")
+    cited.add_argument("--values", type=Path, help="values.json of a built site")
+    cited.add_argument("--site", action="append", default=[], metavar="URL")
+    release = _command(commands, "release", _release, "publish the present values")
+    for command in (draft, release):
+        command.add_argument("--catalogue", type=Path, default=Path("compounds"))
+    for command in (draft, cited, release):
+        command.add_argument("--json", action="store_true")
 
 
 def _command(
@@ -67,24 +84,31 @@ def _command(
 
 
 def _build(options: argparse.Namespace) -> int:
-    from shapeshelf.plugin import build_site  # mkdocs takes 0.3 s to load; assess needs none
+    from shapeshelf.plugin import build_site
 
     build_site(options.config, strict=options.strict)
     return FINE
 
 
 def _serve(options: argparse.Namespace) -> int:
-    from shapeshelf.plugin import serve_site  # as above
+    from shapeshelf.plugin import serve_site
 
     serve_site(options.config, options.address)
     return FINE
 
 
 def _check(options: argparse.Namespace) -> int:
+    from shapeshelf.linking.releasing import present_values
+    from shapeshelf.linking.telling import withdrawn_lines
+    from shapeshelf.report.checking import report_on_catalogue
+
     catalogue, reports = report_on_catalogue(options.catalogue)
+    present = present_values(catalogue, reports)
     if options.json:
-        _print_json({"problems": [], "compounds": len(reports)})
+        withdrawn = sorted(present.published.withdrawn)
+        _print_json({"problems": [], "compounds": len(reports), "withdrawn": withdrawn})
     else:
+        print(*withdrawn_lines(present), sep="\n", end="\n" if present.published.withdrawn else "")
         print(f"{len(reports)} compounds, {len(catalogue.sources)} sources: no problems")
     return FINE
 
@@ -92,6 +116,10 @@ def _check(options: argparse.Namespace) -> int:
 def _assess(options: argparse.Namespace) -> int:
     if options.structure == STANDARD_INPUT:
         return _assess_lines(sys.stdin, options.json)
+    from shapeshelf.report.building import report_on_structure
+    from shapeshelf.report.json import report_json
+    from shapeshelf.report.text import report_text
+
     report = report_on_structure(options.structure)
     if options.json:
         _print_json(report_json(report))
@@ -101,6 +129,10 @@ def _assess(options: argparse.Namespace) -> int:
 
 
 def _assess_lines(lines: Iterable[str], as_json: bool) -> int:
+    from shapeshelf.report.building import report_on_structure
+    from shapeshelf.report.json import report_json
+    from shapeshelf.report.text import report_text
+
     status = FINE
     for line in lines:
         text = line.strip()
@@ -117,6 +149,49 @@ def _assess_lines(lines: Iterable[str], as_json: bool) -> int:
     return status
 
 
+def _draft(options: argparse.Namespace) -> int:
+    from shapeshelf.linking.draft_table import draft_one_or_many
+    from shapeshelf.linking.drafting import Wanted, taken_in
+
+    wanted = Wanted(options.structure, options.name, options.id)
+    drafted = draft_one_or_many(wanted, options.catalogue, taken_in(options.catalogue))
+    if options.json:
+        written = [str(path) for path in drafted.written]
+        _print_json({"written": written, "problems": _problem_rows(drafted.problems)})
+    else:
+        print(*drafted.written, sep="\n")
+        print(*drafted.problems, sep="\n", end="\n" if drafted.problems else "", file=sys.stderr)
+    return PROBLEMS if drafted.problems else FINE
+
+
+def _cited(options: argparse.Namespace) -> int:
+    from shapeshelf.linking.citing import check_paths, finding_json, present_reference
+
+    reference, notes = present_reference(options.values, options.site)
+    checked = check_paths(reference, options.paths)
+    if options.json:
+        rows = [finding_json(finding) for finding in checked.findings]
+        _print_json({"links": checked.links, "numbers": checked.numbers, "findings": rows})
+    else:
+        print(*notes, sep="\n", end="\n" if notes else "", file=sys.stderr)
+        print(*checked.findings, sep="\n", end="\n" if checked.findings else "")
+    return PROBLEMS if checked.findings else FINE
+
+
+def _release(options: argparse.Namespace) -> int:
+    from shapeshelf.linking.releasing import release
+    from shapeshelf.linking.telling import change_lines, summary, withdrawn_lines
+
+    present = release(options.catalogue)
+    changes = list(change_lines(present.comparison))
+    if options.json:
+        withdrawn = sorted(present.published.withdrawn)
+        _print_json({"changes": changes, "withdrawn": withdrawn, "summary": summary(present)})
+    else:
+        print(*changes, *withdrawn_lines(present), summary(present), sep="\n")
+    return FINE
+
+
 def _print_failure(text: str, message: str, as_json: bool) -> None:
     if as_json:
         _print_json({"input": text, "error": message})
@@ -131,10 +206,13 @@ def _print_json(value: object) -> None:
 def _as_problems(error: CatalogueError, options: argparse.Namespace) -> str:
     if not getattr(options, "json", False):
         return str(error)
-    fields = ("file", "line", "field", "message")
-    rows = [{name: str(getattr(p, name)) for name in fields} for p in error.problems]
-    _print_json({"problems": rows})
+    _print_json({"problems": _problem_rows(error.problems)})
     return ""
+
+
+def _problem_rows(problems: Iterable[Problem]) -> list[dict[str, str]]:
+    fields = ("file", "line", "field", "message")
+    return [{name: str(getattr(problem, name)) for name in fields} for problem in problems]
 
 
 def _refuse(message: str, status: int) -> int:

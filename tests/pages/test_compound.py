@@ -34,7 +34,12 @@ class Reader(HTMLParser):
     @property
     def is_led_astray(self) -> bool:
         handlers = [name for _, attrs in self.tags for name in attrs if name.startswith("on")]
-        return bool(handlers) or bool({"script", "img", "iframe"} & {tag for tag, _ in self.tags})
+        foreign = [
+            tag
+            for tag, attrs in self.tags
+            if tag in ("script", "img", "iframe") and attrs.get("type") != "application/ld+json"
+        ]
+        return bool(handlers) or bool(foreign)
 
     @property
     def ids(self) -> list[str]:

@@ -9,7 +9,8 @@ from shapeshelf.structure.writing import write_sdf, write_xyz
 
 SEED = 3
 KEYED = ["CCO", "FS(F)(F)F", "FCl(F)F", "[O-][N+](=O)[O-]", "C[C@@H](C(=O)O)N", "O=S(=O)(O)O",
-         "c1ccncc1", "F/N=N\\F", "O=Cl=O", "[CH3]", "F[Xe](F)(F)F"]  # fmt: skip
+         "c1ccncc1", "F/N=N\\F", "O=Cl=O", "[CH3]", "F[Xe](F)(F)F",
+         "[Ni](<-[C-]#[O+])(<-[C-]#[O+])(<-[C-]#[O+])<-[C-]#[O+]", "[BH3]<-[NH3]"]  # fmt: skip
 
 
 @pytest.mark.parametrize("smiles", KEYED)

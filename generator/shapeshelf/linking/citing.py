@@ -1,15 +1,23 @@
 """Protocols against the present values: every link to the reference, every number quoted."""
 
-from collections.abc import Iterator, Mapping, Sequence
+from collections.abc import Iterable, Iterator, Mapping, Sequence
 from dataclasses import dataclass
 from pathlib import Path
 
+from shapeshelf.errors import UsageError
 from shapeshelf.linking.attribution import NamesOf, SectionOf, quotes_in
 from shapeshelf.linking.documents.model import BARE, Block, Link
-from shapeshelf.linking.documents.opening import document_blocks
+from shapeshelf.linking.documents.opening import document_blocks, document_paths
 from shapeshelf.linking.judging import judge
-from shapeshelf.linking.published import Published
+from shapeshelf.linking.published import (
+    RELEASED_FILE,
+    VALUES_FILE,
+    Published,
+    read_published,
+)
 from shapeshelf.linking.targets import Target, find_target
+
+SITE, CATALOGUE = "site", "compounds"
 
 
 @dataclass(frozen=True, slots=True)
@@ -107,6 +115,56 @@ class Reference:
                     Finding(path, line, verdict.kind, quote.link.address, quoted, verdict.message)
                 )
         return count, findings
+
+
+def check_paths(reference: Reference, paths: Iterable[Path]) -> Checked:
+    """Return what all documents at the paths and below them say together."""
+    found = [reference.check(path) for given in paths for path in document_paths(given)]
+    return Checked(
+        citations=tuple(item for one in found for item in one.citations),
+        links=sum(one.links for one in found),
+        numbers=sum(one.numbers for one in found),
+        findings=tuple(item for one in found for item in one.findings),
+    )
+
+
+def present_reference(
+    values: Path | None, sites: Sequence[str], folder: Path = Path()
+) -> tuple[Reference, tuple[str, ...]]:
+    """Return the reference to check by, and notes on how far it can be trusted.
+
+    ``values`` is the ``values.json`` of a built site; left out, that of ``site/`` below
+    ``folder``, else what was last released. Raises UsageError where there is neither.
+    """
+    built, released = folder / SITE / VALUES_FILE, folder / CATALOGUE / RELEASED_FILE
+    if values is not None:
+        return Reference(read_published(values), sites), ()
+    if built.is_file():
+        late = _newer_entry(folder / CATALOGUE, built.stat().st_mtime)
+        note = f"{late} has changed since the site was built; build again to check by it"
+        return Reference(read_published(built), sites), (note,) if late else ()
+    if released.is_file():
+        note = f"no built site; checking by the release in {released}"
+        return Reference(read_published(released), sites), (note,)
+    raise UsageError(f"neither {built} nor {released} is there; build the site, or give --values")
+
+
+def finding_json(finding: Finding) -> dict[str, object]:
+    """Return a finding as a script reads it."""
+    return {
+        "file": str(finding.file),
+        "line": finding.line,
+        "kind": finding.kind,
+        "link": finding.address,
+        "quoted": finding.quoted,
+        "message": finding.message,
+    }
+
+
+def _newer_entry(root: Path, built: float) -> Path | None:
+    """Return an entry that was written after the site was built."""
+    entries = (path for path in sorted(root.rglob("*.yml")) if path.stat().st_mtime > built)
+    return next(entries, None)
 
 
 def _citations(path: Path, targets: Mapping[Link, Target]) -> Iterator[Citation]:

@@ -8,6 +8,11 @@ SOURCES = "sources/"
 PROTOCOLS = "protocols/"
 COMPOUNDS = "compounds/"
 METHODS = "methods/"
+COMPARE = "compare/"
+START = "start/"
+GLOSSARY = "glossary/"
+CHANGES = "changes/"
+DESK = "catalogue/"
 
 
 def compound_address(compound_id: str) -> str:

@@ -15,6 +15,7 @@ PARTS = (
     "tables.css",
     "lists.css",
     "lookup.css",
+    "links.css",
     "print.css",
 )
 BELOW = "assets/stylesheets/main.*.min.css"

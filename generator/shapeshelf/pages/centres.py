@@ -8,6 +8,7 @@ from markupsafe import Markup
 from shapeshelf.catalogue.model import Source
 from shapeshelf.domains.model import TraceStep
 from shapeshelf.pages.addresses import shape_address
+from shapeshelf.pages.anchors import value_anchors
 from shapeshelf.pages.typesetting import (
     hybrid_markup,
     label_markup,
@@ -19,6 +20,7 @@ from shapeshelf.report.model import AngleRow, CentreReport, CompoundReport
 
 PLACEMENTS_SHOWN = 3
 MEASURES_SHOWN = 3
+LABELS_SPELLED_OUT = 3
 
 
 @dataclass(frozen=True, slots=True)
@@ -30,6 +32,8 @@ class AngleView:
     count: int
     ideal: str
     value: ValueView
+    anchor: str = ""
+    """On the compound's page; empty where the row stands on another."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -77,18 +81,16 @@ class CentreView:
     trace: tuple[TraceStep, ...]
     placements: tuple[tuple[str, str], ...]
     """(shape, energy above the best) of the placements that were weighed, best first."""
-
-    @property
-    def title(self) -> str:
-        """Return ``S1``, or ``C1 to C6`` style lists of equivalent centres."""
-        if len(self.labels) <= 3:
-            return ", ".join(self.labels)
-        return f"{self.labels[0]} … {self.labels[-1]} ({len(self.labels)})"
+    title: str
+    """``S1``, ``C1, C2``, or first and last of many."""
+    key_angle: AngleView | None
+    """The angle that stands for the centre: a measured one if there is one."""
 
 
 def centre_views(report: CompoundReport, sources: Mapping[str, Source]) -> tuple[CentreView, ...]:
     """Return one view a set of equivalent centres, in atom order."""
     by_atom = {centre.centre.atom: centre for centre in report.centres}
+    anchors = value_anchors(report)
     seen: set[int] = set()
     views = []
     for centre in report.centres:
@@ -96,11 +98,11 @@ def centre_views(report: CompoundReport, sources: Mapping[str, Source]) -> tuple
             continue
         members = [by_atom[atom] for atom in centre.equivalent if atom in by_atom] or [centre]
         seen.update(member.centre.atom for member in members)
-        views.append(_centre_view(members, sources))
+        views.append(_centre_view(members, sources, anchors))
     return tuple(views)
 
 
-def angle_view(row: AngleRow, sources: Mapping[str, Source]) -> AngleView:
+def angle_view(row: AngleRow, sources: Mapping[str, Source], anchor: str = "") -> AngleView:
     """Return one row of the table of angles."""
     return AngleView(
         label=label_markup(row.of),
@@ -108,12 +110,18 @@ def angle_view(row: AngleRow, sources: Mapping[str, Source]) -> AngleView:
         count=len(row.members),
         ideal="" if row.ideal_degrees is None else _ideal_text(row.ideal_degrees),
         value=value_view(row.degrees, DEGREE, sources),
+        anchor=anchor,
     )
 
 
-def _centre_view(members: Sequence[CentreReport], sources: Mapping[str, Source]) -> CentreView:
+def _centre_view(
+    members: Sequence[CentreReport],
+    sources: Mapping[str, Source],
+    anchors: Mapping[tuple[int, ...], str],
+) -> CentreView:
     report, centre = members[0], members[0].centre
     deviation = report.deviation
+    angles = tuple(angle_view(row, sources) for row in report.angles)
     return CentreView(
         anchors=tuple(f"centre-{member.centre.label}" for member in members),
         labels=tuple(member.centre.label for member in members),
@@ -126,7 +134,7 @@ def _centre_view(members: Sequence[CentreReport], sources: Mapping[str, Source])
         bonded=centre.bonded,
         lone_pairs=centre.lone_pairs,
         single_electrons=centre.single_electrons,
-        angles=tuple(angle_view(row, sources) for row in report.angles),
+        angles=tuple(angle_view(row, sources, anchors.get(row.atoms, "")) for row in report.angles),
         hybridisation=_hybridisation_view(report),
         measures=tuple(
             (symbol, number_text(measure, 2))
@@ -137,7 +145,15 @@ def _centre_view(members: Sequence[CentreReport], sources: Mapping[str, Source])
         fluxional=centre.fluxional,
         trace=centre.trace,
         placements=_placements(report),
+        title=_title([member.centre.label for member in members]),
+        key_angle=min(angles, key=lambda angle: angle.value.basis != "measured", default=None),
     )
+
+
+def _title(labels: Sequence[str]) -> str:
+    if len(labels) <= LABELS_SPELLED_OUT:
+        return ", ".join(labels)
+    return f"{labels[0]} … {labels[-1]} ({len(labels)})"
 
 
 def _taus(report: CentreReport) -> tuple[tuple[str, str], ...]:

@@ -12,8 +12,10 @@ from shapeshelf.pages.addresses import (
     shape_address,
     source_anchor,
 )
+from shapeshelf.pages.anchors import value_anchors
 from shapeshelf.pages.centres import AngleView, CentreView, angle_view, centre_views
 from shapeshelf.pages.history import Change
+from shapeshelf.pages.model import Standing
 from shapeshelf.pages.properties import (
     PolarityView,
     SpectraView,
@@ -35,6 +37,7 @@ from shapeshelf.pages.typesetting import (
 from shapeshelf.pages.values import ANGSTROM, ValueView, bases_held, citation, value_view
 from shapeshelf.report.model import Caution, CompoundReport
 
+NOWHERE = Standing()
 KEY_ANGLES = 4
 """As many as the title block holds without pushing the cautions off the first screen."""
 KEY_CENTRES = 6
@@ -51,6 +54,8 @@ class LengthView:
     count: int
     order: str
     value: ValueView
+    plain_label: str
+    anchor: str
 
 
 @dataclass(frozen=True, slots=True)
@@ -85,7 +90,6 @@ class CompoundView:
     address: str
     name: str
     formula: Markup
-    plain_formula: str
     entry: Entry
     shape: str | None
     shape_words: str
@@ -112,20 +116,24 @@ class CompoundView:
     """(title, address) of every protocol that uses the compound."""
     revision: str
     change: Change | None
-    point_group: str
     angle_bases: tuple[str, ...]
     """The bases that any angle of the compound has: columns of the table."""
     length_bases: tuple[str, ...]
-
-    @property
-    def description(self) -> str:
-        """Return one plain sentence for search engines and previews."""
-        group = point_group_text(self.point_group)
-        return f"{self.name} ({self.plain_formula}): {self.shape_words}, {group}."
+    url: str | None
+    """Absolute, where the site's address is known."""
+    news: Mapping[str, str]
+    """By anchor: what a value was when it was last released."""
+    unreleased: bool
+    description: str
+    """One plain sentence for search engines and previews."""
 
 
 def compound_view(
-    report: CompoundReport, catalogue: Catalogue, revision: str, change: Change | None = None
+    report: CompoundReport,
+    catalogue: Catalogue,
+    revision: str,
+    change: Change | None = None,
+    standing: Standing = NOWHERE,
 ) -> CompoundView:
     """Return the values of a compound page; the report must be that of a catalogue entry."""
     entry, molecule = report.entry, report.molecule
@@ -139,7 +147,6 @@ def compound_view(
         address=compound_address(entry.id),
         name=entry.name,
         formula=formula_markup(molecule.formula, molecule.charge),
-        plain_formula=formula_text(molecule.formula, molecule.charge),
         entry=entry,
         shape=report.shape,
         shape_words=shape_words(report),
@@ -169,9 +176,11 @@ def compound_view(
         ),
         revision=revision,
         change=change,
-        point_group=report.point_group,
         angle_bases=bases_held(angle.value for centre in centres for angle in centre.angles),
         length_bases=bases_held(length.value for length in lengths),
+        url=standing.page_url(compound_address(entry.id)),
+        news=standing.news.get(entry.id, {}),
+        unreleased=entry.id in standing.unreleased,
     )
 
 
@@ -192,6 +201,12 @@ def full_citation(source: Source) -> str:
     return f"{source.authors} ({source.year}). {title}.{place}".strip()
 
 
+def _description(report: CompoundReport) -> str:
+    formula = formula_text(report.molecule.formula, report.molecule.charge)
+    group = point_group_text(report.point_group)
+    return f"{report.name} ({formula}): {shape_words(report)}, {group}."
+
+
 def _key_angles(report: CompoundReport, sources: Mapping[str, Source]) -> tuple[AngleView, ...]:
     """Return the angles of the only kind of centre, measured ones first."""
     rows = sorted(report.centres[0].angles, key=lambda row: row.degrees.basis != "measured")
@@ -205,9 +220,12 @@ def _key_centres(centres: tuple[CentreView, ...]) -> tuple[CentreView, ...]:
 
 
 def _length_views(report: CompoundReport, sources: Mapping[str, Source]) -> tuple[LengthView, ...]:
+    anchors = value_anchors(report)
     return tuple(
         LengthView(
             label=label_markup(row.of),
+            plain_label=row.of,
+            anchor=anchors[row.atoms],
             count=len(row.members),
             order=f"{round(row.bond_order, 2):g}",
             value=value_view(row.angstrom, ANGSTROM, sources),

@@ -1,27 +1,27 @@
-"""The index that the lookup reads: one list a field, which compresses better than rows."""
+"""The index that the lookup reads, in two files: what a compound is found by, and what the
+lookup page filters by. One list a field, and words by number, which compresses better than rows.
+"""
 
 import json
-from collections import Counter
-from collections.abc import Sequence
+from collections.abc import Callable, Iterable, Sequence
 
-from shapeshelf.pages.addresses import shape_address
-from shapeshelf.pages.compound import shape_words
-from shapeshelf.pages.properties import polarity_word
-from shapeshelf.pages.typesetting import formula_text, point_group_text
-from shapeshelf.pages.values import DEGREE, value_view
+from shapeshelf.pages.lookup_rows import LookupRow, lookup_row
 from shapeshelf.report.model import CompoundReport
 
-SCHEMA = 1
+SCHEMA = 2
+INDEX = "lookup-index"
+FACETS = "lookup-facets"
+KEY_BLOCK = 14
+"""Letters of an InChIKey's first block, which alone says what is bonded to what."""
+USUAL_KEY_END = "-UHFFFAOYSA-N"
+"""Of a neutral molecule without stereo or isotope layers; left out, for most keys end so."""
+
+Entry = dict[str, object]
 
 
-def lookup_index(reports: Sequence[CompoundReport]) -> bytes:
-    """Return the index as compact JSON: ``compounds`` by field, ``shapes`` by field."""
-    index = {
-        "schema": SCHEMA,
-        "compounds": _columns([_compound_row(report) for report in by_name(reports)]),
-        "shapes": _columns(_shape_rows(reports)),
-    }
-    return json.dumps(index, ensure_ascii=False, separators=(",", ":")).encode()
+def lookup_rows(reports: Sequence[CompoundReport]) -> list[LookupRow]:
+    """Return the rows of all reports in the order of a reader's alphabet."""
+    return [lookup_row(report) for report in by_name(reports)]
 
 
 def by_name(reports: Sequence[CompoundReport]) -> list[CompoundReport]:
@@ -35,40 +35,107 @@ def shapes_held(report: CompoundReport) -> tuple[str, ...]:
     return tuple(dict.fromkeys([*own, *(c.shape for c in report.centres if c.shape)]))
 
 
-def _compound_row(report: CompoundReport) -> dict[str, object]:
-    entry = report.entry
-    assert entry is not None
-    return {
-        "id": entry.id,
-        "name": entry.name,
-        "also": list(entry.also),
-        "formula": formula_text(report.molecule.formula, report.molecule.charge),
-        "cas": entry.cas or "",
-        "code": entry.code or "",
-        "shape": shape_words(report),
-        "group": point_group_text(report.point_group),
-        "angle": _first_angle(report),
-        "polarity": polarity_word(report),
-        "tags": list(entry.tags),
+def lookup_index(
+    rows: Sequence[LookupRow], entries: Sequence[Entry] = (), glyphs: dict[str, str] | None = None
+) -> bytes:
+    """Return what is found: compounds by field, and ``entries``, all that is no compound.
+
+    ``glyphs`` are our own small drawings by the name of the shape.
+    """
+    shapes, groups = _Words(), _Words()
+    polarities, tags, glyph_names = _Words(), _Words(), _Words()
+    compounds = {
+        "id": [row.id for row in rows],
+        "name": [row.name for row in rows],
+        "also": [list(row.also) or 0 for row in rows],
+        "formula": [row.formula for row in rows],
+        "charge": [row.charge for row in rows],
+        "cas": [row.cas for row in rows],
+        "code": [row.code for row in rows],
+        "spelling": [row.spelling for row in rows],
+        "smiles": [row.smiles for row in rows],
+        "key": [row.inchikey.removesuffix(USUAL_KEY_END) for row in rows],
+        "shape": [shapes.number(row.shape) for row in rows],
+        "glyph": [glyph_names.number(row.glyph) for row in rows],
+        "group": [groups.number(row.group) for row in rows],
+        "angle": [row.angle for row in rows],
+        "polarity": [polarities.number(row.polarity) for row in rows],
+        "tags": [[tags.number(tag) for tag in row.tags] or 0 for row in rows],
     }
+    return _json(
+        {
+            "schema": SCHEMA,
+            "compounds": compounds,
+            "words": {
+                "shape": shapes.known,
+                "glyph": glyph_names.known,
+                "group": groups.known,
+                "polarity": polarities.known,
+                "tags": tags.known,
+            },
+            "entries": list(entries),
+            "glyphs": glyphs or {},
+        }
+    )
 
 
-def _first_angle(report: CompoundReport) -> str:
-    """Return the angle that stands for a compound of one kind of centre, measured if it can be."""
-    kinds = {min(centre.equivalent, default=centre.centre.atom) for centre in report.centres}
-    if len(kinds) != 1:
-        return ""
-    rows = sorted(report.centres[0].angles, key=lambda row: row.degrees.basis != "measured")
-    return value_view(rows[0].degrees, DEGREE, {}).text if rows else ""
+def lookup_facets(rows: Sequence[LookupRow]) -> bytes:
+    """Return what is filtered by, in the order of ``lookup_index``'s compounds."""
+    sites, hazards, bases = _Words(), _Words(), _Words()
+    corners, nuclei = _Words(), _Words()
+    compounds = {
+        "sites": [[sites.number(site) for site in row.sites] for row in rows],
+        "hazards": [[hazards.number(code) for code in row.hazards] or 0 for row in rows],
+        "bases": [[bases.number(basis) for basis in row.bases] for row in rows],
+        "corners": [
+            _flat((corners.number(corner), tenths) for corner, tenths in row.corners)
+            for row in rows
+        ],
+        "dipole": [row.dipole_debye for row in rows],
+        "mass": [row.molar_mass_g_mol for row in rows],
+        "stretches": [row.infrared_stretches for row in rows],
+        "signals": [
+            _flat((nuclei.number(nucleus), count) for nucleus, count in row.signals) or 0
+            for row in rows
+        ],
+    }
+    words = {
+        "sites": [[s.shape, s.bonded, s.lone_pairs, s.hybridisation] for s in sites.known],
+        "hazards": hazards.known,
+        "bases": bases.known,
+        "corners": corners.known,
+        "nuclei": nuclei.known,
+    }
+    return _json({"schema": SCHEMA, "compounds": compounds, "words": words})
 
 
-def _shape_rows(reports: Sequence[CompoundReport]) -> list[dict[str, object]]:
-    counted = Counter(shape for report in reports for shape in shapes_held(report))
-    return [
-        {"name": shape, "address": shape_address(shape), "count": count}
-        for shape, count in sorted(counted.items())
-    ]
+def as_script(name: str, data: bytes) -> bytes:
+    """Return JSON as a script that hands it over: pages opened as files may not fetch.
+
+    The script calls ``shapeshelfData.deliver(NAME, TEXT)`` with the JSON as one string.
+    """
+    text = json.dumps(data.decode("utf-8"), ensure_ascii=False)
+    safe = text.replace("\u2028", "\\u2028").replace("\u2029", "\\u2029")
+    return f"shapeshelfData.deliver({json.dumps(name)},{safe});\n".encode()
 
 
-def _columns(rows: Sequence[dict[str, object]]) -> dict[str, list[object]]:
-    return {key: [row[key] for row in rows] for key in rows[0]} if rows else {}
+class _Words:
+    """Gives each distinct thing the next number, in the order in which they are met."""
+
+    def __init__(self) -> None:
+        self._numbers: dict[object, int] = {}
+
+    def number(self, thing: object) -> int:
+        return self._numbers.setdefault(thing, len(self._numbers))
+
+    @property
+    def known(self) -> list:
+        return list(self._numbers)
+
+
+def _flat(pairs: Iterable[tuple[int, int]]) -> list[int]:
+    return [number for pair in pairs for number in pair]
+
+
+def _json(content: object) -> bytes:
+    return json.dumps(content, ensure_ascii=False, separators=(",", ":")).encode()

@@ -1,7 +1,7 @@
 """What the pages room hands over: pages and files of the site, each with its address."""
 
-from collections.abc import Callable
-from dataclasses import dataclass
+from collections.abc import Callable, Mapping
+from dataclasses import dataclass, field
 
 
 @dataclass(frozen=True, slots=True)
@@ -20,6 +20,22 @@ class SitePage:
     moved_to: str | None = None
     """For an earlier address: where the page stands now, from the site's root."""
     revision: str | None = None
+
+
+@dataclass(frozen=True, slots=True)
+class Standing:
+    """What a compound's page tells of its place among the published ones."""
+
+    site_url: str | None = None
+    """Address of the site's root, where the configuration names one; ends in a stroke."""
+    news: Mapping[str, Mapping[str, str]] = field(default_factory=dict)
+    """By id and anchor: what a value was when it was last released."""
+    unreleased: frozenset[str] = frozenset()
+    """Ids that no release holds yet, where there is a release."""
+
+    def page_url(self, address: str) -> str | None:
+        """Return the absolute address of a page, ``None`` where the site's is not known."""
+        return None if self.site_url is None else self.site_url + address
 
 
 @dataclass(frozen=True, slots=True)

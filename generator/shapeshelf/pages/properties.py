@@ -6,8 +6,9 @@ from dataclasses import dataclass
 
 from markupsafe import Markup
 
-from shapeshelf.catalogue.model import Measurement, Quantity, Source
+from shapeshelf.catalogue.model import Measurement, Source
 from shapeshelf.pages.addresses import source_anchor
+from shapeshelf.pages.anchors import frequency_anchors
 from shapeshelf.pages.typesetting import (
     NO_BREAK,
     number_text,
@@ -71,6 +72,7 @@ class FrequencyView:
     phase: str
     source_text: str
     source_anchor: str
+    anchor: str
 
 
 @dataclass(frozen=True, slots=True)
@@ -200,13 +202,12 @@ def _bond_polarities(report: CompoundReport) -> tuple[BondPolarityView, ...]:
 def _frequencies(
     report: CompoundReport, sources: Mapping[str, Source]
 ) -> tuple[FrequencyView, ...]:
-    measured = report.entry.measured if report.entry else ()
     return tuple(
-        _frequency_view(item, sources) for item in measured if item.quantity is Quantity.FREQUENCY
+        _frequency_view(item, anchor, sources) for item, anchor in frequency_anchors(report)
     )
 
 
-def _frequency_view(item: Measurement, sources: Mapping[str, Source]) -> FrequencyView:
+def _frequency_view(item: Measurement, anchor: str, sources: Mapping[str, Source]) -> FrequencyView:
     plus_minus = "" if item.uncertainty is None else f"{NO_BREAK}±{NO_BREAK}{item.uncertainty:g}"
     return FrequencyView(
         of=item.of or "",
@@ -214,4 +215,5 @@ def _frequency_view(item: Measurement, sources: Mapping[str, Source]) -> Frequen
         phase=item.phase or "",
         source_text=citation(sources[item.source]),
         source_anchor=source_anchor(item.source),
+        anchor=anchor,
     )

@@ -8,12 +8,13 @@ from pathlib import Path
 
 from shapeshelf.catalogue.model import Catalogue, Entry
 from shapeshelf.pages import addresses
-from shapeshelf.pages.compound import CompoundView, compound_view, source_view
+from shapeshelf.pages.compound import NOWHERE, CompoundView, compound_view, source_view
 from shapeshelf.pages.drawings import compound_figures, shape_figure, shape_glyph
 from shapeshelf.pages.history import Change, last_changes
 from shapeshelf.pages.home import CompoundLine, compound_line, home_view
 from shapeshelf.pages.lookup_index import by_name, lookup_index
-from shapeshelf.pages.model import SiteFile, SitePage
+from shapeshelf.pages.json_ld import json_ld
+from shapeshelf.pages.model import SiteFile, SitePage, Standing
 from shapeshelf.pages.protocols import (
     ProtocolView,
     document_markup,
@@ -31,7 +32,9 @@ REVISION_DIGITS = 8
 Reports = Sequence[CompoundReport]
 
 
-def site_pages(catalogue: Catalogue, reports: Reports, site_name: str) -> Iterator[SitePage]:
+def site_pages(
+    catalogue: Catalogue, reports: Reports, site_name: str, standing: Standing = NOWHERE
+) -> Iterator[SitePage]:
     """Yield every generated page; bodies are rendered when they are asked for."""
     shapes = shape_views(reports, catalogue.sources)
     protocols = protocol_views(catalogue)
@@ -47,7 +50,7 @@ def site_pages(catalogue: Catalogue, reports: Reports, site_name: str) -> Iterat
     yield _page(addresses.PROTOCOLS, "Protocols", "protocols.html", protocols=protocols)
     yield from _protocol_pages(catalogue, protocols)
     for report in reports:
-        yield from _compound_pages(report, catalogue, changes)
+        yield from _compound_pages(report, catalogue, changes, standing)
 
 
 def site_files(catalogue: Catalogue, reports: Reports) -> Iterator[SiteFile]:
@@ -87,12 +90,15 @@ def _shape_page(shape: ShapeView) -> SitePage:
 
 
 def _compound_pages(
-    report: CompoundReport, catalogue: Catalogue, changes: Mapping[Path, Change]
+    report: CompoundReport,
+    catalogue: Catalogue,
+    changes: Mapping[Path, Change],
+    standing: Standing,
 ) -> Iterator[SitePage]:
     entry = _entry(report)
     address = addresses.compound_address(entry.id)
     mark = revision(report)
-    view = compound_view(report, catalogue, mark, changes.get(entry.file.resolve()))
+    view = compound_view(report, catalogue, mark, changes.get(entry.file.resolve()), standing)
     body = partial(_compound_html, report, view)
     yield SitePage(address, entry.name, view.description, "compound", body, revision=mark)
     for earlier in entry.formerly:
@@ -102,7 +108,14 @@ def _compound_pages(
 def _compound_html(report: CompoundReport, view: CompoundView) -> str:
     figures = compound_figures(report)
     root = addresses.root_from(view.address)
-    return render("compound.html", root=root, compound=view, figures=figures, glyph=shape_glyph)
+    return render(
+        "compound.html",
+        root=root,
+        compound=view,
+        figures=figures,
+        glyph=shape_glyph,
+        json_ld=json_ld(report, view.url, view.description),
+    )
 
 
 def _moved_page(earlier: str, address: str, entry: Entry) -> SitePage:

@@ -45,12 +45,8 @@ class ValueView:
     phase: str
     method: str
     note: str
-    others: tuple[tuple[str, str], ...]
-    """(basis, number with its ±) for every basis there is, best first."""
-
-    def of_basis(self, basis: str) -> str:
-        """Return the number on this basis, or nothing."""
-        return dict(self.others).get(basis, "")
+    others: dict[str, str]
+    """Number with its ± by basis, for every basis there is, best first."""
 
 
 def value_view(value: Value, unit: Unit, sources: Mapping[str, Source]) -> ValueView:
@@ -68,13 +64,13 @@ def value_view(value: Value, unit: Unit, sources: Mapping[str, Source]) -> Value
         phase=(measurement and measurement.phase) or "",
         method=(measurement and measurement.method) or "",
         note=(measurement and measurement.note) or "",
-        others=tuple(_others(value, unit)),
+        others=_others(value, unit),
     )
 
 
 def bases_held(values: Iterable[ValueView]) -> tuple[str, ...]:
     """Return the bases that any of the values has, the model first as tables print them."""
-    held = {basis for value in values for basis, _ in value.others}
+    held = {basis for value in values for basis in value.others}
     return tuple(basis.value for basis in reversed(BASES) if basis.value in held)
 
 
@@ -85,19 +81,19 @@ def citation(source: Source) -> str:
     return f"{surname or first.strip() or source.title} {source.year}"
 
 
-def _others(value: Value, unit: Unit) -> list[tuple[str, str]]:
+def _others(value: Value, unit: Unit) -> dict[str, str]:
     held = {
         Basis.MEASURED: (value.measured, value.measured_uncertainty),
         Basis.CALCULATED: (value.calculated, value.calculated_uncertainty),
         Basis.SUPPLIED: (value.supplied, None),
         Basis.MODEL: (value.model, value.model_uncertainty),
     }
-    return [
-        (basis.value, _with_uncertainty(number, uncertainty, basis, unit))
+    return {
+        basis.value: _with_uncertainty(number, uncertainty, basis, unit)
         for basis in BASES
         for number, uncertainty in (held[basis],)
         if number is not None
-    ]
+    }
 
 
 def _with_uncertainty(number: float, uncertainty: float | None, basis: Basis, unit: Unit) -> str:

@@ -31,8 +31,12 @@ def write_sdf(
     title: str,
     properties: Mapping[str, object] | None = None,
 ) -> str:
-    """Return one SDF record: coordinates (n, 3) in ångström, then the data fields."""
-    mol = with_coordinates(to_rdkit(molecule), coordinates)
+    """Return one SDF record: coordinates (n, 3) in ångström, then the data fields.
+
+    The format has no arrows that every program reads: a donor's bond is written as a single one
+    with its charges, plus at the donor and minus at the acceptor.
+    """
+    mol = with_coordinates(_without_arrows(to_rdkit(molecule)), coordinates)
     mol.SetProp("_Name", _one_line(title)[:TITLE_LENGTH])
     block = Chem.MolToMolBlock(mol, kekulize=False, includeStereo=True)
     fields = "".join(
@@ -40,6 +44,31 @@ def write_sdf(
         for name, value in (properties or {}).items()
     )
     return f"{block}{fields}$$$$\n"
+
+
+def _without_arrows(mol: Chem.RWMol) -> Chem.RWMol:
+    for bond in mol.GetBonds():
+        if bond.GetBondType() == Chem.BondType.DATIVE:
+            donor, acceptor = bond.GetBeginAtom(), bond.GetEndAtom()
+            if not _drawn_as_cumulene(bond, donor):
+                donor.SetFormalCharge(donor.GetFormalCharge() + 1)
+                acceptor.SetFormalCharge(acceptor.GetFormalCharge() - 1)
+                bond.SetBondType(Chem.BondType.SINGLE)
+    mol.UpdatePropertyCache(strict=False)
+    return mol
+
+
+def _drawn_as_cumulene(bond: Chem.Bond, donor: Chem.Atom) -> bool:
+    """Draw a carbonyl's arrow as M=C=O, the form without charges; of any other, say no."""
+    for inner in donor.GetBonds():
+        end = inner.GetOtherAtom(donor)
+        if inner.GetBondType() == Chem.BondType.TRIPLE and end.GetFormalCharge() == 1:
+            donor.SetFormalCharge(donor.GetFormalCharge() + 1)
+            end.SetFormalCharge(0)
+            inner.SetBondType(Chem.BondType.DOUBLE)
+            bond.SetBondType(Chem.BondType.DOUBLE)
+            return True
+    return False
 
 
 def _one_line(text: str) -> str:

@@ -6,8 +6,13 @@ from html.parser import HTMLParser
 from shapeshelf.linking.documents.model import BARE, Block, Piece, block_of
 
 _BLOCKS = frozenset(
-    ["address", "article", "aside", "blockquote", "body", "caption", "center", "dd", "details", "div", "dl", "dt", "figcaption", "figure", "footer", "form", "h1", "h2", "h3", "h4", "h5", "h6", "header", "hr", "legend", "li", "main", "nav", "ol", "p", "pre", "section", "summary", "table", "tbody", "tfoot", "thead", "tr", "ul"]
-)
+    (
+        "address", "article", "aside", "blockquote", "body", "caption", "center", "dd", "details",
+        "div", "dl", "dt", "figcaption", "figure", "footer", "form", "h1", "h2", "h3", "h4", "h5",
+        "h6", "header", "hr", "legend", "li", "main", "nav", "ol", "p", "pre", "section", "summary",
+        "table", "tbody", "tfoot", "thead", "tr", "ul",
+    )
+)  # fmt: skip
 _CELLS = frozenset(("td", "th"))
 _UNSEEN = frozenset(("head", "script", "style", "template", "noscript"))
 
