@@ -7,7 +7,8 @@ A3  Several centres, carbon among the atoms, and MMFF94s has parameters for all:
     the most symmetric.
 A4  Several centres otherwise: conformers by distance geometry on our own bounds, relaxed under
     lengths, angles, contacts and torsion rules (forces.py, torsions.py), the lowest one.
-A5  The result is symmetrised: atoms that miss their image by less than a tolerance are put on it.
+A5  The result is symmetrised: atoms that miss their image by less than a tolerance are put on it,
+    a smaller one where the larger would make unlike bonds alike (cyclobutadiene).
 
 In A3 and A4 the atoms are first put in an order that does not depend on the spelling, and seeds
 are fixed: the same molecule always gives the same structure.
@@ -29,6 +30,10 @@ from shapeshelf.geometry.targets import handedness
 from shapeshelf.geometry.vectors import Array
 from shapeshelf.structure.embedding import mmff_covers
 from shapeshelf.structure.molecule import Molecule
+
+FINE_SNAP_ANGSTROM = 0.02
+KEPT_LENGTH_ANGSTROM = 0.03
+"""Noise of an assembled bond length; the two lengths of cyclobutadiene differ by 0.2."""
 
 
 def assemble(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]) -> Structure:
@@ -98,7 +103,22 @@ def _conformers(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]
 
 def _structure(molecule: Molecule, points: Array, method: str, tried: int) -> Structure:
     """Return the structure symmetrised (A5)."""
-    elements = [atom.element for atom in molecule.atoms]
-    symmetric, _ = symmetrised(elements, points, SNAP_ANGSTROM)
+    symmetric = _snapped(molecule, points)
     rows = (symmetric - symmetric.mean(axis=0)).tolist()
     return Structure(tuple((x, y, z) for x, y, z in rows), StructureBasis.MODEL, method, tried)
+
+
+def _snapped(molecule: Molecule, points: Array) -> Array:
+    """Return the coordinates (n, 3) under the largest tolerance that keeps the bonds' lengths."""
+    elements = [atom.element for atom in molecule.atoms]
+    before = _lengths(molecule, points)
+    for tolerance in (SNAP_ANGSTROM, FINE_SNAP_ANGSTROM):
+        symmetric, _ = symmetrised(elements, points, tolerance)
+        if np.abs(_lengths(molecule, symmetric) - before).max() < KEPT_LENGTH_ANGSTROM:
+            return symmetric
+    return points
+
+
+def _lengths(molecule: Molecule, points: Array) -> Array:
+    ends = np.array([(bond.begin, bond.end) for bond in molecule.bonds])
+    return np.asarray(np.linalg.norm(points[ends[:, 0]] - points[ends[:, 1]], axis=1))

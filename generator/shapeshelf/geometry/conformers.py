@@ -4,7 +4,7 @@ Rules A3 and A4 of assembly.py.
 """
 
 from collections.abc import Sequence
-from dataclasses import dataclass, replace
+from dataclasses import dataclass
 
 import numpy as np
 
@@ -14,22 +14,20 @@ from shapeshelf.geometry.choosing import (
     RULE_ERROR,
     most_symmetric,
 )
+from shapeshelf.geometry.finishing import finished
 from shapeshelf.geometry.forces import minimised, settled_down
 from shapeshelf.geometry.ordering import renumbered, settled_order
 from shapeshelf.geometry.rotors import scanned, turning_bonds
 from shapeshelf.geometry.surroundings import MULTIPLE_ORDER, Surroundings, joined_without
 from shapeshelf.geometry.targets import bounds_of, terms_of
-from shapeshelf.geometry.torsions import Turn, chain_turns, turns_of
-from shapeshelf.geometry.vectors import Array, angle_degrees, distance, torsion_degrees
+from shapeshelf.geometry.torsions import turns_of
+from shapeshelf.geometry.vectors import Array
 from shapeshelf.structure.embedding import embed, relax_mmff
 from shapeshelf.structure.molecule import Molecule
 
 SEED = 20050
 FIRST_STEPS = 200
 FIRST_SLOPE = 0.01
-UNEVEN_ANGSTROM = 0.01
-"""Bonds of like atoms differ less than this in the two halves of any one conformer."""
-KEPT_TORSION_HEIGHT = 30.0
 MOST_TRIES = ((12, 12), (20, 8), (40, 6), (70, 6), (1000, 3))
 """Up to so many atoms, so many conformers at most: a structure has to come while one waits."""
 MOST_FOR_SCAN = 40
@@ -62,7 +60,7 @@ def by_force_field(molecule: Molecule, known: Surroundings) -> Conformers:
         lowest = min(relaxed, key=lambda one: one[1])
         relaxed += scanned(lowest, _in_order(bonds, order), known, relax)
     best = most_symmetric(_elements(molecule), relaxed, relax, FORCE_FIELD_ERROR_KCAL_MOL)
-    return Conformers(_finished(molecule, known, best), "lowest MMFF94s conformer", len(relaxed))
+    return Conformers(finished(molecule, known, best), "lowest MMFF94s conformer", len(relaxed))
 
 
 def by_rules(molecule: Molecule, known: Surroundings) -> Conformers:
@@ -128,47 +126,3 @@ def _settled_bounds(bounds: Array, order: tuple[int, ...]) -> Array:
     upper = (np.triu(bounds, 1) + np.triu(bounds, 1).T)[np.ix_(rows, rows)]
     lower = (np.tril(bounds, -1) + np.tril(bounds, -1).T)[np.ix_(rows, rows)]
     return np.asarray(np.triu(upper, 1) + np.tril(lower, -1))
-
-
-def _finished(molecule: Molecule, known: Surroundings, points: Array) -> Array:
-    """Return the structure with what the force field leaves undone.
-
-    Ends are aligned across straight chains, where it has no force; bonds that resonance makes
-    equal, and it reads from one drawing (cyclopentadienide), are given their mean length.
-    """
-    turns = chain_turns(known)
-    lengths = {(a, b): distance(points[a], points[b]) for a, b in known.lengths}
-    even = _mean_lengths(molecule, known, lengths)
-    spread = max((abs(even[bond] - lengths[bond]) for bond in lengths), default=0.0)
-    if not turns and spread < UNEVEN_ANGSTROM:
-        return points
-    angles = {abc: angle_degrees(*points[list(abc)]) for abc in known.angles}
-    measured = replace(known, angles=angles, lengths=even)
-    terms = terms_of(molecule, measured, [*_kept_turns(known, points), *turns], guarded=False)
-    return settled_down(terms, points)[0]
-
-
-def _mean_lengths(
-    molecule: Molecule, known: Surroundings, lengths: dict[tuple[int, int], float]
-) -> dict[tuple[int, int], float]:
-    """Return lengths in ångström averaged over bonds of equal order between like atoms."""
-    kinds = {
-        (a, b): (*sorted((molecule.classes[a], molecule.classes[b])), round(known.orders[a, b], 3))
-        for a, b in lengths
-    }
-    groups: dict[tuple[float, ...], list[float]] = {}
-    for bond, length in lengths.items():
-        groups.setdefault(kinds[bond], []).append(length)
-    return {bond: float(np.mean(groups[kinds[bond]])) for bond in lengths}
-
-
-def _kept_turns(known: Surroundings, points: Array) -> Sequence[Turn]:
-    """Return terms that hold every torsion about a bond where it is."""
-    turns = []
-    for b, c in known.orders:
-        for a in known.neighbours[b]:
-            for d in known.neighbours[c]:
-                if len({a, b, c, d}) == 4 and not {b, c} & known.linear:
-                    angle = torsion_degrees(*points[[a, b, c, d]])
-                    turns.append(Turn((a, b, c, d), KEPT_TORSION_HEIGHT, 1, angle))
-    return turns
