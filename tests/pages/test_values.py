@@ -16,7 +16,7 @@ def test_measured_value_names_its_source_and_says_that_it_was_recalled(
     assert view.recalled
     assert (view.source_text, view.source_anchor) == ("Author 1991", "source-handbook")
     assert (view.phase, view.method) == ("gas", "microwave")
-    assert view.others == (("measured", "173.1\xa0±\xa00.5"), ("model", "172.0\xa0±\xa03.0"))
+    assert view.others == {"measured": "173.1\xa0±\xa00.5", "model": "172.0\xa0±\xa03.0"}
 
 
 def test_a_value_that_was_read_is_not_called_recalled(
@@ -39,11 +39,8 @@ def test_supplied_value_has_a_basis_of_its_own() -> None:
     """Coordinates that an entry supplies are neither measured nor a model."""
     supplied = replace(_model(109.5, 1.0), basis=Basis.SUPPLIED, supplied=110.2, value=110.2)
     view = value_view(supplied, DEGREE, {})
-    assert (view.basis, view.of_basis("supplied"), view.of_basis("measured")) == (
-        "supplied",
-        "110.2",
-        "",
-    )
+    assert view.basis == "supplied"
+    assert view.others == {"supplied": "110.2", "model": "109.5\xa0±\xa01.0"}
 
 
 @pytest.mark.parametrize(

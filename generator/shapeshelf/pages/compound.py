@@ -178,6 +178,7 @@ def compound_view(
         change=change,
         angle_bases=bases_held(angle.value for centre in centres for angle in centre.angles),
         length_bases=bases_held(length.value for length in lengths),
+        description=_description(report),
         url=standing.page_url(compound_address(entry.id)),
         news=standing.news.get(entry.id, {}),
         unreleased=entry.id in standing.unreleased,
