@@ -18,6 +18,14 @@ from mkdocs.structure.pages import Page
 from mkdocs.utils import CountHandler
 
 from shapeshelf.errors import ShapeshelfError, UsageError
+from shapeshelf.linking.releasing import present_values
+from shapeshelf.linking.site import (
+    checked_protocols,
+    linking_files,
+    linking_pages,
+    standing_of,
+)
+from shapeshelf.linking.telling import change_lines, drift_lines
 from shapeshelf.pages.assets import stylesheet
 from shapeshelf.pages.model import SiteFile, SitePage
 from shapeshelf.pages.rendering import templates_dir
@@ -108,10 +116,21 @@ class ShapeshelfPlugin(BasePlugin[ShapeshelfOptions]):  # type: ignore[no-untype
         """Replace the catalogue's own files by the pages made from them."""
         try:
             catalogue, reports = report_on_catalogue(Path(config.docs_dir))
-            pages = [*site_pages(catalogue, reports, config.site_name)]
-            ready = [*site_files(catalogue, reports), _stylesheet(config)]
+            present = present_values(catalogue, reports, config.site_url or None)
+            protocols = checked_protocols(present)
+            pages = [
+                *site_pages(catalogue, present.reports, config.site_name, standing_of(present)),
+                *linking_pages(present, protocols, _files_url(config)),
+            ]
+            ready = [
+                *site_files(catalogue, present.reports),
+                *linking_files(present, config.site_name),
+                _stylesheet(config),
+            ]
         except ShapeshelfError as error:
             raise Abort(str(error)) from error
+        for line in (*change_lines(present.comparison), *drift_lines(present)):
+            LOG.info(line)
         kept = [file for file in files if not _is_replaced(file, config)]
         generated = [_page_file(page, config) for page in pages]
         others = [_StaticFile(file, config) for file in ready]
@@ -237,6 +256,13 @@ def _is_replaced(file: File, config: MkDocsConfig) -> bool:
     if file.src_dir is not None and Path(file.src_dir) == Path(config.docs_dir):
         return True
     return file.src_uri.startswith(UNUSED_FROM_THEME)
+
+
+def _files_url(config: MkDocsConfig) -> str | None:
+    """Return where the catalogue's files can be seen: the repository that the site names."""
+    if not config.repo_url or not config.edit_uri:
+        return None
+    return f"{config.repo_url.rstrip('/')}/{config.edit_uri.strip('/')}/"
 
 
 def _stylesheet(config: MkDocsConfig) -> SiteFile:

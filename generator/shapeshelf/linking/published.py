@@ -50,6 +50,7 @@ class PublishedValue:
     calculated: float | None = None
     supplied: float | None = None
     model: float | None = None
+    calculated_uncertainty: float | None = None
 
 
 @dataclass(frozen=True, slots=True)
@@ -179,7 +180,15 @@ def _compound(held: Mapping[str, Any]) -> PublishedCompound:
 def _value(held: Mapping[str, Any]) -> PublishedValue:
     numbers = {
         name: held.get(name)
-        for name in ("uncertainty", "source", "measured", "calculated", "supplied", "model")
+        for name in (
+            "uncertainty",
+            "source",
+            "measured",
+            "calculated",
+            "supplied",
+            "model",
+            "calculated_uncertainty",
+        )
     }
     return PublishedValue(
         quantity=held["quantity"],

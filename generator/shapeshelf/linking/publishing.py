@@ -78,6 +78,7 @@ def published_value(
         calculated=_rounded(value.calculated, digits),
         supplied=_rounded(value.supplied, digits),
         model=_rounded(value.model, digits),
+        calculated_uncertainty=_rounded(value.calculated_uncertainty, digits),
     )
 
 
