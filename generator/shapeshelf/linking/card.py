@@ -2,20 +2,22 @@
 
 import re
 from collections.abc import Iterator
+from itertools import islice
 from xml.sax.saxutils import escape, quoteattr
 
 from shapeshelf.figures.bench import bench_view
 from shapeshelf.figures.canvas import text_width
 from shapeshelf.figures.model import Svg
 from shapeshelf.figures.palette import colours
-from shapeshelf.linking.published import PublishedCompound, value_text
+from shapeshelf.pages.anchors import shown_angles
 from shapeshelf.pages.compound import shape_words
 from shapeshelf.pages.properties import polarity_word
 from shapeshelf.pages.typesetting import formula_text, point_group_text, sentence_case
-from shapeshelf.report.model import CompoundReport
+from shapeshelf.pages.values import DEBYE, DEGREE, Unit, value_view
+from shapeshelf.report.model import CompoundReport, Value
 
-WIDTH, HEIGHT = 420, 150
-DRAWING_WIDTH, MARGIN = 170, 12
+WIDTH, HEIGHT = 460, 150
+DRAWING_WIDTH, MARGIN = 160, 10
 FONT = (
     "Bahnschrift,'DIN Alternate','Segoe UI',Roboto,'Noto Sans','Liberation Sans',Arial,sans-serif"
 )
@@ -23,7 +25,7 @@ MOST_ANGLES = 2
 _LINE = 20
 
 
-def card_svg(report: CompoundReport, published: PublishedCompound) -> bytes:
+def card_svg(report: CompoundReport) -> bytes:
     """Return the card of one compound: drawing, name, shape, first angles, polarity."""
     ink, soft, paper = (colours()[name].light for name in ("ink", "soft", "paper"))
     title = f"{report.name}: {shape_words(report)}"
@@ -38,7 +40,7 @@ def card_svg(report: CompoundReport, published: PublishedCompound) -> bytes:
     ]
     left, top = DRAWING_WIDTH + 2 * MARGIN, 32
     room = WIDTH - left - MARGIN
-    for index, (text, size, bold) in enumerate(_lines(report, published)):
+    for index, (text, size, bold) in enumerate(_lines(report)):
         weight = ' font-weight="700"' if bold else ""
         parts.append(
             f'<text x="{left}" y="{top + index * _LINE}" font-size="{size}" '
@@ -49,18 +51,22 @@ def card_svg(report: CompoundReport, published: PublishedCompound) -> bytes:
 
 
 def _lines(
-    report: CompoundReport, published: PublishedCompound
+    report: CompoundReport,
 ) -> Iterator[tuple[str, float, bool]]:
     formula = formula_text(report.molecule.formula, report.molecule.charge)
     yield report.name, 17, True
     yield f"{formula}  {point_group_text(report.point_group)}", 15, False
     yield sentence_case(shape_words(report)), 14, False
-    angles = [value for value in published.values.values() if value.quantity == "angle"]
-    for value in angles[:MOST_ANGLES]:
-        yield f"{value.of} {value_text(value)}, {value.basis}", 13, False
-    dipole = published.values.get("dipole")
-    amount = f", {value_text(dipole)}, {dipole.basis}" if dipole else ""
+    for row in islice(shown_angles(report), MOST_ANGLES):
+        yield f"{row.of} {_said(row.degrees, DEGREE)}", 13, False
+    dipole = report.dipole_debye
+    amount = f", {_said(dipole, DEBYE)}" if dipole else ""
     yield f"{polarity_word(report)}{amount}", 13, False
+
+
+def _said(value: Value, unit: Unit) -> str:
+    view = value_view(value, unit, {})
+    return f"{' '.join(filter(None, (view.text, view.plus_minus)))}, {view.basis}"
 
 
 def _placed(figure: Svg) -> str:

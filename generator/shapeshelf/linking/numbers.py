@@ -14,7 +14,7 @@ from dataclasses import dataclass, replace
 OTHER = "other"
 """A unit of something that a compound's page does not give."""
 
-_NUMBER = r"(?<![\w.,#^_/\\-])(?<![<>=]-)(?P<number>\d+(?:[.,]\d+)?)"
+_NUMBER = r"(?<![\w.,#^_\\-])(?<![A-Za-z_.]/)(?<!//)(?<![<>=]-)(?P<number>\d+(?:[.,]\d+)?)"
 _GAP = r"[\s\u00a0\u2009\u202f~]*"
 _SPREAD = (
     rf"(?:\((?P<last>\d{{1,2}})\)|{_GAP}(?:±|\+/[-−–]|\\pm){_GAP}(?P<spread>\d+(?:[.,]\d+)?))?"

@@ -109,10 +109,9 @@ def linking_files(present: Present, site_name: str) -> Iterator[SiteFile]:
     for report in reports:
         if report.entry is None:
             continue
-        compound = published.compounds[report.entry.id]
         for one in (report.entry.id, *report.entry.formerly):
             address = compound_address(one)
-            yield SiteFile(address + "card.svg", partial(card_svg, report, compound))
+            yield SiteFile(address + "card.svg", partial(card_svg, report))
         if published.site is not None:
             url = published.site + compound_address(report.entry.id)
             yield SiteFile(compound_address(report.entry.id) + "qr.svg", partial(qr_svg, url))
