@@ -40,6 +40,7 @@ def _parser() -> argparse.ArgumentParser:
     commands = parser.add_subparsers(required=True, metavar="COMMAND")
     build = _command(commands, "build", _build, "build the site from the catalogue")
     build.add_argument("--strict", action="store_true", help="warnings stop the build")
+    build.add_argument("--for-files", action="store_true", help="to be opened from a folder")
     serve = _command(commands, "serve", _serve, "show the site and follow changes")
     serve.add_argument("--address", default="127.0.0.1:8000", metavar="HOST:PORT")
     for command in (build, serve):
@@ -86,7 +87,7 @@ def _command(
 def _build(options: argparse.Namespace) -> int:
     from shapeshelf.plugin import build_site
 
-    build_site(options.config, strict=options.strict)
+    build_site(options.config, options.strict, options.for_files)
     return FINE
 
 

@@ -9,6 +9,7 @@ from mkdocs.commands.build import build
 from mkdocs.commands.serve import serve
 from mkdocs.config import load_config
 from mkdocs.config.base import Config
+from mkdocs.config.config_options import Type
 from mkdocs.config.defaults import MkDocsConfig
 from mkdocs.exceptions import Abort, ConfigurationError
 from mkdocs.livereload import LiveReloadServer
@@ -27,6 +28,7 @@ from shapeshelf.linking.site import (
 )
 from shapeshelf.linking.telling import change_lines, drift_lines
 from shapeshelf.pages.assets import stylesheet
+from shapeshelf.pages.for_files import link_to_files
 from shapeshelf.pages.model import SiteFile, SitePage
 from shapeshelf.pages.rendering import templates_dir
 from shapeshelf.pages.site import site_files, site_pages
@@ -39,8 +41,12 @@ LAST = -100
 """Other plugins see the site where they expect it, and finish writing before it is swapped in."""
 UNUSED_FROM_THEME = ("assets/", "css/", "sitemap.xml")
 """Style sheets go into one; without ``site_url`` a site map would name no address."""
+PLAIN_SCRIPTS = ("js/face.js", "js/moved.js")
+"""Loaded as they are; all other scripts of the theme are modules and go into one."""
 NAVIGATION: list[Any] = [
+    {"Start here": "start/index.md"},
     {"Lookup": "lookup/index.md"},
+    {"Compare": "compare/index.md"},
     {"Shapes": "shapes/index.md"},
     {"Protocols": "protocols/index.md"},
     {"Sources": "sources/index.md"},
@@ -48,8 +54,8 @@ NAVIGATION: list[Any] = [
 ]
 
 
-def build_site(config_file: Path, strict: bool = False) -> None:
-    """Build the site as ``mkdocs build`` does.
+def build_site(config_file: Path, strict: bool = False, for_files: bool = False) -> None:
+    """Build the site as ``mkdocs build`` does; ``for_files`` sets the option of that name.
 
     Raises CatalogueError with all problems of the catalogue, UsageError where the configuration
     cannot be used, ShapeshelfError where a strict build met a warning.
@@ -57,6 +63,8 @@ def build_site(config_file: Path, strict: bool = False) -> None:
     _speak()
     try:
         config = load_config(str(config_file), strict=strict)
+        if for_files:
+            config.plugins["shapeshelf"].config["for_files"] = True
         config.plugins.on_startup(command="build", dirty=False)
         try:
             build(config)
@@ -79,7 +87,10 @@ def serve_site(config_file: Path, address: str = "127.0.0.1:8000") -> None:
 
 
 class ShapeshelfOptions(Config):  # type: ignore[no-untyped-call]
-    """The plugin takes no options: what it needs stands in the catalogue."""
+    """What a group may set in ``mkdocs.yml``; all else stands in the catalogue."""
+
+    for_files = Type(bool, default=False)
+    """The site is opened from a shared folder, without a server."""
 
 
 class ShapeshelfPlugin(BasePlugin[ShapeshelfOptions]):  # type: ignore[no-untyped-call]
@@ -101,7 +112,10 @@ class ShapeshelfPlugin(BasePlugin[ShapeshelfOptions]):  # type: ignore[no-untype
         theme = str(templates_dir() / "theme")
         if theme not in config.theme.dirs:
             config.theme.dirs.insert(1 if config.theme.custom_dir else 0, theme)
-        config.theme["shapeshelf"] = {"serving": self._serving}
+        config.theme["shapeshelf"] = {
+            "serving": self._serving,
+            "for_files": self.config.for_files,
+        }
         config.use_directory_urls = True
         config.nav = config.nav or NAVIGATION
         if not config.site_url:
@@ -123,7 +137,7 @@ class ShapeshelfPlugin(BasePlugin[ShapeshelfOptions]):  # type: ignore[no-untype
                 *linking_pages(present, protocols, _files_url(config)),
             ]
             ready = [
-                *site_files(catalogue, present.reports),
+                *site_files(catalogue, present.reports, self.config.for_files),
                 *linking_files(present, config.site_name),
                 _stylesheet(config),
             ]
@@ -135,6 +149,10 @@ class ShapeshelfPlugin(BasePlugin[ShapeshelfOptions]):  # type: ignore[no-untype
         generated = [_page_file(page, config) for page in pages]
         others = [_StaticFile(file, config) for file in ready]
         return Files([*kept, *_handwritten(config), *generated, *others])
+
+    def on_post_page(self, output: str, *, page: Page, config: MkDocsConfig) -> str:
+        """Lead links to files where there is no server to do it."""
+        return link_to_files(output) if self.config.for_files else output
 
     def on_serve(
         self, server: LiveReloadServer, *, config: MkDocsConfig, builder: Callable[..., None]
@@ -255,6 +273,8 @@ def _is_replaced(file: File, config: MkDocsConfig) -> bool:
     """Tell whether a file is the catalogue's, or one of the theme's that our face leaves out."""
     if file.src_dir is not None and Path(file.src_dir) == Path(config.docs_dir):
         return True
+    if file.src_uri.startswith("js/"):
+        return file.src_uri not in PLAIN_SCRIPTS
     return file.src_uri.startswith(UNUSED_FROM_THEME)
 
 

@@ -48,7 +48,7 @@ def bench_drawing(report: CompoundReport) -> Drawing:
         return numbered
     scene = build_scene(report)
     stage = Stage(scene)
-    body = _painted(stage)
+    body = painted(stage)
     angles = angle_marks(stage, () if many else key_angles(report))
     marks, height = framed([*angles.arcs, *body, *angles.labels], WIDTH)
     return Drawing(
@@ -116,7 +116,7 @@ def _upright(scene: Scene, toward: Array) -> Array:
     return np.asarray(np.eye(3)[0])
 
 
-def _painted(stage: Stage) -> list[Mark]:
+def painted(stage: Stage) -> list[Mark]:
     """Return atoms, bonds and lobes, the farthest first."""
     items: list[tuple[float, list[Mark]]] = []
     for atom in range(len(stage.atoms)):

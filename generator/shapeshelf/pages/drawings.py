@@ -12,6 +12,7 @@ from shapeshelf.figures.lewis import lewis_structure
 from shapeshelf.figures.model import Svg
 from shapeshelf.figures.sheet import sheet
 from shapeshelf.figures.strip import strip
+from shapeshelf.pages.turning import turn_data
 from shapeshelf.report.model import CompoundReport
 
 _NAMING_ATTRIBUTE = re.compile(r' (?:role|aria-[a-z]+|font-family)="[^"]*"')
@@ -23,6 +24,8 @@ class CompoundFigures:
     """The figures of one compound page; ``None`` where one would say nothing."""
 
     bench: Markup
+    turn: Markup | None
+    """Numbers from which the bench view is drawn anew at any turn."""
     lewis: Markup | None
     sheet: Markup | None
     strip: Markup | None
@@ -32,10 +35,16 @@ def compound_figures(report: CompoundReport) -> CompoundFigures:
     """Draw the figures of one compound."""
     return CompoundFigures(
         bench=_markup(bench_view(report)),
+        turn=turn_data(report),
         lewis=_maybe(lewis_structure(report)),
         sheet=_maybe(sheet(report)),
         strip=_maybe(strip(report)),
     )
+
+
+def bench_markup(report: CompoundReport) -> Markup:
+    """Draw the bench view alone."""
+    return _markup(bench_view(report))
 
 
 @cache

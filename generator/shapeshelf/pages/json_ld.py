@@ -3,10 +3,9 @@
 Type and properties: schema.org, MolecularEntity (recalled from memory).
 """
 
-import json
-
 from markupsafe import Markup
 
+from shapeshelf.pages.script_data import script_data
 from shapeshelf.pages.typesetting import number_text
 from shapeshelf.report.model import CompoundReport
 
@@ -18,11 +17,7 @@ def json_ld(report: CompoundReport, url: str | None, description: str) -> Markup
 
     ``url`` is the page's absolute address; without one the page itself is meant.
     """
-    text = json.dumps(molecular_entity(report, url, description), ensure_ascii=False)
-    # Within a script element only these could end or alter it; in JSON they mean the same.
-    for character in "<>&\u2028\u2029":
-        text = text.replace(character, f"\\u{ord(character):04x}")
-    return Markup(text)
+    return script_data(molecular_entity(report, url, description))
 
 
 def molecular_entity(

@@ -4,9 +4,12 @@ from functools import cache
 from pathlib import Path
 
 import jinja2
+from jinja2.runtime import Context
+from markupsafe import Markup
 
 import shapeshelf
 from shapeshelf.errors import ShapeshelfError
+from shapeshelf.pages.glossary import term_link
 
 PACKAGE = Path(shapeshelf.__file__).resolve().parent
 
@@ -27,7 +30,7 @@ def render(part: str, **values: object) -> str:
 @cache
 def environment() -> jinja2.Environment:
     """Return the one Jinja environment of all parts; an unknown name is an error."""
-    return jinja2.Environment(
+    made = jinja2.Environment(
         loader=jinja2.FileSystemLoader(templates_dir() / "parts"),
         autoescape=True,
         undefined=jinja2.StrictUndefined,
@@ -35,3 +38,11 @@ def environment() -> jinja2.Environment:
         lstrip_blocks=True,
         auto_reload=False,
     )
+    made.globals["term"] = _term
+    return made
+
+
+@jinja2.pass_context
+def _term(context: Context, text: str, name: str | None = None) -> Markup:
+    """Let a part say ``term("Point group")`` for a link to the glossary from where it stands."""
+    return term_link(context["root"], text, name)

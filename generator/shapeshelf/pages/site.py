@@ -8,11 +8,14 @@ from pathlib import Path
 
 from shapeshelf.catalogue.model import Catalogue, Entry
 from shapeshelf.pages import addresses
+from shapeshelf.pages.comparing import COMPARISON, comparison_json
 from shapeshelf.pages.compound import NOWHERE, CompoundView, compound_view, source_view
 from shapeshelf.pages.drawings import compound_figures, shape_figure, shape_glyph
+from shapeshelf.pages.finding import data_file, finding_files
+from shapeshelf.pages.glossary import term_views
 from shapeshelf.pages.history import Change, last_changes
 from shapeshelf.pages.home import CompoundLine, compound_line, home_view
-from shapeshelf.pages.lookup_index import by_name, lookup_index
+from shapeshelf.pages.lookup_index import by_name
 from shapeshelf.pages.json_ld import json_ld
 from shapeshelf.pages.model import SiteFile, SitePage, Standing
 from shapeshelf.pages.protocols import (
@@ -22,7 +25,9 @@ from shapeshelf.pages.protocols import (
     protocol_views,
 )
 from shapeshelf.pages.rendering import render
+from shapeshelf.pages.scripts import site_script
 from shapeshelf.pages.shapes import ShapeView, overview, shape_views
+from shapeshelf.pages.start import start_view
 from shapeshelf.pages.structure_files import sdf_text, xyz_text
 from shapeshelf.report.json import report_json
 from shapeshelf.report.model import CompoundReport
@@ -40,7 +45,7 @@ def site_pages(
     protocols = protocol_views(catalogue)
     changes = last_changes(catalogue.root)
     yield _page("", site_name, "home.html", home=home_view(reports, shapes, changes))
-    yield _page(addresses.LOOKUP, "Lookup", "lookup.html")
+    yield from _finding_pages(catalogue, reports)
     yield _page(addresses.COMPOUNDS, "All compounds", "compounds.html", lines=_lines(reports))
     yield _page(
         addresses.SHAPES, "Shapes", "shapes.html", overview=overview(reports), shapes=shapes
@@ -53,18 +58,38 @@ def site_pages(
         yield from _compound_pages(report, catalogue, changes, standing)
 
 
-def site_files(catalogue: Catalogue, reports: Reports) -> Iterator[SiteFile]:
-    """Yield every generated file: data, structures, indexes, the protocols' own documents."""
-    yield SiteFile("lookup-index.json", partial(lookup_index, reports))
+def site_files(
+    catalogue: Catalogue, reports: Reports, for_files: bool = False
+) -> Iterator[SiteFile]:
+    """Yield every generated file: data, structures, indexes, the protocols' own documents.
+
+    ``for_files`` is for a site that is opened from a folder, without a server.
+    """
+    yield from finding_files(catalogue, reports, for_files)
+    yield SiteFile("js/site.js", site_script)
     yield SiteFile("catalogue.json", partial(_catalogue_json, reports))
     for report in reports:
         for compound_id in _all_ids(report):
             yield from _compound_files(addresses.compound_address(compound_id), report)
+        yield _comparison_file(catalogue, report, for_files)
     for protocol in catalogue.protocols.values():
         if protocol.file is not None and not is_markdown(protocol):
             source = catalogue.root / protocol.file
             address = addresses.protocol_address(protocol.id) + source.name
             yield SiteFile(address, source.read_bytes)
+
+
+def _comparison_file(catalogue: Catalogue, report: CompoundReport, for_files: bool) -> SiteFile:
+    name = addresses.compound_address(_entry(report).id) + COMPARISON
+    return data_file(name, partial(comparison_json, report, catalogue.sources), for_files)
+
+
+def _finding_pages(catalogue: Catalogue, reports: Reports) -> Iterator[SitePage]:
+    """Yield the pages one finds and learns by: lookup, comparison, first hour, glossary."""
+    yield _page(addresses.LOOKUP, "Lookup", "lookup.html")
+    yield _page(addresses.COMPARE, "Compare", "compare.html")
+    yield _page(addresses.START, "Start here", "start.html", start=start_view(catalogue, reports))
+    yield _page(addresses.GLOSSARY, "Glossary", "glossary.html", terms=term_views())
 
 
 def data_json(report: CompoundReport) -> bytes:

@@ -1,7 +1,9 @@
 // The search field in the header: a combobox with a list of answers below it.
 
+import { pageAddress } from "./data.js";
+import { find } from "./find.js";
+import { showGlyphs } from "./glyphs.js";
 import { loadIndex } from "./index.js";
-import { find } from "./rank.js";
 import { resultParts } from "./results.js";
 
 const MOST = 8;
@@ -49,6 +51,7 @@ async function answer(state) {
   if (!text.trim()) return close(state);
   const index = await loadIndex(state.root).catch(() => null);
   if (!index || text !== state.input.value) return undefined;
+  showGlyphs(index.data.glyphs);
   show(state, find(index, text, MOST));
   return undefined;
 }
@@ -121,19 +124,19 @@ async function onSubmit(event, state) {
   event.preventDefault();
   const text = state.input.value.trim();
   if (!text) {
-    location.assign(state.form.action);
+    location.assign(pageAddress(state.root, "lookup/"));
     return;
   }
   const index = await loadIndex(state.root).catch(() => null);
   const fresh = index ? find(index, text, MOST) : [];
   const chosen = state.rows[state.active];
-  const row = chosen && fresh.includes(chosen) ? chosen : fresh[0];
+  const row = fresh.find((found) => found.address === chosen?.address) ?? fresh[0];
   if (row) open(row, state, false);
-  else location.assign(`${state.form.action}?q=${encodeURIComponent(text)}`);
+  else location.assign(pageAddress(state.root, `lookup/?q=${encodeURIComponent(text)}`));
 }
 
 function open(row, state, apart) {
-  const address = new URL(state.root + row.address, document.baseURI).href;
+  const address = pageAddress(state.root, row.address);
   if (apart) window.open(address, "_blank", "noopener");
   else location.assign(address);
 }

@@ -29,6 +29,15 @@ function readBody(body, charge) {
   return found.map((counts) => ({ key: keyOf(counts), charge }));
 }
 
+/** The key of a formula of the index, which is plain: symbols and numbers alone. */
+export function formulaKey(formula) {
+  const counts = new Map();
+  for (const [, symbol, digits] of formula.matchAll(/([A-Z][a-z]?)(\d*)/g)) {
+    counts.set(symbol, (counts.get(symbol) ?? 0) + (digits ? Number(digits) : 1));
+  }
+  return keyOf(counts);
+}
+
 /** One spelling for a composition: elements in alphabetical order with their numbers. */
 export function keyOf(counts) {
   return [...counts.entries()]

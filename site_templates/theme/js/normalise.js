@@ -17,10 +17,15 @@ const SPELLINGS = [
 
 /** Names: lower case, no accents, Greek letters spelled out, one spelling, words apart. */
 export function foldName(text) {
+  return foldLines(text.replace(/\n/g, " ")).trim();
+}
+
+/** Many names at once, one a line: the same as each folded alone, but for its outer spaces. */
+export function foldLines(text) {
   let folded = text.toLowerCase().replace(/[α-ωµ]/gu, (letter) => GREEK[letter] ?? letter);
   folded = plainDigits(folded).normalize("NFKD").replace(/\p{M}/gu, "");
   for (const [from, to] of SPELLINGS) folded = folded.replace(from, to);
-  return folded.replace(/[^a-z0-9]+/g, " ").trim();
+  return folded.replace(/['\u2019\u2032]/g, "").replace(/[^a-z0-9\n]+/g, " ");
 }
 
 /** Digits above or below the line become plain ones, every dash and minus a hyphen. */

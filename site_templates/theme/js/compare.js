@@ -1,0 +1,117 @@
+// Two to six compounds side by side: drawings to one scale, differences marked.
+
+import { formulaNode } from "./chemistry.js";
+import { loadData, pageAddress } from "./data.js";
+import { addField } from "./compare-field.js";
+import { differs, linedUp } from "./compare-rows.js";
+import { make } from "./nodes.js";
+import { compareAddress, keepPicks, MOST } from "./picks.js";
+
+const ROOM = 300;
+const LARGEST_FACTOR = 1.6;
+
+export async function comparePage(section) {
+  if (!section) return;
+  const page = {
+    section,
+    root: section.dataset.compare,
+    table: section.querySelector("table"),
+    status: section.querySelector("[role=status]"),
+    ids: idsFrom(location.search),
+  };
+  addField(section.querySelector("form"), page.root, (id) => change(page, [...page.ids, id]));
+  addEventListener("popstate", () => {
+    page.ids = idsFrom(location.search);
+    show(page);
+  });
+  await show(page);
+  section.dataset.ready = "";
+}
+
+/** The ids of an address, each once, six at most. */
+export function idsFrom(search) {
+  const given = (new URLSearchParams(search).get("ids") ?? "").split(",").map((id) => id.trim());
+  return [...new Set(given.filter((id) => /^[a-z0-9-]+$/.test(id)))].slice(0, MOST);
+}
+
+function change(page, ids) {
+  page.ids = [...new Set(ids)].slice(0, MOST);
+  keepPicks(new Set(page.ids));
+  const { search } = new URL(compareAddress(page.ids), location.href);
+  history.pushState(null, "", location.pathname + (page.ids.length ? search : ""));
+  return show(page);
+}
+
+async function show(page) {
+  const asked = page.ids;
+  const loaded = await Promise.all(asked.map((id) => loadData(page.root, `compounds/${id}/compare`).catch(() => id)));
+  if (asked !== page.ids) return;
+  const missing = loaded.filter((one) => typeof one === "string");
+  const compounds = loaded.filter((one) => typeof one !== "string");
+  page.status.textContent = words(compounds.length, missing);
+  page.table.hidden = compounds.length === 0;
+  drawHead(page, compounds);
+  drawRows(page.table, compounds);
+}
+
+function words(count, missing) {
+  const lost = missing.length ? ` No compound has the id ${missing.join(", ")}.` : "";
+  if (count === 0) return `Nothing to compare yet.${lost}`;
+  return `${count === 1 ? "1 compound" : `${count} compounds`}.${lost}`;
+}
+
+function drawHead(page, compounds) {
+  const factor = factorFor(compounds);
+  const cells = compounds.map((one) => {
+    const remove = make("button", { type: "button", class: "compare__remove", "aria-label": `Take ${one.name} out` }, "×");
+    remove.addEventListener("click", () => change(page, page.ids.filter((id) => id !== one.id)));
+    const link = make("a", { href: pageAddress(page.root, one.address) }, one.name);
+    const title = make("span", { class: "compare__name" }, link, " ", formulaNode(one.formula, one.charge));
+    return make("th", { scope: "col" }, remove, drawing(one, factor), title);
+  });
+  const scale = make("span", { class: "note" }, compounds.length > 1 ? "Drawings to one scale" : "");
+  page.table.tHead.replaceChildren(make("tr", {}, make("td", {}, scale), ...cells));
+}
+
+/** One factor for all drawings: the widest and highest still fit. */
+function factorFor(compounds) {
+  const largest = Math.max(1, ...compounds.map(({ width, height }) => Math.max(width, height)));
+  return Math.min(LARGEST_FACTOR, ROOM / largest);
+}
+
+/** Our own markup, made with the site; its size is the only thing changed. */
+function drawing(one, factor) {
+  const holder = make("span", { class: "compare__drawing" });
+  holder.innerHTML = one.drawing;
+  const svg = holder.firstElementChild;
+  svg.setAttribute("width", (one.width * factor).toFixed(1));
+  svg.setAttribute("height", (one.height * factor).toFixed(1));
+  return holder;
+}
+
+function drawRows(table, compounds) {
+  const bodies = linedUp(compounds).map(([group, rows]) => {
+    const head = make("th", { scope: "rowgroup", colspan: compounds.length + 1 }, group);
+    return make("tbody", {}, make("tr", { class: "grid__group" }, head), ...rows.map(line));
+  });
+  for (const body of [...table.tBodies]) body.remove();
+  table.append(...bodies);
+}
+
+function line({ label, cells }) {
+  const unlike = cells.length > 1 && differs(cells);
+  const mark = unlike ? make("span", { class: "unlike" }, "differs") : "";
+  return make(
+    "tr", { class: unlike ? "compare__unlike" : "compare__alike" },
+    make("th", { scope: "row" }, label, " ", mark),
+    ...cells.map((rows) => make("td", {}, ...cellParts(rows))),
+  );
+}
+
+function cellParts(rows) {
+  if (!rows.length) return [make("span", { class: "nil" }, "–")];
+  return rows.map(({ text, basis }) => {
+    const badge = basis ? make("span", { class: `basis basis--${basis}` }, basis) : "";
+    return make("span", { class: "compare__value" }, text, " ", badge);
+  });
+}

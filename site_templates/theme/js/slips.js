@@ -1,0 +1,121 @@
+// Names with slips of the pen: asked only where nothing answers as it is written.
+
+const BEST = 100;
+const A_SLIP = 12;
+const A_WORD_LEFT = 1;
+
+/** Gives items whose words, or whose name written as one word, are within a slip or two. */
+export function misspelt(index, { words, close }, give) {
+  if (close.length < 4) return;
+  index.slips ??= vocabularyOf(index.names);
+  byWords(index.slips, words, give);
+  byWhole(index.names, index.slips, close, give);
+}
+
+function slipsFor(word) {
+  if (word.length < 4) return 0;
+  return word.length < 8 ? 1 : 2;
+}
+
+/** Every query word must be like a word of the same line; the fewer slips the better. */
+function byWords({ words: known, masks, lines, items, sizes }, words, give) {
+  let open = null;
+  for (const word of words) {
+    const best = new Map();
+    const limit = slipsFor(word);
+    const mask = maskOf(word);
+    known.forEach((held, at) => {
+      if (held.length < word.length - limit || bits(mask & ~masks[at]) > limit) return;
+      const slips = distance(word, held, limit);
+      if (slips > limit) return;
+      for (const line of lines[at]) {
+        if (open && !open.has(line)) continue;
+        const sum = slips + (open ? open.get(line) : 0);
+        if (sum < (best.get(line) ?? Infinity)) best.set(line, sum);
+      }
+    });
+    open = best;
+  }
+  for (const [line, slips] of open ?? []) {
+    const left = Math.min(sizes[line] - words.length, 8);
+    give(items[line], Math.max(1, BEST - A_SLIP * slips - A_WORD_LEFT * left));
+  }
+}
+
+/** The query without its spaces against names without theirs, for words run together or parted. */
+function byWhole({ items }, { wholes, wholeMasks }, close, give) {
+  const limit = slipsFor(close);
+  const mask = maskOf(close);
+  wholes.forEach((held, line) => {
+    if (held.length < close.length - limit || bits(mask & ~wholeMasks[line]) > limit) return;
+    const slips = distance(close, held, limit);
+    if (slips > limit) return;
+    const left = Math.min(8, Math.max(0, held.length - close.length));
+    give(items[line], Math.max(1, BEST - A_SLIP * slips - A_WORD_LEFT * left));
+  });
+}
+
+function vocabularyOf({ text, items }) {
+  const numbers = new Map();
+  const lines = [];
+  const sizes = [];
+  const wholes = [];
+  text.slice(1, -1).split("\n").forEach((line, number) => {
+    const parts = line.split(" ");
+    sizes.push(parts.length);
+    wholes.push(parts.join(""));
+    for (const part of parts) {
+      if (!numbers.has(part)) {
+        numbers.set(part, lines.length);
+        lines.push([]);
+      }
+      const held = lines[numbers.get(part)];
+      if (held.at(-1) !== number) held.push(number);
+    }
+  });
+  const words = [...numbers.keys()];
+  return { words, masks: words.map(maskOf), lines, items, sizes, wholes, wholeMasks: wholes.map(maskOf) };
+}
+
+/** One bit a letter, digits sharing six, so that hopeless words are passed over quickly. */
+function maskOf(word) {
+  let mask = 0;
+  for (let at = 0; at < word.length; at += 1) {
+    const code = word.charCodeAt(at);
+    mask |= 1 << (code >= 97 ? code - 97 : 26 + (code % 6));
+  }
+  return mask;
+}
+
+function bits(mask) {
+  let count = 0;
+  for (let rest = mask; rest; rest &= rest - 1) count += 1;
+  return count;
+}
+
+/**
+ * Insertions, deletions, changes and swaps of neighbours between two texts, the longer one's end
+ * left out; gives up above `limit`.
+ */
+export function distance(typed, held, limit) {
+  const width = Math.min(held.length, typed.length + limit);
+  let before = [];
+  let previous = Array.from({ length: width + 1 }, (_, at) => at);
+  for (let i = 1; i <= typed.length; i += 1) {
+    const row = [i];
+    let least = i;
+    for (let j = 1; j <= width; j += 1) {
+      const cost = typed[i - 1] === held[j - 1] ? 0 : 1;
+      let best = Math.min(previous[j] + 1, row[j - 1] + 1, previous[j - 1] + cost);
+      if (i > 1 && j > 1 && typed[i - 1] === held[j - 2] && typed[i - 2] === held[j - 1]) {
+        best = Math.min(best, before[j - 2] + 1);
+      }
+      row[j] = best;
+      if (best < least) least = best;
+    }
+    if (least > limit) return limit + 1;
+    before = previous;
+    previous = row;
+  }
+  return Math.min(...previous);
+}
