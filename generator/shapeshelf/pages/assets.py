@@ -16,6 +16,9 @@ PARTS = (
     "tables.css",
     "lists.css",
     "lookup.css",
+    "filters.css",
+    "compare.css",
+    "learning.css",
     "links.css",
     "print.css",
 )
