@@ -147,10 +147,10 @@ def _mark(kind: str, x: float, y: float, plus_minus: float) -> list[Mark]:
         colour = "band" if kind == "model" else "ink"
         ends = ((x - plus_minus, level), (x + plus_minus, level))
         marks.append(Stroke(ends, Style(colour, None, width), Role.DATA))
-    return [*marks, _symbol(kind, x, y)]
+    return [*marks, symbol(kind, x, y)]
 
 
-def _symbol(kind: str, x: float, y: float) -> Stroke:
+def symbol(kind: str, x: float, y: float) -> Stroke:
     if kind == "ideal":
         return Stroke(((x, y - 11), (x, y + 3)), Style("soft", None, 1.6, (3, 2)), Role.DATA)
     if kind == "model":
@@ -169,7 +169,7 @@ def _legend(kinds: list[str], y: float) -> list[Mark]:
     marks: list[Mark] = []
     x = _LEFT + 6
     for kind in kinds:
-        marks.append(_symbol(kind, x, y))
+        marks.append(symbol(kind, x, y))
         marks.append(Lettering(x + 11, y + 4.5, kind, _TICK_SIZE, anchor="start", colour="soft"))
         x += 11 + text_width(kind, _TICK_SIZE) + 26
     return marks

@@ -10,7 +10,7 @@ from shapeshelf.figures.to_scale import scaled_view
 from shapeshelf.pages.addresses import compound_address
 from shapeshelf.pages.compound import shape_words
 from shapeshelf.pages.properties import polarity_word
-from shapeshelf.pages.typesetting import NO_BREAK, number_text, point_group_text, without_charge
+from shapeshelf.pages.typesetting import NO_BREAK, number_text, without_charge
 from shapeshelf.pages.values import ANGSTROM, DEBYE, DEGREE, Unit, value_view
 from shapeshelf.report.model import CentreReport, CompoundReport, Value
 
@@ -73,11 +73,12 @@ def _shape_rows(report: CompoundReport) -> Iterator[ComparedRow]:
         centre = centres[0]
         pairs = centre.centre.lone_pairs
         yield ComparedRow("neighbours", "Shape", "Neighbours", str(centre.centre.bonded))
-        yield ComparedRow("pairs", "Shape", "Lone pairs", "not counted" if pairs is None else str(pairs))
+        counted = "not counted" if pairs is None else str(pairs)
+        yield ComparedRow("pairs", "Shape", "Lone pairs", counted)
         yield ComparedRow("notation", "Shape", "AXE notation", centre.centre.notation)
         label = centre.hybridisation.label if centre.hybridisation else None
         yield ComparedRow("hybrid", "Shape", "Hybridisation", label or "none")
-    yield ComparedRow("group", "Shape", "Point group", point_group_text(report.point_group))
+    yield ComparedRow("group", "Shape", "Point group", report.point_group)
 
 
 def _angle_rows(
@@ -126,8 +127,8 @@ def _record_rows(report: CompoundReport) -> Iterator[ComparedRow]:
     for key, label, text in (*held, *kept):
         if text:
             yield ComparedRow(key, "Record", label, text)
-    cautions = "; ".join(caution.code or caution.text for caution in report.cautions)
-    yield ComparedRow("cautions", "Record", "Cautions", cautions or "none recorded")
+    for text in [c.code or c.text for c in report.cautions] or ["none recorded"]:
+        yield ComparedRow("cautions", "Record", "Cautions", text)
 
 
 def _value_row(

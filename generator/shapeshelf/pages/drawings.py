@@ -1,11 +1,13 @@
 """Which figures stand on which page, as markup that is safe to place."""
 
 import re
+from collections.abc import Sequence
 from dataclasses import dataclass
 from functools import cache
 
 from markupsafe import Markup
 
+from shapeshelf.figures.angle_scale import ScaleRow, angle_scale
 from shapeshelf.figures.bench import bench_view
 from shapeshelf.figures.glyph import glyph, shape_drawing
 from shapeshelf.figures.lewis import lewis_structure
@@ -62,6 +64,13 @@ def shape_glyph(shape: str) -> Markup:
 def shape_figure(shape: str) -> Markup | None:
     """Return the large drawing of a shape, lone pairs with it."""
     return _maybe(shape_drawing(shape))
+
+
+def scale_figure(
+    shape: str, rows: Sequence[ScaleRow], ideals: Sequence[float]
+) -> Markup | None:
+    """Return the angles of a shape's compounds on one scale."""
+    return _maybe(angle_scale(shape, rows, ideals))
 
 
 def _maybe(svg: Svg | None) -> Markup | None:

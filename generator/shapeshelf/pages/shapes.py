@@ -1,20 +1,30 @@
 """Pages of shapes: one a shape, and the overview by neighbours and lone pairs."""
 
+import re
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 
 from markupsafe import Markup
 
 from shapeshelf.catalogue.model import Source
+from shapeshelf.figures.angle_scale import ScaleRow
 from shapeshelf.pages.addresses import compound_address, shape_address
 from shapeshelf.pages.centres import AngleView, angle_view
-from shapeshelf.pages.typesetting import formula_markup, notation_markup
+from shapeshelf.pages.shape_notes import OriginView, ideal_degrees, origins, usual_shapes
+from shapeshelf.pages.typesetting import (
+    charge_text,
+    formula_markup,
+    notation_markup,
+    without_charge,
+)
 from shapeshelf.reference.shapes import SHAPES
 from shapeshelf.report.model import CentreReport, CompoundReport
 
 FEWEST_NEIGHBOURS = 2
 USUAL_NEIGHBOURS = 7
-USUAL_LONE_PAIRS = 3
+USUAL_LONE_PAIRS = 4
+MOST_ON_SCALE = 60
+"""Lines of the scale; where there are more, those with a measured angle come first."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -39,6 +49,10 @@ class ShapeView:
     arrangements: tuple[str, ...]
     members: tuple[MemberView, ...]
     compounds: int
+    ways: tuple[OriginView, ...] = ()
+    scale: tuple[ScaleRow, ...] = ()
+    ideals: tuple[float, ...] = ()
+    """Ideal angles in degrees, for the scale."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -84,6 +98,9 @@ def overview(reports: Sequence[CompoundReport]) -> OverviewView:
             if centre.shape:
                 key = (centre.centre.bonded, centre.centre.lone_pairs)
                 held.setdefault(key, {}).setdefault(centre.shape, set()).add(report.id or "")
+    for key, shapes in usual_shapes().items():
+        for shape in shapes:
+            held.setdefault(key, {}).setdefault(shape, set())
     neighbours = range(FEWEST_NEIGHBOURS, max([USUAL_NEIGHBOURS, *(n for n, _ in held)]) + 1)
     pairs = range(max([USUAL_LONE_PAIRS, *(p for _, p in held if p is not None)]) + 1)
     merged: dict[str, set[str]] = {}
@@ -124,7 +141,32 @@ def _shape_view(
         arrangements=tuple(dict.fromkeys(arrangement for arrangement, _ in known)),
         members=tuple(_member_view(report, centre, sources) for report, centre in members),
         compounds=len({report.id for report, _ in members}),
+        ways=origins(name),
+        scale=_scale_rows(members),
+        ideals=ideal_degrees(name),
     )
+
+
+def _scale_rows(members: Sequence[tuple[CompoundReport, CentreReport]]) -> tuple[ScaleRow, ...]:
+    """Return one row a compound in the order of its widest angle, measured ones kept first."""
+    rows: dict[str, ScaleRow] = {}
+    for report, centre in members:
+        points = tuple((row.degrees.value, row.degrees.basis.value) for row in centre.angles)
+        held = rows.get(report.id or "")
+        label = _lettering(report.molecule.formula, report.molecule.charge)
+        rows[report.id or ""] = ScaleRow(label, (*(held.points if held else ()), *points))
+    told = sorted((row for row in rows.values() if row.points), key=_measured_first)
+    return tuple(sorted(told[:MOST_ON_SCALE], key=lambda row: max(row.points)[0]))
+
+
+def _measured_first(row: ScaleRow) -> bool:
+    return all(basis != "measured" for _, basis in row.points)
+
+
+def _lettering(formula: str, charge: int) -> str:
+    """Return a formula as the figures room letters it: ``SO_{4}^{2−}``."""
+    body = re.sub(r"(\d+)", r"_{\1}", without_charge(formula, charge))
+    return body + (f"^{{{charge_text(charge)}}}" if charge else "")
 
 
 def _member_view(

@@ -10,7 +10,12 @@ from shapeshelf.catalogue.model import Catalogue, Entry
 from shapeshelf.pages import addresses
 from shapeshelf.pages.comparing import COMPARISON, comparison_json
 from shapeshelf.pages.compound import NOWHERE, CompoundView, compound_view, source_view
-from shapeshelf.pages.drawings import compound_figures, shape_figure, shape_glyph
+from shapeshelf.pages.drawings import (
+    compound_figures,
+    scale_figure,
+    shape_figure,
+    shape_glyph,
+)
 from shapeshelf.pages.finding import data_file, finding_files
 from shapeshelf.pages.glossary import term_views
 from shapeshelf.pages.history import Change, last_changes
@@ -111,7 +116,11 @@ def _page(address: str, title: str, part: str, **values: object) -> SitePage:
 
 def _shape_page(shape: ShapeView) -> SitePage:
     title = shape.name[:1].upper() + shape.name[1:]
-    return _page(shape.address, title, "shape.html", shape=shape, figure=shape_figure(shape.name))
+    figures = {
+        "figure": shape_figure(shape.name),
+        "scale": scale_figure(shape.name, shape.scale, shape.ideals),
+    }
+    return _page(shape.address, title, "shape.html", shape=shape, **figures)
 
 
 def _compound_pages(

@@ -25,6 +25,15 @@ export function groupNode(group) {
   return node;
 }
 
+/** `sp3d2` with its numbers above the line. */
+export function hybridNode(label) {
+  const node = document.createElement("span");
+  for (const [piece, digits] of label.matchAll(/(\d+)|[^\d]+/g)) {
+    node.append(digits ? raised("sup", piece) : piece);
+  }
+  return node;
+}
+
 /** A formula as plain text, to copy: `SO₄2−` would mislead, so the charge stands apart. */
 export function formulaText(formula, charge) {
   return charge ? `${formula} ${chargeText(charge)}` : formula;

@@ -16,15 +16,17 @@ export function linedUp(compounds) {
   return [...groups].map(([group, lines]) => [group, [...lines.values()]]);
 }
 
-/** Words differ where they are not the same; numbers where they are further apart than ± allows. */
+/**
+ * Whether any two of the cells that hold something differ: words where they are not the same,
+ * numbers where they are further apart than their ± allow.
+ */
 export function differs(cells) {
-  const [first, ...others] = cells;
-  return others.some((cell) => unlike(first, cell)) || others.some((a, at) => others.slice(at + 1).some((b) => unlike(a, b)));
+  const held = cells.filter((rows) => rows.length);
+  return held.some((left, at) => held.slice(at + 1).some((right) => unlike(left, right)));
 }
 
 function unlike(left, right) {
-  if (left.length !== right.length) return true;
-  return left.some((row, at) => rowsDiffer(row, right[at]));
+  return left.length !== right.length || left.some((row, at) => rowsDiffer(row, right[at]));
 }
 
 function rowsDiffer(a, b) {

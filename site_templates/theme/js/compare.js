@@ -1,6 +1,6 @@
 // Two to six compounds side by side: drawings to one scale, differences marked.
 
-import { formulaNode } from "./chemistry.js";
+import { formulaNode, groupNode, hybridNode } from "./chemistry.js";
 import { loadData, pageAddress } from "./data.js";
 import { addField } from "./compare-field.js";
 import { differs, linedUp } from "./compare-rows.js";
@@ -8,6 +8,11 @@ import { make } from "./nodes.js";
 import { compareAddress, keepPicks, MOST } from "./picks.js";
 
 const ROOM = 300;
+const ROOM_FOR_MANY = 215;
+const MANY = 4;
+const SHARE_OF_A_PHONE = 0.33;
+const OWN = new Set(["cas", "code", "kept", "owner"]);
+const SETTERS = { group: groupNode, hybrid: hybridNode, notation: (text) => formulaNode(text, 0) };
 const LARGEST_FACTOR = 1.6;
 
 export async function comparePage(section) {
@@ -76,7 +81,8 @@ function drawHead(page, compounds) {
 /** One factor for all drawings: the widest and highest still fit. */
 function factorFor(compounds) {
   const largest = Math.max(1, ...compounds.map(({ width, height }) => Math.max(width, height)));
-  return Math.min(LARGEST_FACTOR, ROOM / largest);
+  const room = compounds.length < MANY ? ROOM : ROOM_FOR_MANY;
+  return Math.min(LARGEST_FACTOR, Math.min(room, innerWidth * SHARE_OF_A_PHONE) / largest);
 }
 
 /** Our own markup, made with the site; its size is the only thing changed. */
@@ -98,8 +104,9 @@ function drawRows(table, compounds) {
   table.append(...bodies);
 }
 
-function line({ label, cells }) {
-  const unlike = cells.length > 1 && differs(cells);
+/** What each compound has of its own, such as its CAS number, is no difference worth a mark. */
+function line({ key, label, cells }) {
+  const unlike = !OWN.has(key) && differs(cells);
   const mark = unlike ? make("span", { class: "unlike" }, "differs") : "";
   return make(
     "tr", { class: unlike ? "compare__unlike" : "compare__alike" },
@@ -110,8 +117,8 @@ function line({ label, cells }) {
 
 function cellParts(rows) {
   if (!rows.length) return [make("span", { class: "nil" }, "–")];
-  return rows.map(({ text, basis }) => {
+  return rows.map(({ key, text, basis }) => {
     const badge = basis ? make("span", { class: `basis basis--${basis}` }, basis) : "";
-    return make("span", { class: "compare__value" }, text, " ", badge);
+    return make("span", { class: "compare__value" }, SETTERS[key]?.(text) ?? text, " ", badge);
   });
 }

@@ -57,7 +57,7 @@ function open(page, index, facets) {
   showRanges(page);
   offerColumns(page);
   listen(page);
-  page.fold.open = matchMedia("(min-width: 64rem)").matches || isFiltered(page.state);
+  page.fold.open = matchMedia("(min-width: 64rem)").matches;
   draw(page);
   page.section.dataset.ready = "";
 }
