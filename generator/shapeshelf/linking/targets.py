@@ -20,6 +20,8 @@ _PAGES = frozenset(
     )
     for ending in ("", "/", "/index.html")
 ) | {"index.html", "catalogue.json", "catalogue.csv", "catalogue.sdf", "objects.inv"}  # fmt: skip
+_PERHAPS = frozenset(("drawing", "protocols", "content"))
+"""Anchors that a page has or not, which no published value tells."""
 _SECTION_QUANTITY = {
     "angles": "angle",
     "lengths": "length",
@@ -122,7 +124,7 @@ def _compound_target(compound_id: str, anchor: str, published: Published) -> Tar
 
 
 def _anchor_fault(compound: PublishedCompound, anchor: str) -> Fault | None:
-    if not anchor or anchor in compound.values or anchor in compound.anchors:
+    if not anchor or anchor in _PERHAPS or anchor in {*compound.values, *compound.anchors}:
         return None
     near = difflib.get_close_matches(anchor, [*compound.values, *compound.anchors], n=1, cutoff=0)
     return Fault("gone", f"the page has no #{anchor}; nearest is #{near[0]}")
