@@ -18,9 +18,10 @@ from shapeshelf.figures.flat import (
 )
 from shapeshelf.figures.framing import MARGIN, extent, framed
 from shapeshelf.figures.lettering import charge_script
-from shapeshelf.figures.model import Drawing, Lettering, Mark, Role, Style
+from shapeshelf.figures.model import Drawing, Lettering, Mark, Point, Role, Style
 from shapeshelf.figures.outlines import pill
 from shapeshelf.figures.palette import element_colour
+from shapeshelf.figures.rings import smallest_rings
 from shapeshelf.figures.stereo import stereo_bonds
 from shapeshelf.figures.sticks import Segment, lines, trimmed, wedge_or_hash
 from shapeshelf.report.model import CompoundReport
@@ -63,6 +64,7 @@ def atom_labels(report: CompoundReport) -> tuple[str, ...]:
 
 def _bonds(report: CompoundReport, flat: Flat) -> list[Mark]:
     marked = stereo_bonds(report.molecule, flat.points, flat.shown)
+    rings = smallest_rings(report.molecule)
     marks: list[Mark] = []
     for bond, order in zip(report.molecule.bonds, report.lewis.bond_orders, strict=True):
         if not {bond.begin, bond.end} <= flat.shown:
@@ -76,8 +78,17 @@ def _bonds(report: CompoundReport, flat: Flat) -> list[Mark]:
         if stereo:
             marks += wedge_or_hash(segment, stereo.towards_viewer)
         else:
-            marks += lines(Segment(segment.start, segment.end, _BOND_WIDTH), order, bond.dative)
+            inside = _middle(flat, rings.get(frozenset((bond.begin, bond.end))))
+            thin = Segment(segment.start, segment.end, _BOND_WIDTH)
+            marks += lines(thin, order, bond.dative, inside)
     return marks
+
+
+def _middle(flat: Flat, ring: tuple[int, ...] | None) -> Point | None:
+    if not ring:
+        return None
+    x, y = flat.points[list(ring)].mean(axis=0)
+    return (float(x), float(y))
 
 
 def _reach(flat: Flat, atom: int, other: int) -> float:
@@ -121,9 +132,11 @@ def _numbers(report: CompoundReport, flat: Flat) -> list[Mark]:
 
 def _crowd(flat: Flat) -> Array:
     parts = [EMPTY]
+    rings = smallest_rings(flat.molecule)
     for bond in flat.molecule.bonds:
         if {bond.begin, bond.end} <= flat.shown:
-            parts.append(discs_along(flat.points[[bond.begin, bond.end]], 4.5 * min(bond.order, 2)))
+            lines = 2 if frozenset((bond.begin, bond.end)) in rings else min(bond.order, 2)
+            parts.append(discs_along(flat.points[[bond.begin, bond.end]], 4.5 * lines))
     for atom in flat.lettered:
         parts.append(discs_in_box((*flat.at(atom), _pill_width(flat, atom), 2 * _RING + 2, 0.0)))
     return np.concatenate(parts)

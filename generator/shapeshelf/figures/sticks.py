@@ -17,6 +17,7 @@ _GAP = 3.4
 _WEDGE_HALF = 5.2
 _HASH_STEP = 5.0
 _SHORT_DASH = (5.0, 4.0)
+_THINNER, _SHORTER = 0.8, 0.13
 _WHOLE = 0.2
 """A bond order this near a whole number is drawn as that number."""
 
@@ -47,21 +48,25 @@ def trimmed(start: Point, end: Point, start_radius: float, end_radius: float) ->
     )
 
 
-def lines(segment: Segment, order: float, dative: bool = False) -> list[Stroke]:
-    """Return one, two or three lines; a broken line for the part of a bond that is shared."""
+def lines(
+    segment: Segment, order: float, dative: bool = False, inside: Point | None = None
+) -> list[Stroke]:
+    """Return one, two or three lines; a broken line for the part of a bond that is shared.
+
+    In a ring, ``inside`` is its middle: the second line of a double bond lies there, shorter.
+    """
     if dative:
         return _arrow(segment)
-    whole = round(order) if abs(order - round(order)) <= _WHOLE else math.ceil(order)
-    shared = abs(order - round(order)) > _WHOLE
-    offsets = {1: [0.0], 2: [-1.0, 1.0], 3: [-1.9, 0.0, 1.9]}[max(1, min(3, whole))]
-    width = segment.width if len(offsets) == 1 else segment.width * 0.8
+    whole = max(1, min(3, round(order) if _is_whole(order) else math.ceil(order)))
+    last = () if _is_whole(order) else _SHORT_DASH
+    if whole == 2 and inside is not None:
+        return _double_in_ring(segment, inside, last)
+    offsets = {1: [0.0], 2: [-1.0, 1.0], 3: [-1.9, 0.0, 1.9]}[whole]
+    width = segment.width if whole == 1 else segment.width * _THINNER
+    dashes = [()] * (whole - 1) + [last]
     return [
-        _line(
-            segment,
-            offset * _GAP,
-            Style("ink", None, width, _SHORT_DASH if shared and index == len(offsets) - 1 else ()),
-        )
-        for index, offset in enumerate(offsets)
+        _line(segment, offset * _GAP, Style("ink", None, width, dash))
+        for offset, dash in zip(offsets, dashes, strict=True)
     ]
 
 
@@ -93,11 +98,26 @@ def rim(segment: Segment) -> Stroke:
     return Stroke(points, Style("paper", None, segment.width + 6), Role.FRAME)
 
 
+def _is_whole(order: float) -> bool:
+    return abs(order - round(order)) <= _WHOLE
+
+
+def _double_in_ring(segment: Segment, inside: Point, dash: tuple[float, ...]) -> list[Stroke]:
+    """Return a line from corner to corner and a shorter one on the side of ``inside``."""
+    (nx, ny), (x, y) = _normal(segment), _along(segment, 0.5)
+    side = math.copysign(2 * _GAP, (inside[0] - x) * nx + (inside[1] - y) * ny)
+    short = Segment(_along(segment, _SHORTER), _along(segment, 1 - _SHORTER), segment.width)
+    return [
+        _line(segment, 0.0, Style("ink", None, segment.width)),
+        _line(short, side, Style("ink", None, segment.width * _THINNER, dash)),
+    ]
+
+
 def _arrow(segment: Segment) -> list[Stroke]:
     heading = math.atan2(segment.end[1] - segment.start[1], segment.end[0] - segment.start[0])
     shaft = Segment(segment.start, _along(segment, 1 - 8 / max(segment.length, 16)))
     head = arrowhead(segment.end, heading, 13, "ink", Role.BOND)
-    return [_line(shaft, 0.0, Style("ink", None, segment.width * 0.8)), head]
+    return [_line(shaft, 0.0, Style("ink", None, segment.width * _THINNER)), head]
 
 
 def _line(segment: Segment, offset: float, style: Style) -> Stroke:

@@ -4,7 +4,7 @@ The numbers are those of the bench view itself, so that the first picture turned
 one: the same frame of principal axes, the same radii, the same first view.
 """
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 from numpy.typing import NDArray
@@ -12,6 +12,7 @@ from numpy.typing import NDArray
 from shapeshelf.figures.bench import MOST_ATOMS, choose_view
 from shapeshelf.figures.palette import element_colour
 from shapeshelf.figures.projection import VIEWPOINT_RADII
+from shapeshelf.figures.rings import smallest_rings
 from shapeshelf.figures.scene import (
     LOBE_RADIUS_ANGSTROM,
     Lobe,
@@ -32,8 +33,10 @@ _LARGEST_SCALE = 108.0
 _PERSPECTIVE_GROWTH = 1.03
 """How far beyond its distance from the middle perspective can draw a point: at most
 1/sin(arccos(1/VIEWPOINT_RADII)), 1.021."""
-_SMALLEST_RING = 14.0
-"""Pixels: a symbol in it can still be read on a phone."""
+_OUTERMOST = 0.3
+"""Ångström beyond the middles of atoms and lobes that their outlines reach."""
+_SMALLEST_RING, _SMALLEST_LOBE = 16.0, 12.0
+"""Radii in pixels at which letters and electrons can still be read on a phone."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -62,6 +65,8 @@ class TurnScene:
 
     atoms: tuple[TurnAtom, ...]
     bonds: tuple[Stick, ...]
+    rings: tuple[tuple[int, ...], ...]
+    """For each bond the atoms of its smallest ring, none where it lies in none."""
     lobes: tuple[TurnLobe, ...]
     lobe_radius_angstrom: float
     view: tuple[Vector, Vector, Vector]
@@ -79,24 +84,47 @@ def turn_scene(report: CompoundReport) -> TurnScene:
     many = len(report.molecule.atoms) > MOST_ATOMS
     kept = _kept(report.molecule, many)
     scene = _part(build_scene(report), kept)
+    scale = _scale(scene)
+    if many:
+        scene = replace(scene, radii=np.maximum(scene.radii, _SMALLEST_RING / scale))
     ends = lobe_ends(scene)
-    everything = np.concatenate([scene.points, ends])
-    middle = everything.mean(axis=0)
-    span = float(np.linalg.norm(everything - middle, axis=1).max()) + 0.3
-    scale = min(_LARGEST_SCALE, (HEIGHT / 2 - _EDGE) / span / _PERSPECTIVE_GROWTH)
+    middle = _middle(scene)
     letters = _letters(report, kept, scene.lobes) if many else scene.elements
     return TurnScene(
-        atoms=_atoms(scene, letters, middle, _SMALLEST_RING / scale),
+        atoms=_atoms(scene, letters, middle),
         bonds=scene.sticks,
+        rings=_rings(report.molecule, kept, scene.sticks),
         lobes=tuple(
             TurnLobe(one.atom, _vector(end - middle), one.electrons)
             for one, end in zip(scene.lobes, ends, strict=True)
         ),
-        lobe_radius_angstrom=LOBE_RADIUS_ANGSTROM,
-        view=_rows(choose_view(scene)),
-        eye_angstrom=round(VIEWPOINT_RADII * span, 4),
+        lobe_radius_angstrom=round(max(LOBE_RADIUS_ANGSTROM, _SMALLEST_LOBE / scale), 4),
+        view=_rows(_flattest(scene) if many else choose_view(scene)),
+        eye_angstrom=round(VIEWPOINT_RADII * _span(scene), 4),
         scale=round(scale, 3),
     )
+
+
+def _flattest(scene: Scene) -> Array:
+    """Return the view onto the plane in which a molecule spreads most, lone pairs upwards."""
+    _, _, axes = np.linalg.svd(scene.points - scene.points.mean(axis=0))
+    right, up = axes[0], axes[1]
+    above = np.sum([one.direction for one in scene.lobes], axis=0) if scene.lobes else -right
+    up = up if up @ above >= 0 else -up
+    return np.array([right, up, np.cross(right, up)])
+
+
+def _middle(scene: Scene) -> Array:
+    return np.asarray(np.concatenate([scene.points, lobe_ends(scene)]).mean(axis=0))
+
+
+def _span(scene: Scene) -> float:
+    everything = np.concatenate([scene.points, lobe_ends(scene)]) - _middle(scene)
+    return float(np.linalg.norm(everything, axis=1).max()) + _OUTERMOST
+
+
+def _scale(scene: Scene) -> float:
+    return min(_LARGEST_SCALE, (HEIGHT / 2 - _EDGE) / _span(scene) / _PERSPECTIVE_GROWTH)
 
 
 def _kept(molecule: Molecule, many: bool) -> list[int]:
@@ -134,14 +162,21 @@ def _letters(report: CompoundReport, kept: list[int], lobes: tuple[Lobe, ...]) -
     )
 
 
-def _atoms(
-    scene: Scene, letters: tuple[str, ...], middle: Array, smallest: float
-) -> tuple[TurnAtom, ...]:
+def _rings(
+    molecule: Molecule, kept: list[int], sticks: tuple[Stick, ...]
+) -> tuple[tuple[int, ...], ...]:
+    rings = smallest_rings(molecule)
+    new = {atom: index for index, atom in enumerate(kept)}
+    found = [rings.get(frozenset((kept[s.begin], kept[s.end])), ()) for s in sticks]
+    return tuple(tuple(new[atom] for atom in ring) for ring in found)
+
+
+def _atoms(scene: Scene, letters: tuple[str, ...], middle: Array) -> tuple[TurnAtom, ...]:
     return tuple(
         TurnAtom(
             text,
             _vector(point - middle),
-            round(max(float(size), smallest), 4) if text else 0.0,
+            round(float(size), 4) if text else 0.0,
             element_colour(element),
         )
         for text, point, size, element in zip(

@@ -10,8 +10,10 @@ from markupsafe import Markup
 from shapeshelf.figures.angle_scale import ScaleRow, angle_scale
 from shapeshelf.figures.bench import bench_view
 from shapeshelf.figures.glyph import glyph, shape_drawing
+from shapeshelf.figures.infrared import infrared_sticks
 from shapeshelf.figures.lewis import lewis_structure
 from shapeshelf.figures.model import Svg
+from shapeshelf.figures.nmr import nmr_pattern
 from shapeshelf.figures.sheet import sheet
 from shapeshelf.figures.strip import strip
 from shapeshelf.pages.turning import turn_data
@@ -31,6 +33,8 @@ class CompoundFigures:
     lewis: Markup | None
     sheet: Markup | None
     strip: Markup | None
+    nmr: Markup | None = None
+    infrared: Markup | None = None
 
 
 def compound_figures(report: CompoundReport) -> CompoundFigures:
@@ -41,6 +45,8 @@ def compound_figures(report: CompoundReport) -> CompoundFigures:
         lewis=_maybe(lewis_structure(report)),
         sheet=_maybe(sheet(report)),
         strip=_maybe(strip(report)),
+        nmr=_maybe(nmr_pattern(report)),
+        infrared=_maybe(infrared_sticks(report)),
     )
 
 

@@ -21,6 +21,9 @@ def turn_values(scene: TurnScene) -> dict[str, object]:
         "view": scene.view,
         "lobe": scene.lobe_radius_angstrom,
         "atoms": [[a.letters, a.place, a.radius_angstrom, a.colour] for a in scene.atoms],
-        "bonds": [[b.begin, b.end, round(b.order, 2), int(b.dative)] for b in scene.bonds],
+        "bonds": [
+            [bond.begin, bond.end, round(bond.order, 2), int(bond.dative), ring]
+            for bond, ring in zip(scene.bonds, scene.rings, strict=True)
+        ],
         "lobes": [[one.atom, one.place, one.electrons] for one in scene.lobes],
     }

@@ -104,6 +104,25 @@ class Caution:
 
 
 @dataclass(frozen=True, slots=True)
+class Band:
+    """One calculated vibration."""
+
+    wavenumber_per_cm: float
+    intensity_km_per_mol: float
+    label: str = ""
+    """The mode by species and number, or by what moves, where that is known."""
+
+
+@dataclass(frozen=True, slots=True)
+class CalculatedVibrations:
+    """The harmonic, unscaled vibrations of one calculation."""
+
+    method: str
+    """As a page prints it: ``PBE0/def2-TZVP``."""
+    bands: tuple[Band, ...]
+
+
+@dataclass(frozen=True, slots=True)
 class CompoundReport:
     """Everything known about one compound."""
 
@@ -130,3 +149,5 @@ class CompoundReport:
     cautions: tuple[Caution, ...]
     unmatched: tuple[Measurement, ...] = ()
     """Measured values whose label fits nothing in the structure."""
+    frequencies: CalculatedVibrations | None = None
+    """``None`` where no calculation of them is on record."""

@@ -9,7 +9,7 @@ const GAP = 3.4;
 const RIM = 6;
 const OFFSETS = { 1: [0], 2: [-1, 1], 3: [-1.9, 0, 1.9] };
 const WHOLE = 0.2;
-const SYMBOL = { share: 0.78, largest: 26 };
+const SYMBOL = { share: 0.78, largest: 26, room: 1.6, letter: 0.62 }; // shares of the radius, px, em
 
 export function turningMarks(data) {
   // Elements for every atom, bond and lobe, and the function that sets them for a view.
@@ -58,8 +58,8 @@ function atomItem([letters, , , colour], index) {
     group,
     set({ atoms }) {
       const { x, y, z, r, growth } = atoms[index];
-      const narrow = 1.45 / Math.max(1.45, letters.length);
-      const size = Math.min(SYMBOL.largest * growth, r * SYMBOL.share * Math.max(narrow, 0.7));
+      const share = Math.min(SYMBOL.share, SYMBOL.room / (SYMBOL.letter * letters.length));
+      const size = Math.min(SYMBOL.largest * growth, r * share);
       set(ring, { cx: x, cy: y, r, "stroke-width": weight(RING, growth) });
       set(text, { x, y: y + 0.36 * size, "font-size": size });
       return z;
@@ -67,7 +67,7 @@ function atomItem([letters, , , colour], index) {
   };
 }
 
-function bondItem([begin, end, order, dative]) {
+function bondItem([begin, end, order, dative, ring]) {
   const group = made("g");
   const rim = made("path", { fill: "none", stroke: paint("paper") });
   const solid = made("path", { fill: paint("ink") });
@@ -83,7 +83,8 @@ function bondItem([begin, end, order, dative]) {
       if (!segment) return depth;
       const rimWidth = (segment.from.w + segment.to.w) / 2 + RIM;
       set(rim, { d: path([along(segment, 0.14), along(segment, 0.86)]), "stroke-width": rimWidth });
-      drawLines(segment, order, dative, solid, broken);
+      const inside = ring.length ? middle(ring.map((atom) => atoms[atom])) : null;
+      drawLines(segment, order, dative, inside, solid, broken);
       return depth;
     },
   };
@@ -103,21 +104,38 @@ function visible(one, other) {
   return { from: end(one, 1, start), to: end(other, -1, stop), nx: -uy, ny: ux, length };
 }
 
-function drawLines(segment, order, dative, solid, broken) {
-  const shared = Math.abs(order - Math.round(order)) > WHOLE;
-  const whole = Math.max(1, Math.min(3, shared ? Math.ceil(order) : Math.round(order)));
-  const offsets = dative ? [0] : OFFSETS[whole];
-  const thin = offsets.length > 1 || dative ? 0.8 : 1;
-  const full = shared && !dative ? offsets.slice(0, -1) : offsets;
-  const shaft = dative ? { ...segment, to: along(segment, 1 - 8 / Math.max(16, segment.length)) } : segment;
-  const lines = full.map((offset) => taper(shaft, offset * GAP, thin));
-  if (dative) lines.push(arrowhead(segment));
-  set(solid, { d: lines.join("") });
-  const last = shared && !dative ? offsets[offsets.length - 1] * GAP : null;
-  set(broken, {
-    d: last === null ? "" : path([beside(segment, segment.from, last), beside(segment, segment.to, last)]),
-    "stroke-width": ((segment.from.w + segment.to.w) / 2) * thin,
-  });
+function drawLines(segment, order, dative, inside, solid, broken) {
+  const lines = dative ? [[0, 0.8, 0]] : linesOf(segment, order, inside);
+  const shared = !dative && Math.abs(order - Math.round(order)) > WHOLE;
+  const dashed = shared ? lines.pop() : null;
+  const shaft = dative ? shortened(segment, 0, 8 / Math.max(16, segment.length)) : segment;
+  const drawn = lines.map(([offset, thin, gone]) => taper(shortened(shaft, gone, gone), offset, thin));
+  set(solid, { d: drawn.join("") + (dative ? arrowhead(segment) : "") });
+  set(broken, dashed ? dashes(segment, dashed) : { d: "" });
+}
+
+function linesOf(segment, order, inside) {
+  // [offset in pixels, share of the full weight, share left off at each end]
+  const whole = Math.abs(order - Math.round(order)) <= WHOLE ? Math.round(order) : Math.ceil(order);
+  if (whole === 2 && inside) {
+    const { x, y } = along(segment, 0.5);
+    const side = Math.sign((inside.x - x) * segment.nx + (inside.y - y) * segment.ny) || 1;
+    return [[0, 1, 0], [2 * GAP * side, 0.8, 0.13]];
+  }
+  const offsets = OFFSETS[Math.max(1, Math.min(3, whole))];
+  return offsets.map((offset) => [offset * GAP, offsets.length > 1 ? 0.8 : 1, 0]);
+}
+
+function dashes(segment, [offset, thin, gone]) {
+  const { from, to } = shortened(segment, gone, gone);
+  return {
+    d: path([beside(segment, from, offset), beside(segment, to, offset)]),
+    "stroke-width": ((from.w + to.w) / 2) * thin,
+  };
+}
+
+function shortened(segment, start, stop) {
+  return { ...segment, from: along(segment, start), to: along(segment, 1 - stop) };
 }
 
 function taper(segment, offset, share) {
@@ -142,12 +160,13 @@ function lobeItem([atom, point, electrons], data) {
     group,
     set({ atoms, place, scale }) {
       const [host, end] = [atoms[atom], place(point)];
+      const apex = rim(data.atoms[atom], point, place);
       const r = data.lobe * scale * end.growth;
       const heading = Math.atan2(end.y - host.y, end.x - host.x);
       const near = end.z > host.z;
       // A lobe that points at the viewer is glass: the symbol behind it can still be read.
       set(outline, {
-        d: lobePath(host, end, r, heading),
+        d: lobePath(near ? apex : host, end, r, heading),
         "stroke-width": weight(LOBE_EDGE, end.growth),
         "fill-opacity": near ? 0.55 : 1,
       });
@@ -172,6 +191,18 @@ function lobePath(apex, end, r, heading) {
   const half = Math.acos(r / distance);
   const [one, other] = [heading + Math.PI + half, heading + Math.PI - half];
   return `M${round(apex.x)} ${round(apex.y)}L${on(one)}A${round(r)} ${round(r)} 0 1 1 ${on(other)}Z`;
+}
+
+function rim([, centre, radius], point, place) {
+  // Where a lobe leaves the ball of its atom.
+  const away = point.map((number, k) => number - centre[k]);
+  const share = radius / Math.hypot(...away);
+  return place(centre.map((number, k) => number + share * away[k]));
+}
+
+function middle(places) {
+  const mean = (name) => places.reduce((sum, at) => sum + at[name], 0) / places.length;
+  return { x: mean("x"), y: mean("y") };
 }
 
 function along({ from, to }, share) {

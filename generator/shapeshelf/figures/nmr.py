@@ -1,16 +1,15 @@
-"""Expected spectra as small diagrams: NMR patterns to first order, infrared bands as sticks.
+"""Expected NMR patterns to first order, as a small diagram.
 
-The NMR rows have no shift scale: each shows how one signal splits. Lines are spaced so that
-nested splittings can be told apart, heights are the binomial ones (first-order rules, as in
-H. Günther, NMR Spectroscopy (1995), recalled from memory). Wavenumbers grow to the left, as
-infrared spectra are printed.
+The rows have no shift scale: each shows how one signal splits. Lines are spaced so that nested
+splittings can be told apart, heights are the binomial ones (first-order rules, as in
+H. Günther, NMR Spectroscopy (1995), recalled from memory).
 """
 
 import math
 import re
 from collections.abc import Sequence
 
-from shapeshelf.figures.canvas import render, text_width
+from shapeshelf.figures.canvas import render
 from shapeshelf.figures.lettering import plain
 from shapeshelf.figures.model import Drawing, Lettering, Mark, Role, Stroke, Style, Svg
 from shapeshelf.properties.model import NmrSignal
@@ -26,10 +25,6 @@ _PATTERN_LEFT, _PATTERN_RIGHT = 196.0, 500.0
 _CLOSEST, _WIDEST = 7.0, 18.0
 _NAME, _NOTE = 15.0, 12.5
 _COUPLING = re.compile(r"(\d)J")
-_IR_HEIGHT, _IR_LEFT, _IR_RIGHT, _IR_BASE, _IR_TOP = 220.0, 24.0, 496.0, 176.0, 62.0
-_SAME_BAND = 2.0
-"""Wavenumbers (1/cm) closer than this are one band: members of a degenerate mode."""
-_FAINTEST, _MOST_LABELS = 0.01, 8
 
 
 def nmr_pattern(report: CompoundReport) -> Svg | None:
@@ -64,26 +59,6 @@ def splitting(counts: Sequence[int]) -> tuple[Line, ...]:
                 split[at] = split.get(at, 0.0) + height * math.comb(count, k) / 2**count
         lines = split
     return tuple(sorted(lines.items()))
-
-
-def infrared_sticks(bands: Sequence[Line], name: str, method: str) -> Svg:
-    """Return calculated infrared bands, (wavenumber in 1/cm, intensity in km/mol), as sticks."""
-    return render(infrared_drawing(bands, name, method))
-
-
-def infrared_drawing(bands: Sequence[Line], name: str, method: str) -> Drawing:
-    """Return the stick spectrum as data."""
-    merged = _merged(bands)
-    strongest = max((height for _, height in merged), default=1.0) or 1.0
-    limit = 500.0 * math.ceil(max((place for place, _ in merged), default=500.0) / 500.0 + 0.1)
-    marks = _wavenumber_axis(limit)
-    for place, height in merged:
-        x, y = _x_of(place, limit), _IR_BASE - (_IR_BASE - _IR_TOP) * height / strongest
-        marks.append(Stroke(((x, _IR_BASE), (x, y)), Style("ink", None, 2.0), Role.DATA))
-    marks += _band_labels(merged, strongest, limit)
-    words = ", ".join(f"{p:.0f} cm⁻¹ ({h:.0f} km/mol)" for p, h in merged if h > 0.5)
-    title = f"{name}, calculated infrared bands"
-    return Drawing("infrared", WIDTH, _IR_HEIGHT, tuple(marks), title, f"{method}: {words}.")
 
 
 def _steps(counts: Sequence[int]) -> list[float]:
@@ -129,54 +104,3 @@ def _nucleus(signal: NmrSignal) -> str:
 def _signal_words(signal: NmrSignal) -> str:
     partners = f" through {', '.join(signal.partners)}" if signal.partners else ""
     return f"{plain(_nucleus(signal))}: {signal.multiplicity}{partners}"
-
-
-def _merged(bands: Sequence[Line]) -> list[Line]:
-    """Join the members of degenerate bands; leave imaginary ones out."""
-    merged: list[Line] = []
-    for place, height in sorted(bands):
-        if place <= 0:
-            continue
-        if merged and place - merged[-1][0] < _SAME_BAND:
-            merged[-1] = (merged[-1][0], merged[-1][1] + height)
-        else:
-            merged.append((place, height))
-    return merged
-
-
-def _x_of(wavenumber: float, limit: float) -> float:
-    return _IR_RIGHT - (_IR_RIGHT - _IR_LEFT) * wavenumber / limit
-
-
-def _wavenumber_axis(limit: float) -> list[Mark]:
-    marks: list[Mark] = [
-        Stroke(((_IR_LEFT, _IR_BASE), (_IR_RIGHT, _IR_BASE)), Style("line", None, 1.0), Role.AXIS)
-    ]
-    step = 500.0 if limit <= 2500 else 1000.0
-    for count in range(int(limit / step) + 1):
-        x = _x_of(count * step, limit)
-        marks.append(Stroke(((x, _IR_BASE), (x, _IR_BASE + 5)), Style("line"), Role.AXIS))
-        anchor = "end" if count == 0 else "middle"
-        text = f"{count * step:.0f}"
-        marks.append(Lettering(x, _IR_BASE + 19, text, _NOTE, colour="soft", anchor=anchor))
-    unit = Lettering(_IR_RIGHT, _IR_BASE + 37, "cm^{−1}", _NOTE, colour="soft", anchor="end")
-    return [*marks, unit]
-
-
-def _band_labels(merged: Sequence[Line], strongest: float, limit: float) -> list[Mark]:
-    """Label the strongest bands, each at the lowest of three levels where it is free."""
-    chosen = sorted(merged, key=lambda band: -band[1])[:_MOST_LABELS]
-    taken: list[tuple[float, float, int]] = []
-    marks: list[Mark] = []
-    for place, height in chosen:
-        if height < _FAINTEST * strongest:
-            continue
-        text, x = f"{place:.0f}", _x_of(place, limit)
-        half = text_width(text, _NOTE) / 2 + 3
-        x = min(max(x, half), WIDTH - half)
-        for level in range(3):
-            if all(lv != level or x + half < lo or x - half > hi for lo, hi, lv in taken):
-                taken.append((x - half, x + half, level))
-                marks.append(Lettering(x, _IR_TOP - 10 - 17 * level, text, _NOTE))
-                break
-    return marks
