@@ -12,6 +12,7 @@ from shapeshelf.geometry.assembly import assemble
 from shapeshelf.geometry.symmetry import find_symmetry
 from shapeshelf.geometry.vectors import rotation_about
 from shapeshelf.properties.charge_parameters import UNCERTAINTY_DEBYE
+from shapeshelf.properties.dipole_classes import CLASSES
 from shapeshelf.properties.polarity import dipole
 from shapeshelf.structure.reading import read_smiles
 
@@ -213,6 +214,12 @@ def test_unfitted_elements_say_so_by_a_wider_uncertainty():
     _, model, _ = worked_out("O=[Cr](=O)(Cl)Cl")
     assert model.uncertainty_debye == UNCERTAINTY_DEBYE["unfitted"]
     assert UNCERTAINTY_DEBYE["unfitted"] > UNCERTAINTY_DEBYE["organic"]
+
+
+def test_every_class_has_earned_its_uncertainty():
+    """No class of molecule without a half-width from residuals (dipole_classes.py)."""
+    assert set(UNCERTAINTY_DEBYE) == set(CLASSES)
+    assert min(UNCERTAINTY_DEBYE.values()) > 0.1
 
 
 def test_fit_table_agrees_with_the_dataset():

@@ -13,7 +13,8 @@ Q4  Induction: the other neighbours of A, having drawn on it, draw through it on
     sum of their chi less that of A.
 Q5  Formal charges even out along the bonds; factor: the difference of the charges.
 Q6  Mesomerism: in D-A=B, a donor D with a lone pair (``n``) or, by hyperconjugation, without one
-    (``h``) gives to B; factor: the order of A=B above one.
+    (``h``) gives to B; factor: the order of A=B above one. In B=A-D=E the far ends B and E, where
+    of unlike elements, exchange; factor: the product of both orders above one.
 
 A term without a fitted coefficient moves nothing. Models of this kind: bond-charge increments,
 T. A. Halgren, J. Comput. Chem. 17 (1996) 520; induction along bonds, J. Gasteiger and M. Marsili,
@@ -33,6 +34,8 @@ from shapeshelf.structure.molecule import Molecule
 
 MULTIPLE = 1.1
 """Mean bond orders above this count as multiple."""
+JOINED = 1.4
+"""Mean bond orders up to this count as a single bond between pi bonds."""
 LIKE_XENON = "Xe"
 NOBLE_GASES = 18
 UNTABULATED_METAL = 1.2
@@ -105,6 +108,7 @@ def transfers(molecule: Molecule, graph: ChargeGraph) -> tuple[Transfer, ...]:
     for bond in molecule.bonds:
         first, second = sorted((bond.begin, bond.end), key=lambda atom: graph.elements[atom])
         found.extend(_of_bond(graph, first, second))
+        found.extend(_conjugated(graph, first, second))
     for middle in range(len(graph.elements)):
         found.extend(_mesomeric(graph, middle))
     return tuple(found)
@@ -166,6 +170,21 @@ def _mesomeric(graph: ChargeGraph, middle: int) -> Iterator[Transfer]:
             yield Transfer(f"{kind} donor", donor, acceptor, order - 1)
             yield Transfer(f"{kind} donor {graph.elements[donor]}", donor, acceptor, order - 1)
             yield Transfer(f"{kind} to {graph.elements[acceptor]}", donor, acceptor, order - 1)
+
+
+def _conjugated(graph: ChargeGraph, a: int, b: int) -> Iterator[Transfer]:
+    """Yield what two pi bonds joined by the single bond ``a``-``b`` exchange at their far ends."""
+    if graph.orders[a][b] > JOINED:
+        return
+    for far_a, order_a in graph.orders[a].items():
+        for far_b, order_b in graph.orders[b].items():
+            names = graph.elements[far_a], graph.elements[far_b]
+            if far_a in (b, far_b) or far_b == a or names[0] == names[1]:
+                continue
+            if min(order_a, order_b) > MULTIPLE:
+                donor, acceptor = (far_a, far_b) if names[0] < names[1] else (far_b, far_a)
+                pair = "-".join(sorted(names))
+                yield Transfer(f"conjugated {pair}", donor, acceptor, (order_a - 1) * (order_b - 1))
 
 
 def _donor_kind(graph: ChargeGraph, atom: int) -> str | None:

@@ -1,8 +1,8 @@
 """Which class of molecule a dipole moment belongs to: each class has earned its own ±.
 
     unfitted      a bond between elements that no molecule of the fit has
-    ionic         a metal, or a bond between elements 1.7 or more apart, and no carbon
     hypervalent   an atom with more than four electron domains
+    metal         an element below 1.85 in electronegativity
     inorganic     anything else without carbon
     organic       carbon, at most six atoms besides hydrogen
     large         carbon, more than six
@@ -14,22 +14,22 @@ from collections.abc import Container
 
 from shapeshelf.properties.charges import ChargeGraph, electronegativity
 
+CLASSES = ("unfitted", "hypervalent", "metal", "inorganic", "organic", "large")
 S_P_DOMAINS = 4
 SMALL_MOLECULE = 6
-IONIC_DIFFERENCE = 1.7
 METALS_BELOW = 1.85
-"""Electronegativity under which an element counts as a metal; silicon stands at 1.90."""
+"""Gallium stands at 1.81, silicon at 1.90."""
 
 
 def dipole_class(graph: ChargeGraph, fitted: Container[str]) -> str:
     """Return the class; ``fitted`` holds the names of the fitted terms (charges.py)."""
     elements = graph.elements
-    if not _pairs(graph) <= {pair for pair in _pairs(graph) if f"bond {pair}" in fitted}:
+    if any(f"bond {pair}" not in fitted for pair in _pairs(graph)):
         return "unfitted"
-    if "C" not in elements and _is_ionic(graph):
-        return "ionic"
     if max(graph.domains) > S_P_DOMAINS:
         return "hypervalent"
+    if min(electronegativity(element) for element in elements) < METALS_BELOW:
+        return "metal"
     if "C" not in elements:
         return "inorganic"
     heavy = sum(element != "H" for element in elements)
@@ -45,12 +45,3 @@ def _pairs(graph: ChargeGraph) -> set[str]:
         for b in around
         if names[a] != names[b]
     }
-
-
-def _is_ionic(graph: ChargeGraph) -> bool:
-    values = [electronegativity(element) for element in graph.elements]
-    apart = max(
-        (abs(values[a] - values[b]) for a, around in enumerate(graph.orders) for b in around),
-        default=0.0,
-    )
-    return min(values) < METALS_BELOW or apart >= IONIC_DIFFERENCE
