@@ -1,4 +1,4 @@
-"""Twelve protocols with seeded faults: every fault is found, and nothing else."""
+"""Thirteen protocols with seeded faults: every fault is found, and nothing else."""
 
 from pathlib import Path
 
@@ -72,6 +72,12 @@ SEEDED = {
         (10, "gone", ""),
     ],
     "nothing-wrong.md": [],
+    "columns.md": [
+        (6, "value", "109.7 °"),
+        (8, "value", "1.340 Å"),
+        (16, "value", "1.47 D"),
+        (17, "value", "107°"),
+    ],
     "two-spellings.md": [
         (4, "value", "96.1°"),
         (6, "value", "1.530 Å"),

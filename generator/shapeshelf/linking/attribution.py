@@ -7,57 +7,22 @@
 * B3  It belongs to no link where another compound is spoken of between the two, or where the
   words next to it say that it is another kind of quantity (a temperature, a pore size, a cone
   angle), an ideal one, or a bound.
-* B4  An angle beside a link counts where the link leads to angles, or the sentence speaks of an
-  angle or names three atoms; a dipole moment where the link leads there, the sentence speaks of
-  it, or the number has decimals; wavenumbers never, since bands are quoted that no page gives.
+* B4  An angle beside a link counts where the link leads to angles, the sentence speaks of an
+  angle or names three atoms, or it has a cell of a table to itself; a dipole moment where the link
+  leads there, the sentence speaks of it, or the number has decimals or a cell to itself;
+  wavenumbers never, since bands are quoted that no page gives.
+* B5  As many numbers of a kind as links, all of them before or all after the links, belong to the
+  links in their order.
 """
 
 import re
 from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass, replace
 
+from shapeshelf.linking import words
 from shapeshelf.linking.documents.model import BARE, Block, Link
 from shapeshelf.linking.numbers import OTHER, Quoted, quoted_numbers
 from shapeshelf.reference.elements import ELEMENTS
-
-_SENTENCE_END = re.compile(r"(?<=[.!?])[\"')\]*_]*\s+(?=[\"'(\[*_]*[A-Z\ufffc])")
-_ABBREVIATION = re.compile(
-    r"(?:\b(?:ca|cf|e\.g|i\.e|vs|resp|approx|no|nos|fig|figs|ref|refs|eq|al))\.$", re.I
-)
-_TIES = re.compile(
-    r"[\s,]*(?:\(|\[|(?:is\s+)?(?:for|in|of|from|by|at|see|cf\.|according to|taken from|as in)\b)"
-    r"[\s(\[]*(?:see|the|our|gaseous|gas-phase|free|solid|liquid|from|page of|entry for)?[\s:]*",
-    re.IGNORECASE,
-)
-_FORMULA = re.compile(r"(?<![\w(-])(?:[A-Z][a-z]?\d*){2,}(?![\w-])")
-_SYMBOL = re.compile(r"[A-Z][a-z]?")
-_NOT_THIS = re.compile(
-    r"\b(?:ideal|textbook|instead|rather|than|above|below|under|over|exceed\w*|least|most|less"
-    r"|more|not|never|no|nor|formerly|previously|up to|once|old|older|within)\b|[<>≤≥]",
-    re.IGNORECASE,
-)
-_OTHER_KIND_BEFORE = re.compile(
-    r"\b(?:turn\w*|rotat\w*|tilt\w*|rock\w*|inclin\w*|quarter|valve|theta|cone|bite|dihedral"
-    r"|torsion\w*|twist\w*|contact|Bragg|flip|pulse|incidence|scattering|phase|sieve\w*|pore\w*"
-    r"|mesh|lattice|cell|wavelength|resolution|radius|radii|diameter|cut-?off|distance to"
-    r"|hydrogen bonds?|intermolecular|optical|specific|latitude|longitude|steps? of)\b|2θ|\[α\]",
-    re.IGNORECASE,
-)
-_OTHER_KIND_AFTER = re.compile(
-    r"\s*(?:[-\s]*(?:molecular\s+)?sieves?|[-\s]*MS\b|[-\s]*(?:NMR|printer|printed|view|drawing"
-    r"|pulse|bend|elbow|turn|rotation|cone|pores?|resolution)\b)",
-    re.IGNORECASE,
-)
-_NO_VALUE_BEFORE = re.compile(
-    r"(?:\b(?:section|sect|table|fig(?:ure)?|step|eq(?:uation)?|ref|no|nr|version|chapter|page"
-    r"|scheme|entry|note|part|protocol|appendix|day|rev(?:ision)?)\b\.?|[§#v])\s*$",
-    re.IGNORECASE,
-)
-_ANGLE_WORDS = re.compile(r"\bangles?\b|\bangular\b", re.IGNORECASE)
-_THREE_ATOMS = re.compile(r"\b[A-Z][a-z]?\d*(?:\(\w+\))?(?:[-–‐‑−][A-Z][a-z]?\d*(?:\(\w+\))?){2}")
-_DIPOLE_WORDS = re.compile(r"\bdipoles?\b|\bmoments?\b|\bpolar\b|\bpolarity\b", re.IGNORECASE)
-_NEAR = 40
-"""Characters before a number in which a word is next to it."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -71,6 +36,8 @@ class Quote:
     before: str
     """The words that lead up to it, from the last number, link or sentence on."""
     sentence: str
+    about: bool
+    """Whether the text says that the number is a rough one."""
 
 
 def quotes_in(
@@ -85,11 +52,27 @@ def quotes_in(
         links = [link for link in ours if start <= link.start < end]
         if not links:
             continue
-        numbers = quoted_numbers(block.text[start:end])
-        for quoted in (_moved(q, start) for q in numbers):
-            quote = _quote(block, (start, end), links, quoted, numbers, names, sections)
+        numbers = [_moved(number, start) for number in quoted_numbers(block.text[start:end])]
+        sentence = _Sentence(block, start, end, links, numbers)
+        for quoted in numbers:
+            quote = _within(sentence, quoted) or _beside(sentence, quoted, names, sections)
             if quote is not None:
                 yield quote
+
+
+@dataclass(frozen=True, slots=True)
+class _Sentence:
+    """A stretch of a block with its links to the reference and its numbers, by offsets in it."""
+
+    block: Block
+    start: int
+    end: int
+    links: Sequence[Link]
+    numbers: Sequence[Quoted]
+
+    @property
+    def said(self) -> str:
+        return self.block.text[self.start : self.end]
 
 
 class NamesOf:
@@ -99,9 +82,9 @@ class NamesOf:
         """Take the compounds' ids by every name, in small letters, and their formulas by id."""
         self._ids = names
         self._formulas = formulas
-        words = sorted(map(re.escape, names), key=len, reverse=True)
+        known = sorted(map(re.escape, names), key=len, reverse=True)
         self._any = (
-            re.compile(rf"(?<![\w-])(?:{'|'.join(words)})(?![\w-])", re.I) if words else None
+            re.compile(rf"(?<![\w-])(?:{'|'.join(known)})(?![\w-])", re.I) if known else None
         )
 
     def others(self, text: str, own: str | None) -> bool:
@@ -112,8 +95,8 @@ class NamesOf:
         formula = self._formulas.get(own or "", "")
         return any(
             match.group() not in formula
-            and all(symbol in ELEMENTS for symbol in _SYMBOL.findall(match.group()))
-            for match in _FORMULA.finditer(text)
+            and all(symbol in ELEMENTS for symbol in words.SYMBOL.findall(match.group()))
+            for match in words.FORMULA.finditer(text)
         )
 
 
@@ -135,90 +118,126 @@ class SectionOf:
 
 def _sentences(text: str) -> Iterator[tuple[int, int]]:
     start = 0
-    for match in _SENTENCE_END.finditer(text):
-        if not _ABBREVIATION.search(text[start : match.start()].rstrip("\"')]*_")):
+    for match in words.SENTENCE_END.finditer(text):
+        if not words.ABBREVIATION.search(text[start : match.start()].rstrip("\"')]*_")):
             yield start, match.end()
             start = match.end()
     yield start, len(text)
 
 
-def _quote(
-    block: Block,
-    sentence: tuple[int, int],
-    links: Sequence[Link],
-    quoted: Quoted,
-    numbers: Sequence[Quoted],
-    names: NamesOf,
-    sections: SectionOf,
+def _within(sentence: _Sentence, quoted: Quoted) -> Quote | None:
+    """Return the quote of a number in the text of a link (rule B1)."""
+    inside = (link for link in sentence.links if link.start <= quoted.start < link.end)
+    link = next(inside, None)
+    if link is None:
+        return None
+    lead = sentence.block.text[link.start : quoted.start]
+    if words.NO_VALUE_BEFORE.search(lead) or words.BOUND_BEFORE.search(lead):
+        return None
+    return _quote(sentence, link, quoted, within=True)
+
+
+def _beside(
+    sentence: _Sentence, quoted: Quoted, names: NamesOf, sections: SectionOf
 ) -> Quote | None:
-    text = block.text
-    inside = next((ln for ln in links if ln.start <= quoted.start < ln.end), None)
-    if any(ln.start <= quoted.start < ln.end for ln in block.links) and inside is None:
+    """Return the quote of a number beside a link (rules B2 to B5)."""
+    in_some_link = any(link.start <= quoted.start < link.end for link in sentence.block.links)
+    if in_some_link or quoted.quantity in (None, OTHER, "frequency"):
         return None
-    before = _lead(text, sentence[0], quoted, numbers)
-    words = text[sentence[0] : sentence[1]]
-    if inside is not None:
-        is_value = not _NO_VALUE_BEFORE.search(text[inside.start : quoted.start])
-        return Quote(inside, quoted, True, before, words) if is_value else None
-    if quoted.quantity in (None, OTHER, "frequency"):
+    link = _owner(sentence, quoted)
+    if _speaks_of_another(sentence, link, quoted, names, sections.compound(link)):
         return None
-    link = _owner(text, links, quoted, numbers, sentence[0])
-    between = text[min(link.end, quoted.end) : max(link.start, quoted.start)].rpartition("|")[2]
-    near = text[max(sentence[0], quoted.start - _NEAR) : quoted.start]
-    speaks = _ANGLE_WORDS.search(words) or _THREE_ATOMS.search(words)
-    if (
-        names.others(between, sections.compound(link))
-        or names.others(_before_link(text, link, quoted, sentence[0]), sections.compound(link))
-        or _NOT_THIS.search(_clause(near))
-        or _OTHER_KIND_BEFORE.search(_clause(near))
-        or _OTHER_KIND_AFTER.match(text, quoted.end)
-    ):
+    if _is_another_kind(sentence, link, quoted):
         return None
-    section = sections.quantity(link)
-    if quoted.quantity == "angle" and not speaks and section != "angle":
+    if not _counts(sentence, quoted, sections.quantity(link)):
         return None
-    polar = _DIPOLE_WORDS.search(words) or section == "dipole" or quoted.decimals
-    if quoted.quantity == "dipole" and not polar:
-        return None
-    return Quote(link, quoted, False, before, words)
+    return _quote(sentence, link, quoted, within=False)
 
 
-def _owner(
-    text: str, links: Sequence[Link], quoted: Quoted, numbers: Sequence[Quoted], start: int
-) -> Link:
-    """Return the link a number beside links belongs to (rule B2)."""
+def _quote(sentence: _Sentence, link: Link, quoted: Quoted, within: bool) -> Quote:
+    lead = sentence.block.text[sentence.start : quoted.start]
+    about = words.ABOUT.search(lead) is not None
+    return Quote(link, quoted, within, _lead(sentence, quoted), sentence.said, about)
+
+
+def _speaks_of_another(
+    sentence: _Sentence, link: Link, quoted: Quoted, names: NamesOf, own: str | None
+) -> bool:
+    """Tell whether another compound is spoken of between number and link (rule B3)."""
+    between = _between(sentence, link, quoted)
+    # Where the link comes after the number, the number's subject may stand before both.
+    before = sentence.block.text[sentence.start : quoted.start] if link.start >= quoted.end else ""
+    return names.others(between, own) or names.others(before, own)
+
+
+def _is_another_kind(sentence: _Sentence, link: Link, quoted: Quoted) -> bool:
+    """Tell whether the words next to a number say that it is no value of the page (rule B3)."""
+    text = sentence.block.text
+    near = _clause(text[max(sentence.start, quoted.start - words.NEAR) : quoted.start])
+    return bool(
+        words.NOT_THIS.search(near)
+        or words.OTHER_KIND_BEFORE.search(near)
+        or words.OTHER_KIND_AFTER.match(text, quoted.end)
+        or (link.start >= quoted.end and words.CONTRAST.search(_between(sentence, link, quoted)))
+    )
+
+
+def _counts(sentence: _Sentence, quoted: Quoted, section: str | None) -> bool:
+    """Tell whether a number beside a link is meant as one of its values (rule B4)."""
+    if quoted.quantity == section or _fills_cell(sentence.block.text, quoted):
+        return True
+    if quoted.quantity == "angle":
+        return bool(
+            words.ANGLE_WORDS.search(sentence.said) or words.THREE_ATOMS.search(sentence.said)
+        )
+    if quoted.quantity == "dipole":
+        return bool(quoted.decimals or words.DIPOLE_WORDS.search(sentence.said))
+    return True
+
+
+def _between(sentence: _Sentence, link: Link, quoted: Quoted) -> str:
+    """Return the text between link and number, other links left out; in a table, of one cell."""
+    text = sentence.block.text
+    for other in sentence.links:
+        text = text[: other.start] + " " * (other.end - other.start) + text[other.end :]
+    return text[min(link.end, quoted.end) : max(link.start, quoted.start)].rpartition("|")[2]
+
+
+def _fills_cell(text: str, quoted: Quoted) -> bool:
+    """Tell whether a number has a cell of a table for itself."""
+    before, after = text[: quoted.start].rstrip(" *~≈"), text[quoted.end :].lstrip(" *")
+    return before.endswith("|") and (not after or after.startswith("|"))
+
+
+def _owner(sentence: _Sentence, quoted: Quoted) -> Link:
+    """Return the link a number beside links belongs to (rules B2 and B5)."""
+    links = sentence.links
+    alike = [one.start for one in sentence.numbers if one.quantity == quoted.quantity]
+    paired = len(links) == len(alike) > 1
+    if paired and (links[-1].end <= min(alike) or max(alike) < links[0].start):
+        return links[alike.index(quoted.start)]
     earlier = [link for link in links if link.end <= quoted.start]
     later = [link for link in links if link.start >= quoted.end]
-    if later and _tied(text, quoted, later[0], numbers, start):
+    if later and _tied(sentence, quoted, later[0]):
         return later[0]
     return earlier[-1] if earlier else later[0]
 
 
-def _tied(text: str, quoted: Quoted, link: Link, numbers: Sequence[Quoted], start: int) -> bool:
+def _tied(sentence: _Sentence, quoted: Quoted, link: Link) -> bool:
     """Tell whether only numbers, and then a word that ties, stand between number and link."""
-    between = text[quoted.end : link.start]
-    for other in reversed(numbers):
-        if quoted.end <= other.start + start and other.end + start <= link.start:
-            begin, end = other.start + start - quoted.end, other.end + start - quoted.end
-            between = between[:begin] + between[end:]
+    between = sentence.block.text[quoted.end : link.start]
+    for other in reversed(sentence.numbers):
+        if quoted.end <= other.start and other.end <= link.start:
+            between = between[: other.start - quoted.end] + between[other.end - quoted.end :]
     between = re.sub(r"^(?:[\s,/&]|and\b|or\b)+(?=for|in|of|\(|\[)", " ", between)
-    return _TIES.fullmatch(between) is not None
+    return words.TIES.fullmatch(between) is not None
 
 
-def _before_link(text: str, link: Link, quoted: Quoted, start: int) -> str:
-    """Return what stands before a number whose link comes after it: its subject may be there."""
-    return text[start : quoted.start] if link.start >= quoted.end else ""
-
-
-def _lead(text: str, start: int, quoted: Quoted, numbers: Sequence[Quoted]) -> str:
-    """Return the words before a number, from the last number on; a label may be among them."""
-    units = [
-        other.end + start
-        for other in numbers
-        if other.quantity and other.end + start <= quoted.start
-    ]
-    begin = max([start, *units])
-    return text[begin : quoted.start].replace(BARE, " ")
+def _lead(sentence: _Sentence, quoted: Quoted) -> str:
+    """Return the words before a number, from the last value on; a label may be among them."""
+    ends = [one.end for one in sentence.numbers if one.quantity and one.end <= quoted.start]
+    begin = max([sentence.start, *ends])
+    return sentence.block.text[begin : quoted.start].replace(BARE, " ")
 
 
 def _clause(near: str) -> str:

@@ -8,6 +8,7 @@ from shapeshelf.errors import UsageError
 from shapeshelf.linking.attribution import NamesOf, SectionOf, quotes_in
 from shapeshelf.linking.documents.model import BARE, Block, Link
 from shapeshelf.linking.documents.opening import document_blocks, document_paths
+from shapeshelf.linking.documents.tables import with_column_units
 from shapeshelf.linking.judging import judge
 from shapeshelf.linking.published import (
     RELEASED_FILE,
@@ -80,7 +81,7 @@ class Reference:
         citations: list[Citation] = []
         findings: list[Finding] = []
         links = numbers = 0
-        for block in document_blocks(path):
+        for block in with_column_units(document_blocks(path)):
             targets = self._targets(block)
             links += len(targets)
             citations += _citations(path, targets)

@@ -1,7 +1,8 @@
 """Whether a quoted number still is the present one.
 
 * J1  A number holds where a present value lies within half of its last digit and the larger of
-  the two ±, the present value's and the quoted one.
+  the two ±, the present value's and the quoted one; within a whole one where the text says
+  "about".
 * J2  A range holds where a present value's ± reaches into it, or where each end is a present
   value.
 * J3  Which values come into question: the one the anchor names; else those of the number's
@@ -39,6 +40,8 @@ def judge(quote: Quote, target: Target) -> Verdict | None:
     if target.compound is None:
         return None
     quoted, section = quote.quoted, target.quantity
+    if quote.about:
+        quoted = replace(quoted, half=2 * quoted.half)
     if quoted.quantity in UNITS:
         candidates = _candidates(quote, target, str(quoted.quantity))
         if any(_holds(quoted, value, quote.sentence) for value in candidates):

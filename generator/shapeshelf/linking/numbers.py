@@ -50,6 +50,7 @@ _MINUTES = re.compile(r"\s?(\d{1,2}(?:\.\d+)?)\s?['′’]")
 _SPREAD_AFTER = re.compile(rf"{_GAP}(?:±|\+/[-−–]|\\pm){_GAP}(\d+(?:[.,]\d+)?){_GAP}")
 _RANGE = re.compile(rf"{_GAP}(?:[-–—−]|to|\.\.\.|…){_GAP}")
 _LIST = re.compile(rf"{_GAP}(?:,{_GAP}(?:and|or)|[,/&]|and|or){_GAP}")
+_HEAD = re.compile(r"(?:/|\(|\[|\bin\b|,)\s*([^\s)\]|]+)[)\]]?\s*$")
 _BETWEEN = re.compile(r"\bbetween\s*$", re.IGNORECASE)
 
 
@@ -107,6 +108,13 @@ def quoted_numbers(text: str) -> list[Quoted]:
             quoted.append(_single(first))
             index += 1
     return quoted
+
+
+def unit_in_head(head: str) -> str | None:
+    """Return the unit that the head of a column gives its numbers: ``Angle / °``, ``r (Å)``."""
+    found = _HEAD.search(head)
+    unit = _UNIT.match(found.group(1)) if found else None
+    return unit.group() if unit and _UNITS[int(str(unit.lastgroup)[1:])][0] != OTHER else None
 
 
 def _raw_numbers(text: str) -> Iterator[_Raw]:
