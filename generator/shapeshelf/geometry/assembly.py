@@ -1,7 +1,8 @@
 """A three-dimensional structure for a whole molecule.
 
 A1  Supplied coordinates stand as they are.
-A2  One centre and its neighbours: the directions of the best placement times the bond lengths.
+A2  One centre and its neighbours: the directions of the best placement times the bond lengths,
+    which know axial from equatorial (site_lengths.py), as those of A4 do.
 A3  Several centres, carbon among the atoms, and MMFF94s has parameters for all: conformers by
     ETKDG, relaxed by MMFF94s; of those as low as the lowest within the force field's own error
     the most symmetric.
@@ -18,12 +19,12 @@ from collections.abc import Sequence
 
 import numpy as np
 
-from shapeshelf.domains.bond_lengths import bond_length_angstrom
 from shapeshelf.domains.model import Centre, LewisCount
 from shapeshelf.errors import AnalysisError
 from shapeshelf.geometry.choosing import SNAP_ANGSTROM
 from shapeshelf.geometry.conformers import Conformers, by_force_field, by_rules
 from shapeshelf.geometry.model import Structure, StructureBasis
+from shapeshelf.geometry.site_lengths import site_lengths_angstrom
 from shapeshelf.geometry.surroundings import surroundings_of
 from shapeshelf.geometry.symmetry import symmetrised
 from shapeshelf.geometry.targets import handedness
@@ -67,15 +68,17 @@ def _refuse_unplaced(molecule: Molecule, centres: Sequence[Centre]) -> None:
 def _single_centre(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]) -> Array:
     """Return coordinates (n, 3) for one atom, two atoms, or one centre with its neighbours (A2)."""
     points = np.zeros((len(molecule.atoms), 3))
+    lengths = site_lengths_angstrom(molecule, lewis, centres)
     if not centres:
-        for bond, order in zip(molecule.bonds, lewis.bond_orders, strict=True):
-            points[bond.end, 2] = _length(molecule, bond.begin, bond.end, order)
+        for bond, length in zip(molecule.bonds, lengths, strict=True):
+            points[bond.end, 2] = length
         return points
     centre = centres[0]
+    ends = (({bond.begin, bond.end} - {centre.atom}).pop() for bond in molecule.bonds)
+    length_to = dict(zip(ends, lengths, strict=True))
     for domain, direction in zip(centre.domains, centre.placements[0].directions, strict=True):
         if domain.neighbour is not None:
-            length = _length(molecule, centre.atom, domain.neighbour, domain.bond_order)
-            points[domain.neighbour] = length * np.array(direction)
+            points[domain.neighbour] = length_to[domain.neighbour] * np.array(direction)
     return _handed(molecule, points)
 
 
@@ -86,11 +89,6 @@ def _handed(molecule: Molecule, points: Array) -> Array:
         if float(np.linalg.det(vectors)) * handedness(stereo) < 0:
             return np.asarray(points * np.array([-1.0, 1.0, 1.0]))
     return points
-
-
-def _length(molecule: Molecule, first: int, second: int, order: float) -> float:
-    elements = molecule.atoms[first].element, molecule.atoms[second].element
-    return bond_length_angstrom(*elements, order)
 
 
 def _conformers(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]) -> Conformers:
@@ -111,14 +109,20 @@ def _structure(molecule: Molecule, points: Array, method: str, tried: int) -> St
 def _snapped(molecule: Molecule, points: Array) -> Array:
     """Return the coordinates (n, 3) under the largest tolerance that keeps the bonds' lengths."""
     elements = [atom.element for atom in molecule.atoms]
-    before = _lengths(molecule, points)
+    before = _skeleton_lengths(molecule, points)
     for tolerance in (SNAP_ANGSTROM, FINE_SNAP_ANGSTROM):
         symmetric, _ = symmetrised(elements, points, tolerance)
-        if np.abs(_lengths(molecule, symmetric) - before).max() < KEPT_LENGTH_ANGSTROM:
+        if (
+            np.abs(_skeleton_lengths(molecule, symmetric) - before).max(initial=0.0)
+            < KEPT_LENGTH_ANGSTROM
+        ):
             return symmetric
     return points
 
 
-def _lengths(molecule: Molecule, points: Array) -> Array:
-    ends = np.array([(bond.begin, bond.end) for bond in molecule.bonds])
-    return np.asarray(np.linalg.norm(points[ends[:, 0]] - points[ends[:, 1]], axis=1))
+def _skeleton_lengths(molecule: Molecule, points: Array) -> Array:
+    """Return the lengths (m,) of the bonds between atoms other than hydrogen."""
+    ends = [(bond.begin, bond.end) for bond in molecule.bonds]
+    heavy = [pair for pair in ends if all(molecule.atoms[k].element != "H" for k in pair)]
+    rows = np.array(heavy, dtype=np.int64).reshape(-1, 2)
+    return np.asarray(np.linalg.norm(points[rows[:, 0]] - points[rows[:, 1]], axis=1))

@@ -5,7 +5,7 @@ is lower, or whether a methyl group stands a little aside of its symmetric place
 not chemistry; the symmetric structure is then the one to show.
 """
 
-from collections.abc import Callable, Sequence
+from collections.abc import Callable, Iterator, Sequence
 
 from shapeshelf.geometry.symmetry import symmetrised
 from shapeshelf.geometry.vectors import Array
@@ -20,6 +20,8 @@ SNAP_ANGSTROM = 0.08
 NEARLY_ANGSTROM = 0.6
 """How far a structure may be from a symmetric one for the symmetric one to be tried."""
 SAME_ENERGY = 1e-3
+NEGLIGIBLE = 0.01
+"""A hump this low, in kcal/mol or the rules' unit, is no barrier to any vibration."""
 MOST_COMPARED = 3
 MOST_FOR_TRIAL = 40
 
@@ -31,11 +33,15 @@ def most_symmetric(
     conformers: Sequence[Relaxed],
     relax: Callable[[Array], Relaxed],
     margin: float,
+    shaken: Callable[[Array], Array],
+    further: Callable[[Array], Sequence[Array]],
 ) -> Array:
     """Return the coordinates (n, 3) of the chosen conformer.
 
     ``conformers`` hold coordinates (n, 3) in ångström and an energy; ``relax`` relaxes further
-    ones to the same energy scale; ``margin`` is how much higher a symmetric one may be.
+    ones to the same energy scale; ``margin`` is how much higher a symmetric one may be;
+    one that is no minimum falls when ``shaken``, unless it is as low as the lowest (oxetane);
+    ``further`` makes more structures to try out of the lowest.
     """
     ranked = sorted(conformers, key=lambda one: one[1])
     limit = ranked[0][1] + margin
@@ -43,12 +49,26 @@ def most_symmetric(
     counted = [(_operations(elements, points), points) for points, _ in low]
     if len(elements) > MOST_FOR_TRIAL:
         return max(counted, key=lambda one: one[0])[1]
-    trial, count = symmetrised(elements, low[0][0], NEARLY_ANGSTROM)
-    if count > max(count for count, _ in counted):
+    most = max(count for count, _ in counted)
+    for trial in _trials(elements, low[0][0], most, further):
         points, energy = relax(trial)
+        if energy > ranked[0][1] + NEGLIGIBLE:
+            points, energy = relax(shaken(points))
         if energy <= limit:
             counted.append((_operations(elements, points), points))
     return max(counted, key=lambda one: one[0])[1]
+
+
+def _trials(
+    elements: Sequence[str], points: Array, most: int, further: Callable[[Array], Sequence[Array]]
+) -> Iterator[Array]:
+    """Yield structures of more than ``most`` operations near the lowest one."""
+    nearest, count = symmetrised(elements, points, NEARLY_ANGSTROM)
+    if count > most:
+        yield nearest
+    for trial in further(points):
+        if _operations(elements, trial) > most:
+            yield trial
 
 
 def _distinct(ranked: Sequence[Relaxed]) -> list[Relaxed]:

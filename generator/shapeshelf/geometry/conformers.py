@@ -14,6 +14,7 @@ from shapeshelf.geometry.choosing import (
     RULE_ERROR,
     most_symmetric,
 )
+from shapeshelf.geometry.copying import copied
 from shapeshelf.geometry.finishing import finished
 from shapeshelf.geometry.forces import minimised, settled_down
 from shapeshelf.geometry.ordering import renumbered, settled_order
@@ -22,16 +23,18 @@ from shapeshelf.geometry.surroundings import MULTIPLE_ORDER, Surroundings, joine
 from shapeshelf.geometry.targets import bounds_of, terms_of
 from shapeshelf.geometry.torsions import turns_of
 from shapeshelf.geometry.vectors import Array
-from shapeshelf.structure.embedding import embed, relax_mmff
+from shapeshelf.structure.embedding import embed, mmff_relaxer
 from shapeshelf.structure.molecule import Molecule
 
 SEED = 20050
 FIRST_STEPS = 200
 FIRST_SLOPE = 0.01
-MOST_TRIES = ((12, 12), (20, 8), (40, 6), (70, 6), (1000, 3))
+LEAST_TRIES = 2
+MOST_TRIES = ((12, 12), (20, 8), (40, 6), (70, 6), (100, 2), (1000, 1))
 """Up to so many atoms, so many conformers at most: a structure has to come while one waits."""
 MOST_FOR_SCAN = 40
 MOST_SETTLED = 3
+SHAKE_ANGSTROM = 0.03
 ROUGHLY_SAME_ENERGY = 0.02
 
 
@@ -48,9 +51,10 @@ def by_force_field(molecule: Molecule, known: Surroundings) -> Conformers:
     """Return the lowest MMFF94s conformer, the most symmetric of those that are as low."""
     order = settled_order(molecule)
     settled = renumbered(molecule, order)
+    relax_settled = mmff_relaxer(settled)
 
     def relax(points: Array) -> tuple[Array, float]:
-        moved, energy = relax_mmff(settled, points[list(order)])
+        moved, energy = relax_settled(points[list(order)])
         return _in_given_order(moved, order), energy
 
     bonds = turning_bonds(molecule.classes, known)
@@ -59,7 +63,14 @@ def by_force_field(molecule: Molecule, known: Surroundings) -> Conformers:
     if len(molecule.atoms) <= MOST_FOR_SCAN:
         lowest = min(relaxed, key=lambda one: one[1])
         relaxed += scanned(lowest, _in_order(bonds, order), known, relax)
-    best = most_symmetric(_elements(molecule), relaxed, relax, FORCE_FIELD_ERROR_KCAL_MOL)
+    best = most_symmetric(
+        _elements(molecule),
+        relaxed,
+        relax,
+        FORCE_FIELD_ERROR_KCAL_MOL,
+        lambda points: _shaken(points, order),
+        lambda points: copied(molecule.classes, known, points),
+    )
     return Conformers(finished(molecule, known, best), "lowest MMFF94s conformer", len(relaxed))
 
 
@@ -79,8 +90,21 @@ def by_rules(molecule: Molecule, known: Surroundings) -> Conformers:
         return settled_down(terms, points)
 
     few = [relax(rough[k]) for k in _lowest_distinct(energies)]
-    best = most_symmetric(_elements(molecule), few, relax, RULE_ERROR)
+    best = most_symmetric(
+        _elements(molecule),
+        few,
+        relax,
+        RULE_ERROR,
+        lambda points: _shaken(points, order),
+        lambda points: copied(molecule.classes, known, points),
+    )
     return Conformers(best, "domain-model angles and bond lengths assembled", len(starts))
+
+
+def _shaken(points: Array, order: tuple[int, ...]) -> Array:
+    """Return the structure a little shaken, so that it does not rest on a saddle."""
+    noise = np.random.default_rng(SEED).normal(scale=SHAKE_ANGSTROM, size=points.shape)
+    return np.asarray(points + _in_given_order(noise, order))
 
 
 def _elements(molecule: Molecule) -> list[str]:
@@ -104,7 +128,7 @@ def _count(molecule: Molecule, known: Surroundings, turning: int) -> int:
         if order < MULTIPLE_ORDER and joined_without(known, b, c)
     )
     most = next(tries for size, tries in MOST_TRIES if len(molecule.atoms) <= size)
-    return int(np.clip(2 + turning + folding, 4, most))
+    return min(LEAST_TRIES + turning + folding, most)
 
 
 def _in_order(bonds: Sequence[tuple[int, int]], order: tuple[int, ...]) -> list[tuple[int, int]]:

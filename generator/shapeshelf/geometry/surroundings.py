@@ -3,8 +3,8 @@
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
-from shapeshelf.domains.bond_lengths import bond_length_angstrom
 from shapeshelf.domains.model import Centre, LewisCount, ModelAngle
+from shapeshelf.geometry.site_lengths import site_lengths_angstrom
 from shapeshelf.structure.molecule import Molecule
 
 LINEAR_DEGREES = 168.0
@@ -49,12 +49,10 @@ def surroundings_of(
     """Return what assembly needs to know of ``molecule``."""
     neighbours = tuple(molecule.neighbours(atom) for atom in range(len(molecule.atoms)))
     lengths, orders = {}, {}
-    for bond, order in zip(molecule.bonds, lewis.bond_orders, strict=True):
+    found = site_lengths_angstrom(molecule, lewis, centres)
+    for bond, order, length in zip(molecule.bonds, lewis.bond_orders, found, strict=True):
         key = (min(bond.begin, bond.end), max(bond.begin, bond.end))
-        orders[key] = order
-        lengths[key] = bond_length_angstrom(
-            molecule.atoms[bond.begin].element, molecule.atoms[bond.end].element, order
-        )
+        orders[key], lengths[key] = order, length
     angles = dict(_angles(molecule, centres))
     linear = frozenset(c.atom for c in centres if c.bonded == 2 and _widest(c) > LINEAR_DEGREES)
     return Surroundings(

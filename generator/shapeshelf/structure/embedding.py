@@ -5,6 +5,7 @@ Distance geometry with torsion preferences: S. Riniker and G. A. Landrum, J. Che
 720 (both recalled).
 """
 
+from collections.abc import Callable
 from typing import Any
 
 import numpy as np
@@ -24,10 +25,16 @@ from shapeshelf.structure.drawing import Drawing, is_heavy_p_block, is_metal, sh
 from shapeshelf.structure.molecule import Molecule
 
 Coordinates = npt.NDArray[np.float64]
+Relaxer = Callable[[CoordinatesLike], tuple[Coordinates, float]]
+"""Coordinates (n, 3) to relaxed coordinates in ångström and their energy in kcal/mol."""
 
 MOST_STEPS = 2000
+MOST_ATOM_STEPS = 60_000
+"""Of a relaxation: atoms times steps; beyond some hundred atoms the last steps change little."""
 MOST_TRIES = 30
 """Starts for one conformer before the next way is tried."""
+MOST_FOR_ORDERLY_START = 80
+"""Larger molecules seldom fold into their distances from an orderly start; random ones do."""
 PLACEHOLDER = 74
 MOST_NEIGHBOURS = 4
 """RDKit's own distances hold for ordinary centres only."""
@@ -64,14 +71,29 @@ def relax_mmff(molecule: Molecule, coordinates: CoordinatesLike) -> tuple[Coordi
 
     The energy is in kcal/mol. Raises AnalysisError where MMFF94s has no parameters.
     """
-    mol = with_coordinates(to_rdkit(molecule), coordinates)
+    return mmff_relaxer(molecule)(coordinates)
+
+
+def mmff_relaxer(molecule: Molecule) -> Relaxer:
+    """Return ``relax_mmff`` for many structures of one molecule.
+
+    Raises AnalysisError where MMFF94s has no parameters.
+    """
+    mol = to_rdkit(molecule)
     if not _covers(mol):
         raise AnalysisError(molecule.formula, "MMFF94s has no parameters for all of its atoms")
     properties = rdForceFieldHelpers.MMFFGetMoleculeProperties(mol, mmffVariant="MMFF94s")
-    field: Any = rdForceFieldHelpers.MMFFGetMoleculeForceField(mol, properties)
-    field.Initialize()
-    field.Minimize(maxIts=MOST_STEPS)
-    return _positions(mol.GetConformer()), float(field.CalcEnergy())
+
+    steps = min(MOST_STEPS, MOST_ATOM_STEPS // len(molecule.atoms))
+
+    def relax(coordinates: CoordinatesLike) -> tuple[Coordinates, float]:
+        with_coordinates(mol, coordinates)
+        field: Any = rdForceFieldHelpers.MMFFGetMoleculeForceField(mol, properties)
+        field.Initialize()
+        field.Minimize(maxIts=steps)
+        return _positions(mol.GetConformer()), float(field.CalcEnergy())
+
+    return relax
 
 
 def _by_preferences(molecule: Molecule, count: int, seed: int) -> list[Coordinates]:
@@ -86,7 +108,8 @@ def _by_preferences(molecule: Molecule, count: int, seed: int) -> list[Coordinat
         return []
     strained = _settings(seed, True)
     _leave_out_preferences(strained)
-    tries = (_settings(seed, False), _settings(seed, True), strained)
+    orderly = () if len(molecule.atoms) > MOST_FOR_ORDERLY_START else (_settings(seed, False),)
+    tries = (*orderly, _settings(seed, True), strained)
     return next((found for try_ in tries if (found := _conformers(mol, count, try_))), [])
 
 
