@@ -9,7 +9,7 @@ import math
 import re
 from collections.abc import Sequence
 
-from shapeshelf.figures.canvas import render
+from shapeshelf.figures.canvas import render, text_width
 from shapeshelf.figures.lettering import plain
 from shapeshelf.figures.model import Drawing, Lettering, Mark, Role, Stroke, Style, Svg
 from shapeshelf.properties.model import NmrSignal
@@ -18,10 +18,10 @@ from shapeshelf.report.model import CompoundReport
 Line = tuple[float, float]
 """Place and height."""
 
-WIDTH = 520.0
+WIDTH = 400.0
 MOST_SIGNALS = 8
-_ROW, _LINE_HEIGHT, _TOP = 74.0, 44.0, 12.0
-_PATTERN_LEFT, _PATTERN_RIGHT = 196.0, 500.0
+_ROW, _LINE_HEIGHT, _TOP = 80.0, 44.0, 8.0
+_EDGE, _PATTERN_LEFT, _PATTERN_RIGHT = 6.0, 150.0, 394.0
 _CLOSEST, _WIDEST = 7.0, 18.0
 _NAME, _NOTE = 15.0, 12.5
 _COUPLING = re.compile(r"(\d)J")
@@ -74,25 +74,34 @@ def _partner_counts(signal: NmrSignal) -> list[int]:
 
 
 def _signal_row(signal: NmrSignal, top: float) -> list[Mark]:
-    base = top + _ROW - 16
-    lines = splitting(_partner_counts(signal))
-    span = lines[-1][0] - lines[0][0]
-    room = _PATTERN_RIGHT - _PATTERN_LEFT - 20
-    unit = min(_WIDEST, room / span) if span else _WIDEST
-    middle = (_PATTERN_LEFT + _PATTERN_RIGHT) / 2
-    tallest = max(height for _, height in lines)
-    width = 2.2 if unit >= _CLOSEST else 1.2
+    base = top + _LINE_HEIGHT + 6
+    left = _PATTERN_LEFT
+    multiplicity = Lettering(_EDGE, base, signal.multiplicity, _NOTE, anchor="start")
+    if text_width(signal.multiplicity, _NOTE) > left - _EDGE - 6:
+        left = _EDGE + text_width(signal.multiplicity, _NOTE) + 6
     marks: list[Mark] = [
-        Lettering(20, top + 20, _nucleus(signal), _NAME, anchor="start", bold=True),
-        Lettering(20, top + 39, signal.multiplicity, _NOTE, anchor="start"),
-        Stroke(((_PATTERN_LEFT, base), (_PATTERN_RIGHT, base)), Style("line"), Role.AXIS),
+        Lettering(_EDGE, top + 24, _nucleus(signal), _NAME, anchor="start", bold=True),
+        multiplicity,
+        Stroke(((left, base), (_PATTERN_RIGHT, base)), Style("line"), Role.AXIS),
     ]
     if signal.partners:
         text = _COUPLING.sub(r"^{\1}J", ", ".join(signal.partners))
-        marks.append(Lettering(20, top + 56, text, _NOTE, anchor="start", colour="soft"))
+        marks.append(Lettering(_EDGE, base + 18, text, _NOTE, anchor="start", colour="soft"))
+    return marks + _pattern(signal, left, base)
+
+
+def _pattern(signal: NmrSignal, left: float, base: float) -> list[Mark]:
+    lines = splitting(_partner_counts(signal))
+    span = lines[-1][0] - lines[0][0]
+    room = _PATTERN_RIGHT - left - 20
+    unit = min(_WIDEST, room / span) if span else _WIDEST
+    middle = (left + _PATTERN_RIGHT) / 2
+    tallest = max(height for _, height in lines)
+    style = Style("ink", None, 2.2 if unit >= _CLOSEST else 1.2)
+    marks: list[Mark] = []
     for place, height in lines:
         x, y = middle + place * unit, base - _LINE_HEIGHT * height / tallest
-        marks.append(Stroke(((x, base), (x, y)), Style("ink", None, width), Role.DATA))
+        marks.append(Stroke(((x, base), (x, y)), style, Role.DATA))
     return marks
 
 

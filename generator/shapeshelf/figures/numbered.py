@@ -1,6 +1,7 @@
 """A numbered drawing for molecules of many atoms: flat, hydrogens on carbon left out."""
 
 import math
+from dataclasses import replace
 
 import numpy as np
 from numpy.typing import NDArray
@@ -29,6 +30,8 @@ from shapeshelf.report.model import CompoundReport
 Array = NDArray[np.float64]
 
 _BOND = 46.0
+_ROOM, _LARGEST = (340.0, 230.0), 1.6
+"""Pixels for the atoms, the labels around them left aside, and the most that bonds grow to it."""
 _SYMBOL, _NUMBER = 17.0, 12.0
 _RING = 12.0
 _NARROWEST = 480.0
@@ -43,6 +46,7 @@ def numbered_drawing(report: CompoundReport) -> Drawing | None:
     flat = lay_flat(report.molecule, _BOND, _FEWEST_LEFT_OUT)
     if crowded(flat, _BOND):
         return None
+    flat = replace(flat, points=flat.points * _enlarged(flat))
     body = [*_bonds(report, flat), *_symbols(report, flat)]
     everything = [*body, *_numbers(report, flat)]
     left, _, right, _ = extent(everything)
@@ -50,6 +54,12 @@ def numbered_drawing(report: CompoundReport) -> Drawing | None:
     marks, height = framed(everything, width)
     title = f"{report.name}, numbered drawing"
     return Drawing("bench", width, height, tuple(marks), title, describe(report))
+
+
+def _enlarged(flat: Flat) -> float:
+    """Return how much larger a small molecule is drawn, so that it fills the paper."""
+    width, height = np.ptp(flat.points[sorted(flat.shown)], axis=0)
+    return float(np.clip(min(_ROOM[0] / max(width, 1), _ROOM[1] / max(height, 1)), 1, _LARGEST))
 
 
 def atom_labels(report: CompoundReport) -> tuple[str, ...]:

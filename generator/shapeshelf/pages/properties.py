@@ -102,6 +102,8 @@ class SpectraView:
     nmr: tuple[NmrView, ...]
     fluxional_note: str | None
     frequencies: tuple[FrequencyView, ...]
+    method: str
+    """Of the calculated vibrations, empty where there are none."""
 
 
 def polarity_view(report: CompoundReport, sources: Mapping[str, Source]) -> PolarityView:
@@ -170,6 +172,7 @@ def spectra_view(report: CompoundReport, sources: Mapping[str, Source]) -> Spect
         ),
         fluxional_note=spectra.fluxional_note,
         frequencies=_frequencies(report, sources),
+        method=report.frequencies.method if report.frequencies else "",
     )
 
 
