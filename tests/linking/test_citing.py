@@ -75,7 +75,7 @@ SEEDED = {
     "columns.md": [
         (6, "value", "109.7 °"),
         (8, "value", "1.340 Å"),
-        (16, "value", "1.47 D"),
+        (16, "value", "1.47"),
         (17, "value", "107°"),
     ],
     "two-spellings.md": [

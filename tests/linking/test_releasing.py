@@ -91,6 +91,19 @@ def test_check_says_what_was_withdrawn(root: Path, capsys) -> None:
         release(root)
 
 
+def test_a_withdrawn_id_is_not_given_again(root: Path, capsys) -> None:
+    """To another structure; the entry that comes back as it was is welcome."""
+    before = (root / "water.yml").read_text()
+    release(root)
+    (root / "water.yml").unlink()
+    release(root)
+    (root / "water.yml").write_text("id: water\nname: Hydrogen sulfide\nstructure: S\n")
+    assert main(["check", "--catalogue", str(root)]) == 1
+    assert "water.yml:1: id: water was Water, now withdrawn" in capsys.readouterr().err
+    (root / "water.yml").write_text(before)
+    assert main(["check", "--catalogue", str(root)]) == 0
+
+
 @pytest.mark.parametrize(
     ("same_code", "moved", "stands"),
     [(True, 3.0, True), (True, 0.01, True), (False, 3.0, False), (False, 0.01, True)],
@@ -142,6 +155,14 @@ def test_a_release_that_cannot_be_read_is_one_line(root: Path, text: str, capsys
         present(root)
     assert main(["check", "--catalogue", str(root)]) == 2
     assert len(capsys.readouterr().err.strip().splitlines()) == 1
+
+
+def test_a_release_with_a_value_cut_short_is_one_line(root: Path) -> None:
+    release(root)
+    text = (root / "released.json").read_text("utf-8")
+    (root / "released.json").write_text(text.replace('"quantity": "dipole",', "", 1), "utf-8")
+    with pytest.raises(UsageError, match="dipole is not complete"):
+        present(root)
 
 
 def test_the_command_lists_what_it_changes(root: Path, capsys) -> None:

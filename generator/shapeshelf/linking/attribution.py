@@ -82,15 +82,11 @@ class NamesOf:
         """Take the compounds' ids by every name, in small letters, and their formulas by id."""
         self._ids = names
         self._formulas = formulas
-        known = sorted(map(re.escape, names), key=len, reverse=True)
-        self._any = (
-            re.compile(rf"(?<![\w-])(?:{'|'.join(known)})(?![\w-])", re.I) if known else None
-        )
+        self._longest = max(map(len, names), default=0)
 
     def others(self, text: str, own: str | None) -> bool:
         """Tell whether the text speaks of a compound that is not ``own``, a compound's id."""
-        found = self._any.finditer(text) if self._any else ()
-        if any(self._ids[match.group().casefold()] != own for match in found):
+        if any(self._ids[name] != own for name in self._spoken_of(text.casefold())):
             return True
         formula = self._formulas.get(own or "", "")
         return any(
@@ -98,6 +94,15 @@ class NamesOf:
             and all(symbol in ELEMENTS for symbol in words.SYMBOL.findall(match.group()))
             for match in words.FORMULA.finditer(text)
         )
+
+    def _spoken_of(self, text: str) -> Iterator[str]:
+        """Yield every name in the text that begins and ends where a word does."""
+        starts = [match.start() for match in words.WORD_START.finditer(text)]
+        ends = [match.start() for match in words.WORD_END.finditer(text)]
+        for start in starts:
+            for end in ends:
+                if start < end <= start + self._longest and text[start:end] in self._ids:
+                    yield text[start:end]
 
 
 class SectionOf:

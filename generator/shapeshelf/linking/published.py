@@ -19,8 +19,8 @@ Angles in degrees, lengths in ångström, dipole moments in debye, vibrations in
 """
 
 import json
-from collections.abc import Mapping
-from dataclasses import asdict, dataclass, field
+from collections.abc import Iterator, Mapping
+from dataclasses import asdict, dataclass, field, fields
 from pathlib import Path
 from typing import Any
 
@@ -149,21 +149,21 @@ def _sorted(compounds: Mapping[str, PublishedCompound]) -> dict[str, Any]:
 
 def _plain(compound: PublishedCompound) -> dict[str, Any]:
     """Return a compound as JSON holds it, empty parts left out."""
-    held = {name: item for name, item in asdict(compound).items() if item}
-    if "values" in held:
-        held["values"] = {
-            anchor: {
-                name: item
-                for name, item in value.items()
-                if item is not None and not (name == "labels" and list(item) == [value["of"]])
-            }
-            for anchor, value in held["values"].items()
-        }
-    return held
+    held: dict[str, Any] = {item.name: getattr(compound, item.name) for item in fields(compound)}
+    held["facts"] = dict(compound.facts)
+    held["values"] = {anchor: _plain_value(value) for anchor, value in compound.values.items()}
+    return {name: item for name, item in held.items() if item}
+
+
+def _plain_value(value: PublishedValue) -> dict[str, Any]:
+    held = asdict(value)
+    if value.labels == (value.of,):
+        del held["labels"]
+    return {name: item for name, item in held.items() if item is not None}
 
 
 def _compound(held: Mapping[str, Any]) -> PublishedCompound:
-    values = {anchor: _value(item) for anchor, item in held.get("values", {}).items()}
+    values = _Values(held.get("values", {}))
     lists = {
         name: tuple(held.get(name, ())) for name in ("names", "formerly", "anchors", "used_in")
     }
@@ -175,6 +175,26 @@ def _compound(held: Mapping[str, Any]) -> PublishedCompound:
         values=values,
         **lists,
     )
+
+
+class _Values(Mapping[str, PublishedValue]):
+    """Values made when they are asked for: a check of one protocol needs few of many."""
+
+    def __init__(self, held: Mapping[str, Any]) -> None:
+        self._held = dict(held)
+
+    def __getitem__(self, anchor: str) -> PublishedValue:
+        held = self._held[anchor]
+        try:
+            return _value(held)
+        except (KeyError, TypeError, ValueError) as error:
+            raise UsageError(f"the published value {anchor} is not complete") from error
+
+    def __iter__(self) -> Iterator[str]:
+        return iter(self._held)
+
+    def __len__(self) -> int:
+        return len(self._held)
 
 
 def _value(held: Mapping[str, Any]) -> PublishedValue:

@@ -6,6 +6,8 @@ from dataclasses import dataclass
 from pathlib import Path
 
 from shapeshelf.catalogue.model import Catalogue
+from shapeshelf.catalogue.problems import problem_at
+from shapeshelf.errors import CatalogueError
 from shapeshelf.linking.changes import Comparison, compare, withdrawn_compounds
 from shapeshelf.linking.published import (
     RELEASED_FILE,
@@ -13,7 +15,7 @@ from shapeshelf.linking.published import (
     read_released,
     write_published,
 )
-from shapeshelf.linking.publishing import published_values
+from shapeshelf.linking.publishing import published_values, structure_hash
 from shapeshelf.linking.standing import Drift, let_stand
 from shapeshelf.report.checking import report_on_catalogue
 from shapeshelf.report.model import CompoundReport
@@ -39,9 +41,10 @@ def present_values(
     """Return the present values of a catalogue beside its last release.
 
     ``site`` is the address of the site's root. Raises UsageError where ``released.json`` is
-    there and cannot be read.
+    there and cannot be read, CatalogueError where an entry takes the id of a withdrawn one.
     """
     released = read_released(catalogue.root)
+    _refuse_reused_ids(catalogue, released)
     standing, drifts = let_stand(reports, released)
     gone = withdrawn_compounds(released, catalogue_ids(catalogue))
     published = published_values(catalogue, standing, site, gone)
@@ -52,6 +55,22 @@ def present_values(
 def catalogue_ids(catalogue: Catalogue) -> frozenset[str]:
     """Return the ids and the earlier ids of all entries."""
     return frozenset(one for entry in catalogue.entries for one in (entry.id, *entry.formerly))
+
+
+def _refuse_reused_ids(catalogue: Catalogue, released: Published | None) -> None:
+    """Raise CatalogueError where a withdrawn id is given to another structure."""
+    withdrawn = released.withdrawn if released else {}
+    problems = [
+        problem_at(
+            entry,
+            "id",
+            f"{entry.id} was {withdrawn[entry.id].name}, now withdrawn; an id is never given again",
+        )
+        for entry in catalogue.entries
+        if entry.id in withdrawn and structure_hash(entry) != withdrawn[entry.id].structure
+    ]
+    if problems:
+        raise CatalogueError(tuple(problems))
 
 
 def release(root: Path) -> Present:

@@ -18,7 +18,7 @@ from shapeshelf.linking.published import (
     write_published,
 )
 from shapeshelf.linking.qr import qr_svg
-from shapeshelf.linking.releasing import Present
+from shapeshelf.linking.releasing import Present, catalogue_ids
 from shapeshelf.linking.table import catalogue_csv
 from shapeshelf.pages.addresses import CHANGES, DESK, compound_address, root_from
 from shapeshelf.pages.model import SiteFile, SitePage, Standing
@@ -94,9 +94,11 @@ def linking_pages(
     )
     sections = desk_sections(present, protocols)
     yield _page(DESK, "State of the catalogue", "desk.html", sections=sections, edit_url=edit_url)
+    ids = catalogue_ids(present.catalogue)
     for compound_id, compound in sorted(present.published.withdrawn.items()):
         for one in (compound_id, *compound.formerly):
-            yield _notice(one, compound)
+            if one not in ids:
+                yield _notice(one, compound)
 
 
 def linking_files(present: Present, site_name: str) -> Iterator[SiteFile]:

@@ -14,6 +14,8 @@ TIES = re.compile(
     r"[\s(\[]*(?:see|the|our|gaseous|gas-phase|free|solid|liquid|from|page of|entry for)?[\s:]*",
     re.IGNORECASE,
 )
+WORD_START = re.compile(r"(?<![\w-])(?=\S)")
+WORD_END = re.compile(r"(?<=\S)(?![\w-])")
 FORMULA = re.compile(r"(?<![\w(-])(?:[A-Z][a-z]?\d*){2,}(?![\w-])")
 SYMBOL = re.compile(r"[A-Z][a-z]?")
 NOT_THIS = re.compile(
