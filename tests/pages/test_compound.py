@@ -16,6 +16,10 @@ ANCHORS = ("shape", "angles", "polarity", "hybridisation", "symmetry", "sources"
 HOSTILE = "\"'><script>alert(1)</script><img src=x onerror=alert(2)>{{7*7}}</title>&amp;"
 
 
+DATA = ("application/ld+json", "application/json")
+"""Script elements of these types hold data; no browser runs them."""
+
+
 class Reader(HTMLParser):
     """Collects tags, their attributes, and the text between them."""
 
@@ -37,7 +41,7 @@ class Reader(HTMLParser):
         foreign = [
             tag
             for tag, attrs in self.tags
-            if tag in ("script", "img", "iframe") and attrs.get("type") != "application/ld+json"
+            if tag in ("script", "img", "iframe") and attrs.get("type") not in DATA
         ]
         return bool(handlers) or bool(foreign)
 

@@ -13,10 +13,10 @@ from shapeshelf.figures.numbers import degrees_text, plus_minus_text
 from shapeshelf.figures.outlines import ring
 from shapeshelf.report.model import AngleRow, Basis, CompoundReport
 
-WIDTH = 520.0
+WIDTH = 400.0
 MOST_ROWS = 12
-_LEFT, _RIGHT = 22.0, 498.0
-_ROW, _TOP, _LEGEND = 66.0, 14.0, 34.0
+_LEFT, _RIGHT = 10.0, 390.0
+_ROW, _TOP, _LEGEND = 64.0, 6.0, 34.0
 _LABEL_SIZE, _TICK_SIZE = 15.0, 12.5
 _SMALLEST_SPAN_DEGREES = 12.0
 _SAME_DEGREES = 0.05
@@ -151,6 +151,7 @@ def _mark(kind: str, x: float, y: float, plus_minus: float) -> list[Mark]:
 
 
 def symbol(kind: str, x: float, y: float) -> Stroke:
+    """Return the mark of ``ideal``, ``model``, ``supplied``, ``calculated`` or ``measured``."""
     if kind == "ideal":
         return Stroke(((x, y - 11), (x, y + 3)), Style("soft", None, 1.6, (3, 2)), Role.DATA)
     if kind == "model":
@@ -171,7 +172,7 @@ def _legend(kinds: list[str], y: float) -> list[Mark]:
     for kind in kinds:
         marks.append(symbol(kind, x, y))
         marks.append(Lettering(x + 11, y + 4.5, kind, _TICK_SIZE, anchor="start", colour="soft"))
-        x += 11 + text_width(kind, _TICK_SIZE) + 26
+        x += 11 + text_width(kind, _TICK_SIZE) + 15
     return marks
 
 
