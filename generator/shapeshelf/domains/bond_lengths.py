@@ -47,7 +47,7 @@ def bond_length_angstrom(
     a, b = ELEMENTS[element_a], ELEMENTS[element_b]
     length = radius_angstrom(a, order) + radius_angstrom(b, order)
     length += _carbon_angstrom(element_a, domains_a) + _carbon_angstrom(element_b, domains_b)
-    length -= _polarity_angstrom(a, b)
+    length -= polarity_angstrom(a, b)
     length += _lone_pair_angstrom(element_a, element_b, order)
     return length + _order_angstrom(a, b, order, (domains_a, domains_b))
 
@@ -68,7 +68,8 @@ def _carbon_angstrom(element: str, domains: int) -> float:
     return CARBON_BY_DOMAINS_ANGSTROM.get(domains, 0.0) if element == "C" else 0.0
 
 
-def _polarity_angstrom(a: Element, b: Element) -> float:
+def polarity_angstrom(a: Element, b: Element) -> float:
+    """Return by how much polarity shortens a bond between two elements, in ångström."""
     pair = {a.symbol, b.symbol}
     if "H" in pair or a.electronegativity is None or b.electronegativity is None:
         return 0.0

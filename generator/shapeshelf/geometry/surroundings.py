@@ -13,6 +13,8 @@ FLAT_SUM_DEGREES = 357.0
 """Three angles that add up to this lie in a plane."""
 ALIKE_SITES = ("tetrahedral", "trigonal pyramidal", "trigonal planar")
 """Shapes whose sites are of one kind only."""
+FLAT_SHAPE = "trigonal planar"
+TRIANGLE_DEGREES, BESIDE_TRIANGLE_DEGREES = 60.0, 150.0
 MULTIPLE_ORDER = 1.15
 """From this averaged bond order a bond has a share of pi bonding."""
 
@@ -89,17 +91,21 @@ def _angles(
 ) -> Iterator[tuple[tuple[int, int, int], float]]:
     """Yield the angles, equal ones where all sites of an arrangement are alike.
 
+    A flat centre in a ring of three leaves what the ring takes to the angles beside it.
     On a tetrahedron or triangle, angles between neighbours of the same classes differ only by
     the way a placement happens to be turned; on other arrangements they may be real.
     """
     for centre in centres:
         alike = centre.placements[0].shape in ALIKE_SITES
+        closed = [a for a in centre.angles if a.atoms[2] in molecule.neighbours(a.atoms[0])]
         by_kind: dict[tuple[int, int], list[float]] = {}
         for angle in centre.angles:
             by_kind.setdefault(_kind(molecule, angle), []).append(angle.model_degrees)
         for angle in centre.angles:
             same = by_kind[_kind(molecule, angle)]
             degrees = sum(same) / len(same) if alike else angle.model_degrees
+            if centre.placements[0].shape == FLAT_SHAPE and closed:
+                degrees = TRIANGLE_DEGREES if angle in closed else BESIDE_TRIANGLE_DEGREES
             yield angle.atoms, degrees
             yield angle.atoms[::-1], degrees
 
