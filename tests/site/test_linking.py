@@ -158,7 +158,8 @@ def test_the_desk_names_file_and_field_of_each_point(pages: dict[str, Page]) -> 
         "2 measured values sf4.yml:8 measured[0].source",
         "no protocol names it or links to it twin.yml:1 used-in",
         "there is no compound nothing p2.txt:3 gone",
-        "171° ± 0.5° p1.md:3 value",
+        "173.1°: the page has F(ax)-S-F(ax) 171° ± 0.5°",
+        "p1.md:3 value",
     ):
         assert words in said
     assert "it or links to it water.yml" not in said
