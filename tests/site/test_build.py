@@ -89,6 +89,8 @@ def test_no_file_of_the_catalogue_itself_is_published(three: Path) -> None:
         ".sdf",
         ".xml",
         ".gz",
+        ".csv",
+        ".inv",
     }
 
 
