@@ -83,8 +83,9 @@ def _row(
 ) -> LengthRow:
     molecule, lewis, centres = known
     terms: defaultdict[str, float] = defaultdict(float)
+    weights = length_terms(molecule, lewis, centres)
     for bond in bonds:
-        for term, weight in length_terms(molecule, lewis, centres, bond).items():
+        for term, weight in weights[bond].items():
             terms[term] += weight / len(bonds)
     kind = float(np.mean([kind_length_angstrom(molecule, lewis, bond) for bond in bonds]))
     return LengthRow(

@@ -49,6 +49,10 @@ def test_every_pair_of_neighbours_stands_in_one_row(smiles):
     ("smiles", "expected"),
     [
         ("FS(F)(F)F", {"S-F(ax)": 2, "S-F(eq)": 2}),
+        ("FP(F)(F)(F)F", {"P-F(ax)": 2, "P-F(eq)": 3}),
+        ("FBr(F)(F)(F)F", {"Br-F(ap)": 1, "Br-F(bas)": 4}),
+        ("O=S(F)(F)(F)F", {"S-F(ax)": 2, "S-F(eq)": 2, "S-O": 1}),
+        ("F[Xe](F)(F)F", {"Xe-F": 4}),
         ("CCO", {"C1-C2": 1, "C1-H": 3, "C2-H": 2, "C2-O": 1, "O-H": 1}),
         ("F", {"F-H": 1}),
     ],

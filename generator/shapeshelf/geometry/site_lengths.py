@@ -5,11 +5,10 @@ were fitted with those; here a bond may also be axial or equatorial, given or sh
 """
 
 import math
-from collections import defaultdict
 from collections.abc import Sequence
 
 from shapeshelf.domains.bond_lengths import bond_length_angstrom
-from shapeshelf.domains.graph import BondGraph, graph_of
+from shapeshelf.domains.graph import BondGraph, Link, graph_of
 from shapeshelf.domains.metals import HALOGENS, MetalCentre, is_low_spin, metal_centre
 from shapeshelf.domains.model import Centre, LewisCount
 from shapeshelf.geometry.site_terms import MULTIPLE_ORDER, SITE_ANGSTROM, Site, site_terms
@@ -23,13 +22,11 @@ def site_lengths_angstrom(
     molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]
 ) -> tuple[float, ...]:
     """Return the expected length, in ångström, of every bond of ``molecule``, in its order."""
-    lengths = []
-    for bond in range(len(molecule.bonds)):
-        length = kind_length_angstrom(molecule, lewis, bond)
-        for name, weight in length_terms(molecule, lewis, centres, bond).items():
-            length += SITE_ANGSTROM[name] * weight
-        lengths.append(length)
-    return tuple(lengths)
+    return tuple(
+        kind_length_angstrom(molecule, lewis, bond)
+        + sum(SITE_ANGSTROM[name] * weight for name, weight in terms.items())
+        for bond, terms in enumerate(length_terms(molecule, lewis, centres))
+    )
 
 
 def kind_length_angstrom(molecule: Molecule, lewis: LewisCount, bond: int) -> float:
@@ -41,17 +38,18 @@ def kind_length_angstrom(molecule: Molecule, lewis: LewisCount, bond: int) -> fl
 
 
 def length_terms(
-    molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre], bond: int
-) -> dict[str, float]:
-    """Return the weight of every term of site_terms.py in one bond, both ends together."""
-    terms: defaultdict[str, float] = defaultdict(float)
-    ends = molecule.bonds[bond].begin, molecule.bonds[bond].end
+    molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]
+) -> tuple[dict[str, float], ...]:
+    """Return the weight of every term of site_terms.py in every bond, both ends together."""
+    graph = graph_of(molecule)
+    found: list[dict[str, float]] = [{} for _ in molecule.bonds]
     for centre in centres:
-        for atom, other in (ends, ends[::-1]):
-            if centre.atom == atom:
-                for name, weight in site_terms(_site(molecule, lewis, centre, other)):
-                    terms[name] += weight
-    return {name: weight for name, weight in terms.items() if weight}
+        metal = metal_centre(molecule, graph, centre.atom) if graph.metals[centre.atom] else None
+        for link in graph.links[centre.atom]:
+            terms = found[link.bond]
+            for name, weight in site_terms(_site(lewis, graph, centre, link, metal)):
+                terms[name] = terms.get(name, 0.0) + weight
+    return tuple({name: weight for name, weight in row.items() if weight} for row in found)
 
 
 def _carbon_domains(molecule: Molecule, lewis: LewisCount, atom: int) -> int:
@@ -62,19 +60,18 @@ def _carbon_domains(molecule: Molecule, lewis: LewisCount, atom: int) -> int:
     return len(molecule.neighbours(atom)) + own
 
 
-def _site(molecule: Molecule, lewis: LewisCount, centre: Centre, other: int) -> Site:
-    graph = graph_of(molecule)
-    atom = centre.atom
-    metal = metal_centre(molecule, graph, atom) if graph.metals[atom] else None
+def _site(
+    lewis: LewisCount, graph: BondGraph, centre: Centre, bond: Link, metal: MetalCentre | None
+) -> Site:
+    atom, other = centre.atom, bond.atom
     beside = [link for link in graph.links[atom] if link.atom != other]
-    own = next(link.bond for link in graph.links[atom] if link.atom == other)
     row = lewis.atoms[atom]
     pairs = 0 if metal else row.lone_pairs + row.single_electrons
     valence, share = _valence(lewis, graph, atom, metal)
     return Site(
         element=centre.element,
-        ligand=molecule.atoms[other].element,
-        order=lewis.bond_orders[own],
+        ligand=graph.elements[other],
+        order=lewis.bond_orders[bond.bond],
         terminal=graph.degree(other) == 1,
         pairs=pairs,
         domains=centre.bonded + pairs,
