@@ -8,7 +8,6 @@ from shapeshelf.pages.script_data import script_data
 from shapeshelf.pages.turning import turn_data
 
 
-
 @pytest.mark.parametrize("text", ["</script><b>", "<!--", "a & b", "\u2028\u2029", 'say "no"'])
 def test_data_cannot_end_their_element(text):
     """Nothing in them reads as markup, and they come back as they were."""
