@@ -13,7 +13,7 @@ from shapeshelf.errors import AnalysisError
 from shapeshelf.geometry.assembly import assemble
 from shapeshelf.geometry.symmetry import find_symmetry
 from shapeshelf.properties.model import DipoleModel
-from shapeshelf.properties.polarity import dipole
+from shapeshelf.properties.polarity import MODEL_NAME, dipole
 from shapeshelf.properties.spectra import expect_spectra
 from shapeshelf.report.angles import angle_rows
 from shapeshelf.report.cautions import cautions_of
@@ -32,7 +32,6 @@ from shapeshelf.structure.formulas import molar_mass_g_mol
 from shapeshelf.structure.molecule import Molecule
 from shapeshelf.structure.reading import read_argument, read_structure
 
-CHARGE_MODEL = "charge model"
 SINGLE_ATOM = 1
 DIATOMIC = 2
 
@@ -119,5 +118,5 @@ def _dipole_value(model: DipoleModel, measured: Sequence[Measurement]) -> Value 
     if model.moment_debye is None:
         return None
     return best_value(
-        model.moment_debye, model.uncertainty_debye, most_precise(found), model_name=CHARGE_MODEL
+        model.moment_debye, model.uncertainty_debye, most_precise(found), model_name=MODEL_NAME
     )
