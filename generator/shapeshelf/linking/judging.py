@@ -133,7 +133,8 @@ def _wrong_number(quote: Quote, target: Target, candidates: Sequence[PublishedVa
     section = target.quantity
     plain = _as_given(quote.quoted)
     everything = target.compound.values.values()
-    meant = [value for value in everything if value.quantity == (section or value.quantity)]
+    kinds = (section, quote.quoted.quantity)
+    meant = [value for value in everything if section is None or value.quantity in kinds]
     other_unit = [value for value in meant if _fits_without_unit(quote.quoted, plain, value)]
     if other_unit and quote.quoted.quantity is not None:
         best = other_unit[0]
