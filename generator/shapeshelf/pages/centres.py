@@ -52,6 +52,7 @@ class HybridisationView:
     label: Markup | None
     customary_only: bool
     hybrids: tuple[HybridView, ...]
+    basis: str
     bent_rule: str | None
     pyramidalisation: str | None
 
@@ -205,6 +206,7 @@ def _hybridisation_view(report: CentreReport) -> HybridisationView | None:
         label=hybrid_markup(found.label) if found.label else None,
         customary_only=found.customary_only,
         hybrids=tuple(HybridView(t, count, percent) for (t, percent), count in kinds.items()),
+        basis=found.basis,
         bent_rule=found.bent_rule,
         pyramidalisation=(
             None
