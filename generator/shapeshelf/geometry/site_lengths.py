@@ -12,7 +12,6 @@ from shapeshelf.domains.graph import BondGraph, Link, graph_of
 from shapeshelf.domains.metals import HALOGENS, MetalCentre, is_low_spin, metal_centre
 from shapeshelf.domains.model import Centre, LewisCount
 from shapeshelf.geometry.site_terms import MULTIPLE_ORDER, SITE_ANGSTROM, Site, site_terms
-from shapeshelf.reference.elements import ELEMENTS
 from shapeshelf.structure.molecule import Molecule
 
 OPPOSITE_COSINE = math.cos(math.radians(150.0))
@@ -84,15 +83,11 @@ def _site(
         ),
         halogens=sum(graph.elements[link.atom] in HALOGENS for link in beside),
         given=metal is None and row.formal_charge < 0 < lewis.atoms[other].formal_charge,
-        donor=metal.donors[metal.neighbours.index(other)] if metal and _in_d_block(metal) else None,
+        donor=metal.donors[metal.neighbours.index(other)] if metal else None,
         d_electrons=(metal.d_electrons or 0) if metal else 0,
         singles=row.single_electrons,
         low_spin=metal is not None and metal.d_electrons is not None and is_low_spin(metal),
     )
-
-
-def _in_d_block(metal: MetalCentre) -> bool:
-    return ELEMENTS[metal.element].group is not None
 
 
 def _valence(
