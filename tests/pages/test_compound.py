@@ -7,6 +7,7 @@ import pytest
 
 from shapeshelf.catalogue.model import Catalogue, Protocol, Source
 from shapeshelf.pages.compound import compound_view
+from shapeshelf.pages.properties import with_inverse
 from shapeshelf.pages.site import site_files, site_pages
 from shapeshelf.report.model import CompoundReport
 
@@ -170,3 +171,23 @@ def test_telling_centres_come_before_plain_carbon(sf4: CompoundReport, catalogue
     )
     view = compound_view(replace(sf4, centres=centres, shape=None), catalogue_of(sf4), "0")
     assert [centre.labels[0] for centre in view.key_centres] == ["C2", "P3", "C0", "C1"]
+
+
+@pytest.mark.parametrize(
+    ("label", "counted_as"),
+    [
+        ("C4^3", "C4"),
+        ("C3^2", "C3"),
+        ("C5^3", "C5^2"),
+        ("S6^5", "S6"),
+        ("S3^5", "S3"),
+        ("C2", "C2"),
+        ("Cinf", "Cinf"),
+        ("sigma_h", "sigma_h"),
+        ("E", "E"),
+    ],
+)
+def test_an_operation_is_counted_with_its_inverse(label: str, counted_as: str) -> None:
+    """Character tables write 8 C3 and 6 C4 for the octahedron, not 4 C3, 4 C3^2, 3 C4, 3 C4^3
+    (P. Atkins and J. de Paula, Physical Chemistry, recalled from memory)."""
+    assert with_inverse(label) == counted_as

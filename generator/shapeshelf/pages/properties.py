@@ -130,7 +130,7 @@ def symmetry_view(report: CompoundReport) -> SymmetryView:
     """Return the symmetry of a compound."""
     symmetry = report.symmetry
     labels = atom_labels(report.molecule)
-    counted = Counter(operation.label for operation in symmetry.operations)
+    counted = Counter(with_inverse(operation.label) for operation in symmetry.operations)
     return SymmetryView(
         point_group=point_group_markup(report.point_group),
         basis=report.point_group_basis.value,
@@ -144,6 +144,18 @@ def symmetry_view(report: CompoundReport) -> SymmetryView:
         ),
         tolerance=number_text(symmetry.tolerance_angstrom, 2) + NO_BREAK + "Å",
     )
+
+
+def with_inverse(label: str) -> str:
+    """Return ``C4`` for ``C4^3``: an operation and its inverse are counted together, as character
+    tables have them."""
+    axis, _, power = label.partition("^")
+    if not power or not axis[1:].isdigit():
+        return label
+    fold = int(axis[1:])
+    order = 2 * fold if axis[0] == "S" and fold % 2 else fold
+    least = min(int(power), order - int(power))
+    return axis if least == 1 else f"{axis}^{least}"
 
 
 def spectra_view(report: CompoundReport, sources: Mapping[str, Source]) -> SpectraView:
