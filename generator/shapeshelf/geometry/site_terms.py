@@ -29,8 +29,9 @@ L9  d block: m times the polarity term taken back, but for single bonds at a d0 
 
 Citations recalled from memory. The numbers, in ångström, are printed by
 tests/benchmarks/fit_bond_lengths.py. Of its 377 bonds, most of them recalled from handbooks, held
-back by molecule, the mean error is 0.027 Å (0.065 without these terms); no rule here describes
-S2F2, O2F2 or the short axial bonds of IF7.
+back by molecule, the mean error is 0.027 Å (0.065 without these terms); the forms
+were chosen with the same table in view. No rule here describes S2F2, O2F2 or the short axial
+bonds of IF7.
 """
 
 import math
