@@ -3,9 +3,11 @@ lookup page filters by. One list a field, and words by number, which compresses 
 """
 
 import json
-from collections.abc import Callable, Iterable, Sequence
+from collections.abc import Iterable, Sequence
+from typing import Any
 
 from shapeshelf.pages.lookup_rows import LookupRow, lookup_row
+from shapeshelf.pages.packed_numbers import packed
 from shapeshelf.report.model import CompoundReport
 
 SCHEMA = 2
@@ -83,14 +85,13 @@ def lookup_facets(rows: Sequence[LookupRow]) -> bytes:
     """Return what is filtered by, in the order of ``lookup_index``'s compounds."""
     sites, hazards, bases = _Words(), _Words(), _Words()
     corners, nuclei = _Words(), _Words()
+    angles = [_angles(row, corners) for row in rows]
     compounds = {
         "sites": [[sites.number(site) for site in row.sites] for row in rows],
         "hazards": [[hazards.number(code) for code in row.hazards] or 0 for row in rows],
         "bases": [[bases.number(basis) for basis in row.bases] for row in rows],
-        "corners": [
-            _flat((corners.number(corner), tenths) for corner, tenths in row.corners)
-            for row in rows
-        ],
+        "corners": [packed(which) for which, _ in angles],
+        "angles": [packed(steps) for _, steps in angles],
         "dipole": [row.dipole_debye for row in rows],
         "mass": [row.molar_mass_g_mol for row in rows],
         "stretches": [row.infrared_stretches for row in rows],
@@ -119,6 +120,20 @@ def as_script(name: str, data: bytes) -> bytes:
     return f"shapeshelfData.deliver({json.dumps(name)},{safe});\n".encode()
 
 
+def _angles(row: LookupRow, corners: "_Words") -> tuple[list[int], list[int]]:
+    """Return (corner, how many angles, …) and each corner's angles as steps upwards from nought."""
+    held: dict[str, list[int]] = {}
+    for corner, tenths in row.corners:
+        held.setdefault(corner, []).append(tenths)
+    which: list[int] = []
+    steps: list[int] = []
+    for corner, values in held.items():
+        which += [corners.number(corner), len(values)]
+        upwards = sorted(values)
+        steps += [b - a for a, b in zip([0, *upwards], upwards, strict=False)]
+    return which, steps
+
+
 class _Words:
     """Gives each distinct thing the next number, in the order in which they are met."""
 
@@ -126,10 +141,12 @@ class _Words:
         self._numbers: dict[object, int] = {}
 
     def number(self, thing: object) -> int:
+        """Return the thing's number."""
         return self._numbers.setdefault(thing, len(self._numbers))
 
     @property
-    def known(self) -> list:
+    def known(self) -> list[Any]:
+        """Return every thing met, in the order of their numbers."""
         return list(self._numbers)
 
 

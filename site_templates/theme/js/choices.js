@@ -44,10 +44,10 @@ function showField({ lines, chosen, fold }, values, counts) {
   for (const { value, box, count, label } of lines) {
     const number = counts.get(value) ?? 0;
     box.checked = values.includes(value);
-    count.textContent = String(number);
+    if (count.textContent !== String(number)) count.textContent = String(number);
     label.classList.toggle("choice--none", number === 0 && !box.checked);
   }
-  chosen.textContent = values.length ? values.join(", ") : "";
+  if (chosen.textContent !== values.join(", ")) chosen.textContent = values.join(", ");
   if (values.length) fold.open = true;
 }
 

@@ -1,6 +1,7 @@
 // Which compounds a set of filters leaves, and how many each further choice would leave.
 
 import { all, common, either, none, put, shared } from "./bits.js";
+import { cornersOf } from "./corners.js";
 
 /**
  * The groups of choices. Choices of one group widen it (`any`) or narrow it (`every`); groups
@@ -42,6 +43,7 @@ export function prepareFacets(index, facets) {
     for (const site of facets.compounds.sites[item]) put(kinds[site], item);
   }
   const sites = facets.words.sites.map((site) => site.map(siteText));
+  facets.angles ??= cornersOf(facets);
   return { size, held, kinds, sites, facets, values: valuesOf(held, sites) };
 }
 

@@ -5,6 +5,7 @@ import { find } from "./find.js";
 import { showGlyphs } from "./glyphs.js";
 import { loadIndex } from "./index.js";
 import { resultParts } from "./results.js";
+import { readyForSlips } from "./slips.js";
 
 const MOST = 8;
 
@@ -14,7 +15,7 @@ export function findField(form) {
   const list = listFor(form);
   const state = { form, input, list, rows: [], active: -1, root: rootOf(form) };
   setRoles(state);
-  input.addEventListener("focus", () => loadIndex(state.root).catch(() => {}), { once: true });
+  input.addEventListener("focus", () => loadIndex(state.root).then(prepareLater, () => {}), { once: true });
   input.addEventListener("input", () => answer(state));
   input.addEventListener("keydown", (event) => onKey(event, state));
   form.addEventListener("submit", (event) => onSubmit(event, state));
@@ -22,6 +23,12 @@ export function findField(form) {
     if (!form.contains(event.relatedTarget)) close(state);
   });
   document.addEventListener("keydown", (event) => onSlash(event, input));
+}
+
+/** What misspelt names need is made in a quiet moment, before it is wanted. */
+function prepareLater(index) {
+  const idle = globalThis.requestIdleCallback ?? ((run) => setTimeout(run, 200));
+  idle(() => readyForSlips(index));
 }
 
 function rootOf(form) {

@@ -109,58 +109,66 @@ function formulas(index, query, give) {
 
 function names(index, { name, words, close }, give) {
   if (!name) return;
-  const { text, items, close: closeText } = index.names;
-  eachAt(text, `\n${name}`, items, (item, end, length) => {
-    give(item, text[end] === "\n" ? NAME : NAME_START - Math.min(length, LONGEST));
+  const lines = index.names;
+  const tight = lines.close;
+  eachAt(lines, `\n${name}`, (item, end, length) => {
+    give(item, lines.text[end] === "\n" ? NAME : NAME_START - Math.min(length, LONGEST));
   });
-  eachAt(closeText, `\n${close}`, items, (item, end, length) => {
-    give(item, closeText[end] === "\n" ? NAME - 1 : NAME_START - 1 - Math.min(length, LONGEST));
+  eachAt(tight, `\n${close}`, (item, end, length) => {
+    give(item, tight.text[end] === "\n" ? NAME - 1 : NAME_START - 1 - Math.min(length, LONGEST));
   });
-  everyWord(text, words, items, (item, length) => give(item, WORD_START - Math.min(length, LONGEST)));
+  everyWord(lines, words, (item, length) => give(item, WORD_START - Math.min(length, LONGEST)));
   if (close.length < 3) return;
-  eachAt(closeText, close, items, (item, _, length) => give(item, INSIDE - Math.min(length, 40)));
+  eachAt(tight, close, (item, _, length) => give(item, INSIDE - Math.min(length, 40)));
 }
 
 function facts(index, { words }, give) {
-  everyWord(index.facts.text, words, index.facts.items, (item) => give(item, FACTS));
+  everyWord(index.facts, words, (item) => give(item, FACTS));
 }
 
 /** Calls `visit(item, end, lineLength)` for every line that holds `piece`, at its first place. */
-function eachAt(text, piece, items, visit) {
-  const walk = lineWalk(text);
-  for (let at = text.indexOf(piece); at >= 0; at = text.indexOf(piece, at + 1)) {
-    const start = piece[0] === "\n" ? at + 1 : at;
-    const line = walk(start);
-    visit(items[line.number], at + piece.length, line.end - line.start);
-    at = line.end - 1;
+function eachAt({ text, items, starts }, piece, visit) {
+  const shift = piece[0] === "\n" ? 1 : 0;
+  let line = 0;
+  for (let at = text.indexOf(piece); at >= 0; at = text.indexOf(piece, starts[line + 1] - 1)) {
+    line = lineAt(starts, at + shift, line);
+    visit(items[line], at + piece.length, starts[line + 1] - starts[line] - 1);
   }
 }
 
 /** Calls `visit(item, lineLength)` for every line in which each word begins a word. */
-function everyWord(text, words, items, visit) {
+function everyWord({ text, items, starts }, words, visit) {
   if (!words.length) return;
   const longest = words.reduce((a, b) => (b.length > a.length ? b : a));
   const others = words.filter((word) => word !== longest);
-  const walk = lineWalk(text);
+  let line = 0;
   for (let at = text.indexOf(longest); at >= 0; at = text.indexOf(longest, at + 1)) {
     if (text[at - 1] !== " " && text[at - 1] !== "\n") continue;
-    const line = walk(at);
-    const whole = ` ${text.slice(line.start, line.end)}`;
-    if (others.length && !others.every((word) => whole.includes(` ${word}`))) continue;
-    visit(items[line.number], line.end - line.start);
-    at = line.end - 1;
+    line = lineAt(starts, at, line);
+    const end = starts[line + 1] - 1;
+    if (others.length && !everyStarts(` ${text.slice(starts[line], end)}`, others)) continue;
+    visit(items[line], end - starts[line]);
+    at = end - 1;
   }
 }
 
-/** From an offset to its line, for offsets that only grow. */
-function lineWalk(text) {
-  const line = { number: -1, start: 0, end: 0 };
-  return (at) => {
-    while (line.end <= at) {
-      line.number += 1;
-      line.start = line.end + 1;
-      line.end = text.indexOf("\n", line.start);
-    }
-    return line;
-  };
+function everyStarts(line, words) {
+  return words.every((word) => line.includes(` ${word}`));
+}
+
+/** The line that an offset is in; offsets only grow, so the search goes on from `line`. */
+function lineAt(starts, at, line) {
+  let step = 1;
+  let low = line;
+  while (low + step < starts.length - 1 && starts[low + step] <= at) {
+    low += step;
+    step *= 2;
+  }
+  let high = Math.min(low + step, starts.length - 1);
+  while (high - low > 1) {
+    const middle = (low + high) >> 1;
+    if (starts[middle] <= at) low = middle;
+    else high = middle;
+  }
+  return low;
 }

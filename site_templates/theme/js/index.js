@@ -2,7 +2,7 @@
 
 import { loadData } from "./data.js";
 import { formulaKey, readFormula } from "./formula.js";
-import { casDigits, foldCode, foldLines } from "./normalise.js";
+import { foldCode, foldLines, foldName } from "./normalise.js";
 
 const USUAL_KEY_END = "-UHFFFAOYSA-N";
 const LIKE_A_FORMULA = /^(?:[A-Z][a-z]?\d*|[()[\]]\d*)+$/;
@@ -24,10 +24,10 @@ export function prepare(data) {
   const compounds = columns.id.length;
   const total = compounds + data.entries.length;
   const index = { data, columns, words: data.words, compounds, total, formulas: null, slips: null };
-  index.names = linesOf(total, (item) => namesOf(index, item));
-  index.facts = linesOf(total, (item) => [factsOf(index, item)]);
+  index.names = namesOf(index);
+  index.facts = factsOf(index, index.names);
   index.exact = exactOf(index);
-  index.digits = columns.cas.map(casDigits);
+  index.digits = columns.cas.map((cas) => cas.replace(/-/g, ""));
   return index;
 }
 
@@ -80,38 +80,43 @@ function readFormulas({ columns, compounds }) {
   return found;
 }
 
-function namesOf({ columns, compounds, data }, item) {
-  if (item < compounds) return [columns.name[item], ...(columns.also[item] || [])];
-  const entry = data.entries[item - compounds];
-  return [entry.name, ...entry.also];
-}
-
-function factsOf(index, item) {
-  const names = namesOf(index, item).join(" ");
-  if (item >= index.compounds) return names;
-  const { columns, words } = index;
-  const tags = (columns.tags[item] || []).map((tag) => words.tags[tag]);
-  return [
-    names,
-    words.shape[columns.shape[item]],
-    words.group[columns.group[item]],
-    words.polarity[columns.polarity[item]],
-    ...tags,
-  ].join(" ");
-}
-
-/** Folded text with a line end before and after every line, and which item each line is of. */
-function linesOf(total, textsOf) {
+/** Every name of every item, one a line. */
+function namesOf({ columns, compounds, data, total }) {
   const texts = [];
   const items = [];
   for (let item = 0; item < total; item += 1) {
-    for (const text of textsOf(item)) {
-      texts.push(text.replace(/\n/g, " "));
+    const entry = data.entries[item - compounds];
+    const name = entry ? entry.name : columns.name[item];
+    for (const text of [name, ...((entry ? entry.also : columns.also[item]) || [])]) {
+      texts.push(text.includes("\n") ? text.replace(/\n/g, " ") : text);
       items.push(item);
     }
   }
-  const folded = `\n${foldLines(texts.join("\n"))}\n`.replace(/ *\n */g, "\n");
-  return { text: folded, items, close: folded.replace(/ /g, "") };
+  const text = `\n${foldLines(texts.join("\n"))}\n`.replace(/ *\n */g, "\n");
+  return { ...linesIn(text, items), close: linesIn(text.replace(/ /g, ""), items) };
+}
+
+/** One line an item: all its names, then shape, point group, polarity and tags. */
+function factsOf({ columns, compounds, words, total }, { text, items }) {
+  const folded = Object.fromEntries(Object.entries(words).map(([key, list]) => [key, list.map(foldName)]));
+  const parts = Array.from({ length: total }, () => []);
+  text.slice(1, -1).split("\n").forEach((line, at) => parts[items[at]].push(line));
+  for (let item = 0; item < compounds; item += 1) {
+    for (const key of ["shape", "group", "polarity"]) parts[item].push(folded[key][columns[key][item]]);
+    for (const tag of columns.tags[item] || []) parts[item].push(folded.tags[tag]);
+  }
+  return linesIn(`\n${parts.map((part) => part.join(" ")).join("\n")}\n`, parts.map((_, item) => item));
+}
+
+/** Text with a line end before and after every line, where each begins, and whose each is. */
+function linesIn(text, items) {
+  const starts = new Int32Array(items.length + 1);
+  let at = 0;
+  for (let line = 0; line <= items.length; line += 1) {
+    starts[line] = at + 1;
+    at = text.indexOf("\n", at + 1);
+  }
+  return { text, items, starts };
 }
 
 /** Identifiers that are asked for whole: codes, ids, symbols, SMILES. */

@@ -12,6 +12,7 @@ import { itemAt, loadIndex } from "./index.js";
 import { make } from "./nodes.js";
 import { compareAddress, keepPicks, MOST, pickedIds } from "./picks.js";
 import { RANGE_KEYS, rangeSet } from "./ranges.js";
+import { readyForSlips } from "./slips.js";
 import { isFiltered, searchFor, stateFrom } from "./state.js";
 import { AT_ONCE, drawMore, drawTable } from "./table.js";
 
@@ -58,8 +59,10 @@ function open(page, index, facets) {
   offerColumns(page);
   listen(page);
   page.fold.open = matchMedia("(min-width: 64rem)").matches;
-  draw(page);
+  answer(page);
+  drawNow(page);
   page.section.dataset.ready = "";
+  (globalThis.requestIdleCallback ?? setTimeout)(() => readyForSlips(index));
 }
 
 function listen(page) {
@@ -108,7 +111,22 @@ function restore(page) {
   draw(page);
 }
 
+/** Answer at once, draw with the next frame: typing never waits for the table. */
 function draw(page) {
+  answer(page);
+  page.frame ??= requestAnimationFrame(() => {
+    page.frame = null;
+    drawNow(page);
+  });
+}
+
+function drawNow(page) {
+  page.choices.show(page.state.chosen, page.counts);
+  drawTable(page.table, drawing(page));
+  tell(page);
+}
+
+function answer(page) {
   const { index, prepared, state } = page;
   const items = findItems(index, state.text).filter((item) => item < index.compounds);
   const base = none(prepared.size);
@@ -116,10 +134,8 @@ function draw(page) {
   const ranged = rangeSet(prepared, state.asked);
   for (let at = 0; at < base.length; at += 1) base[at] &= ranged[at];
   const { left, counts } = filterBy(prepared, state.chosen, base);
-  page.choices.show(state.chosen, counts);
+  page.counts = counts;
   page.found = sorted(page, items.filter((item) => has(left, item)));
-  drawTable(page.table, drawing(page));
-  tell(page);
 }
 
 /** The compounds found as rows are drawn, each made when it is wanted. */
@@ -147,7 +163,8 @@ function sortBy(page, key) {
   const next = { [key]: `-${key}`, [`-${key}`]: "" };
   page.state.sort = page.state.sort in next ? next[page.state.sort] : key;
   keep(page);
-  draw(page);
+  answer(page);
+  drawNow(page);
   page.table.tHead.rows[0].cells[1 + columnsFor(page.state.columns).findIndex((one) => one.key === key)]
     ?.querySelector("button").focus();
 }

@@ -6,6 +6,9 @@ const GREEK = {
   τ: "tau", φ: "phi", χ: "chi", ψ: "psi", ω: "omega",
 };
 
+const ASCII = /^[\0-\x7f]*$/;
+const OUTSIDE_ASCII = /[^\n]*[^\0-\x7f][^\n]*/g;
+
 const SPELLINGS = [
   [/sulph/g, "sulf"],
   [/aluminum/g, "aluminium"],
@@ -22,14 +25,20 @@ export function foldName(text) {
 
 /** Many names at once, one a line: the same as each folded alone, but for its outer spaces. */
 export function foldLines(text) {
-  let folded = text.toLowerCase().replace(/[α-ωµ]/gu, (letter) => GREEK[letter] ?? letter);
-  folded = plainDigits(folded).normalize("NFKD").replace(/\p{M}/gu, "");
+  let folded = text.replace(OUTSIDE_ASCII, foldLetters).toLowerCase();
   for (const [from, to] of SPELLINGS) folded = folded.replace(from, to);
-  return folded.replace(/['\u2019\u2032]/g, "").replace(/[^a-z0-9\n]+/g, " ");
+  return folded.replace(/'/g, "").replace(/[^a-z0-9\n]+/g, " ");
+}
+
+/** A line with letters beyond ASCII; most lines have none and are spared this. */
+function foldLetters(line) {
+  const spelled = line.toLowerCase().replace(/[α-ωµ]/gu, (letter) => GREEK[letter] ?? letter);
+  return plainDigits(spelled).normalize("NFKD").replace(/[\p{M}\u2019\u2032]/gu, "");
 }
 
 /** Digits above or below the line become plain ones, every dash and minus a hyphen. */
 export function plainDigits(text) {
+  if (ASCII.test(text)) return text;
   return text
     .normalize("NFKC")
     .replace(/[\u2010-\u2015\u2212]/g, "-")

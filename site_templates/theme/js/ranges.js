@@ -52,10 +52,10 @@ function angleWithin(facets, asked, [from, to]) {
   const wanted = facets.words.corners.map((corner) => cornerFits(corner, asked));
   const least = Math.round(from * 10);
   const most = Math.round(to * 10);
+  const { from: first, kind, tenths } = facets.angles;
   return (item) => {
-    const held = facets.compounds.corners[item];
-    for (let at = 0; at < held.length; at += 2) {
-      if (wanted[held[at]] && held[at + 1] >= least && held[at + 1] <= most) return true;
+    for (let at = first[item]; at < first[item + 1]; at += 1) {
+      if (wanted[kind[at]] && tenths[at] >= least && tenths[at] <= most) return true;
     }
     return false;
   };

@@ -7,9 +7,14 @@ const A_WORD_LEFT = 1;
 /** Gives items whose words, or whose name written as one word, are within a slip or two. */
 export function misspelt(index, { words, close }, give) {
   if (close.length < 4) return;
-  index.slips ??= vocabularyOf(index.names);
+  readyForSlips(index);
   byWords(index.slips, words, give);
   byWhole(index.names, index.slips, close, give);
+}
+
+/** Make what misspelt names are held against, ahead of the first of them. */
+export function readyForSlips(index) {
+  index.slips ??= vocabularyOf(index.names);
 }
 
 function slipsFor(word) {
@@ -93,29 +98,47 @@ function bits(mask) {
   return count;
 }
 
+const ROWS = [new Uint8Array(256), new Uint8Array(256), new Uint8Array(256)];
+const LONGEST = 250;
+
 /**
  * Insertions, deletions, changes and swaps of neighbours between two texts, the longer one's end
- * left out; gives up above `limit`.
+ * left out; gives up above `limit`. Only places within `limit` of each other are compared.
  */
 export function distance(typed, held, limit) {
-  const width = Math.min(held.length, typed.length + limit);
-  let before = [];
-  let previous = Array.from({ length: width + 1 }, (_, at) => at);
-  for (let i = 1; i <= typed.length; i += 1) {
-    const row = [i];
-    let least = i;
-    for (let j = 1; j <= width; j += 1) {
-      const cost = typed[i - 1] === held[j - 1] ? 0 : 1;
-      let best = Math.min(previous[j] + 1, row[j - 1] + 1, previous[j - 1] + cost);
-      if (i > 1 && j > 1 && typed[i - 1] === held[j - 2] && typed[i - 2] === held[j - 1]) {
-        best = Math.min(best, before[j - 2] + 1);
-      }
+  const length = Math.min(typed.length, LONGEST);
+  const width = Math.min(held.length, length + limit);
+  let [before, previous, row] = ROWS;
+  for (let j = 0; j <= Math.min(width, limit); j += 1) previous[j] = j;
+  for (let i = 1; i <= length; i += 1) {
+    const from = Math.max(1, i - limit);
+    const to = Math.min(width, i + limit);
+    if (from > to) return limit + 1;
+    row[from - 1] = from === 1 ? i : limit + 1;
+    let least = row[from - 1];
+    for (let j = from; j <= to; j += 1) {
+      const same = typed.charCodeAt(i - 1) === held.charCodeAt(j - 1);
+      let best = previous[j - 1] + (same ? 0 : 1);
+      if (j < i + limit && previous[j] + 1 < best) best = previous[j] + 1;
+      if (row[j - 1] + 1 < best) best = row[j - 1] + 1;
+      if (!same && swapped(typed, held, i, j) && before[j - 2] + 1 < best) best = before[j - 2] + 1;
       row[j] = best;
       if (best < least) least = best;
     }
     if (least > limit) return limit + 1;
-    before = previous;
-    previous = row;
+    [before, previous, row] = [previous, row, before];
   }
-  return Math.min(...previous);
+  return leastOf(previous, Math.max(0, length - limit), width, limit);
+}
+
+function swapped(typed, held, i, j) {
+  return (
+    i > 1 && j > 1 && typed.charCodeAt(i - 1) === held.charCodeAt(j - 2) && typed.charCodeAt(i - 2) === held.charCodeAt(j - 1)
+  );
+}
+
+function leastOf(row, from, to, limit) {
+  let least = limit + 1;
+  for (let j = from; j <= to; j += 1) if (row[j] < least) least = row[j];
+  return least;
 }
