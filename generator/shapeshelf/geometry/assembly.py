@@ -50,7 +50,7 @@ def assemble(molecule: Molecule, lewis: LewisCount, centres: Sequence[Centre]) -
     _refuse_unplaced(molecule, centres)
     if len(centres) <= 1:
         points = _single_centre(molecule, lewis, centres)
-        method = "directions of the domain model, bond lengths from covalent radii"
+        method = "directions of the domain model, bond lengths from covalent radii and site terms"
         return _structure(molecule, points, method, 1)
     found = _conformers(molecule, lewis, centres)
     return _structure(molecule, found.best, found.method, found.tried)
