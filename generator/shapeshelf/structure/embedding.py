@@ -29,10 +29,10 @@ Relaxer = Callable[[CoordinatesLike], tuple[Coordinates, float]]
 """Coordinates (n, 3) to relaxed coordinates in ångström and their energy in kcal/mol."""
 
 MOST_STEPS = 2000
-MOST_ATOM_STEPS = 60_000
+MOST_ATOM_STEPS = 40_000
 """Of a relaxation: atoms times steps; beyond some hundred atoms the last steps change little."""
-MOST_TRIES = 30
-"""Starts for one conformer before the next way is tried."""
+FIRST_TRIES, MOST_TRIES = 10, 30
+"""Starts for one conformer before the next way is tried; more for the last way."""
 MOST_FOR_ORDERLY_START = 80
 """Larger molecules seldom fold into their distances from an orderly start; random ones do."""
 PLACEHOLDER = 74
@@ -107,6 +107,7 @@ def _by_preferences(molecule: Molecule, count: int, seed: int) -> list[Coordinat
     ):
         return []
     strained = _settings(seed, True)
+    strained.maxIterations = MOST_TRIES
     _leave_out_preferences(strained)
     orderly = () if len(molecule.atoms) > MOST_FOR_ORDERLY_START else (_settings(seed, False),)
     tries = (*orderly, _settings(seed, True), strained)
@@ -117,6 +118,7 @@ def _by_bounds(molecule: Molecule, count: int, seed: int, bounds: Coordinates) -
     mol = _with_placeholders(to_rdkit(molecule))
     for random_start in (False, True):
         settings = _settings(seed, random_start)
+        settings.maxIterations = MOST_TRIES
         _use_bounds(settings, bounds)
         found = _conformers(mol, count, settings)
         if found:
@@ -144,7 +146,7 @@ def _settings(seed: int, random_start: bool) -> Any:
     settings.numThreads = 1
     settings.useRandomCoords = random_start
     settings.ignoreSmoothingFailures = True
-    settings.maxIterations = MOST_TRIES
+    settings.maxIterations = FIRST_TRIES
     return settings
 
 
