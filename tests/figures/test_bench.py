@@ -31,10 +31,12 @@ def test_every_atom_carries_its_symbol(reports):
 
 
 def test_key_angles_are_labelled(reports):
-    """Every key angle stands in the picture with the value the report gives."""
+    """Every key angle stands in the picture with the value the report gives, but for the axial
+    one of the see-saw, whose arc would run behind both equatorial ligands."""
     for name, report in reports.items():
         labels = [mark.text for mark in letters(bench_drawing(report), Role.LABEL)]
-        assert sorted(labels) == sorted(degrees_text(row) for row in key_angles(report)), name
+        behind = {"173°"} if name == "sf4" else set()
+        assert set(labels) == {degrees_text(row) for row in key_angles(report)} - behind, name
 
 
 def test_a_straight_angle_is_left_out_beside_others(reports):

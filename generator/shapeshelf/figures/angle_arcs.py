@@ -60,6 +60,8 @@ class _Choice:
     cost: float
     arc: Array
     box: Array
+    hidden: bool
+    """Whether the arc runs behind an atom that is none of its own."""
 
 
 def key_angles(report: CompoundReport) -> tuple[AngleRow, ...]:
@@ -77,19 +79,26 @@ def key_angles(report: CompoundReport) -> tuple[AngleRow, ...]:
 
 
 def angle_marks(stage: Paper, rows: tuple[AngleRow, ...]) -> AngleMarks:
-    """Return an arc and a label for every row that finds room."""
+    """Return an arc and a label for every row that finds room; an arc behind an atom says little
+    and stands only where there would be none."""
     crowd = _crowd(stage)
-    arcs: list[Mark] = []
-    labels: list[Mark] = []
+    chosen: list[tuple[str, _Choice]] = []
+    hidden: list[tuple[str, _Choice]] = []
     for row in rows:
         text = degrees_text(row)
         choice = _best(stage, row, text, crowd)
         if choice is None:
             continue
-        arcs.append(_arc_stroke(choice.arc))
-        labels.append(_label(text, choice.box))
+        if choice.hidden:
+            hidden.append((text, choice))
+            continue
+        chosen.append((text, choice))
         crowd = np.concatenate([crowd, discs_along(choice.arc, 1.0), discs_in_box(choice.box)])
-    return AngleMarks(tuple(arcs), tuple(labels))
+    shown = chosen or hidden[:1]
+    return AngleMarks(
+        tuple(_arc_stroke(choice.arc) for _, choice in shown),
+        tuple(_label(text, choice.box) for text, choice in shown),
+    )
 
 
 def _importance(row: AngleRow) -> tuple[bool, bool, float]:
@@ -141,17 +150,17 @@ def _placed(
     free = room >= _ROOM
     if not free.any():
         return None
-    total = costs + cost + _crossing_cost(stage, trio, arc, crowd)
+    hidden = _behind_an_atom(stage, trio, arc)
+    crossing = room_along(arc[4:-4], _foreign(crowd, arc)) < 0
+    total = costs + cost + (_CROSSING_ATOM if hidden else _CROSSING_BOND * crossing)
     index = int(np.argmin(np.where(free, np.round(total, 3), np.inf)))
-    return _Choice(float(total[index]), arc, boxes[index])
+    return _Choice(float(total[index]), arc, boxes[index], hidden)
 
 
-def _crossing_cost(stage: Paper, trio: tuple[int, int, int], arc: Array, crowd: Array) -> float:
+def _behind_an_atom(stage: Paper, trio: tuple[int, int, int], arc: Array) -> bool:
     others = np.setdiff1d(np.arange(len(stage.atoms)), trio)
     rings = np.column_stack([stage.atoms[others, :2], stage.radii[others] + 2])
-    if room_along(arc, rings) < 0:
-        return _CROSSING_ATOM
-    return _CROSSING_BOND if room_along(arc[4:-4], _foreign(crowd, arc)) < 0 else 0.0
+    return room_along(arc, rings) < 0
 
 
 def _foreign(crowd: Array, arc: Array) -> Array:

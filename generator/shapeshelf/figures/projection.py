@@ -79,7 +79,7 @@ def _gap_score(points: Array, radii: Array, directions: Array, lobes: int) -> Ar
     score: Array = 5 * gap[second < atoms].min(axis=0, initial=_ENOUGH_GAP_ANGSTROM)
     mixed = (second >= atoms) & (first < atoms) & (apart2[:, 0] > _OWN_LOBE_ANGSTROM**2)
     score += 4 * np.minimum(gap[mixed], 0.03).min(axis=0, initial=0.03)
-    score += 1.2 * np.minimum(gap[first >= atoms], -0.15).min(axis=0, initial=-0.15)
+    score += 4 * np.minimum(gap[first >= atoms], -0.12).min(axis=0, initial=-0.12)
     return score
 
 
