@@ -5,7 +5,6 @@ where they are shown true, a title block. Auxiliary views where no principal vie
 angle true.
 """
 
-import hashlib
 from dataclasses import dataclass
 
 import numpy as np
@@ -31,6 +30,7 @@ from shapeshelf.figures.scene import Scene, build_scene
 from shapeshelf.figures.title_block import title_block
 from shapeshelf.figures.view_parts import Painted, paint
 from shapeshelf.report.model import AngleRow, CompoundReport, LengthRow
+from shapeshelf.report.revision import revision
 
 Array = NDArray[np.float64]
 
@@ -192,16 +192,8 @@ def _assembled(
     body += [mark for one in painted for mark in one.marks]
     body += others
     body += [one.lettering for one in placed]
-    block = title_block(report, layout.block, layout.scale, _revision(report, placed), left_out)
+    block = title_block(report, layout.block, layout.scale, revision(report), left_out)
     return [_frame(layout), *body, *block]
-
-
-def _revision(report: CompoundReport, placed: list[Placed]) -> str:
-    """Return eight letters that change where what the sheet tells changes."""
-    structure = np.round(report.symmetry.coordinates_angstrom, 3) + 0.0
-    dipole = report.dipole_debye and round(report.dipole_debye.value, 3)
-    told = (report.name, report.molecule.smiles, report.point_group, structure.tolist(), dipole)
-    return hashlib.sha256(repr((told, [one.text for one in placed])).encode()).hexdigest()[:8]
 
 
 def _frame(layout: Layout) -> Stroke:

@@ -1,9 +1,11 @@
 """Which figures stand on which page, as markup that is safe to place."""
 
+import hashlib
+import pickle
 import re
 from collections.abc import Sequence
-from dataclasses import dataclass
-from functools import cache
+from dataclasses import dataclass, field
+from functools import cache, lru_cache
 
 from markupsafe import Markup
 
@@ -18,6 +20,9 @@ from shapeshelf.figures.sheet import sheet
 from shapeshelf.figures.strip import strip
 from shapeshelf.pages.turning import turn_data
 from shapeshelf.report.model import CompoundReport
+
+KEPT = 400
+"""Compounds whose figures are kept in memory, some 100 kB each."""
 
 _NAMING_ATTRIBUTE = re.compile(r' (?:role|aria-[a-z]+|font-family)="[^"]*"')
 _NAMING_ELEMENT = re.compile(r"<(title|desc)\b.*?</\1>")
@@ -38,7 +43,22 @@ class CompoundFigures:
 
 
 def compound_figures(report: CompoundReport) -> CompoundFigures:
-    """Draw the figures of one compound."""
+    """Draw the figures of one compound, or hand out those of a report that says the same: a
+    server that follows changes draws anew only what changed."""
+    return _drawn(_Told(hashlib.sha256(pickle.dumps(report)).digest(), report))
+
+
+@dataclass(frozen=True, slots=True)
+class _Told:
+    """A report that is equal to another by its content, which is quick to compare."""
+
+    digest: bytes
+    report: CompoundReport = field(compare=False)
+
+
+@lru_cache(maxsize=KEPT)
+def _drawn(told: _Told) -> CompoundFigures:
+    report = told.report
     return CompoundFigures(
         bench=_markup(bench_view(report)),
         turn=turn_data(report),
@@ -72,9 +92,7 @@ def shape_figure(shape: str) -> Markup | None:
     return _maybe(shape_drawing(shape))
 
 
-def scale_figure(
-    shape: str, rows: Sequence[ScaleRow], ideals: Sequence[float]
-) -> Markup | None:
+def scale_figure(shape: str, rows: Sequence[ScaleRow], ideals: Sequence[float]) -> Markup | None:
     """Return the angles of a shape's compounds on one scale."""
     return _maybe(angle_scale(shape, rows, ideals))
 

@@ -1,6 +1,5 @@
 """Everything the site holds, each page and file with its address."""
 
-import hashlib
 import json
 from collections.abc import Iterator, Mapping, Sequence
 from functools import partial
@@ -20,8 +19,8 @@ from shapeshelf.pages.finding import data_file, finding_files
 from shapeshelf.pages.glossary import term_views
 from shapeshelf.pages.history import Change, last_changes
 from shapeshelf.pages.home import CompoundLine, compound_line, home_view
-from shapeshelf.pages.lookup_index import by_name
 from shapeshelf.pages.json_ld import json_ld
+from shapeshelf.pages.lookup_index import by_name
 from shapeshelf.pages.model import SiteFile, SitePage, Standing
 from shapeshelf.pages.protocols import (
     ProtocolView,
@@ -36,8 +35,7 @@ from shapeshelf.pages.start import start_view
 from shapeshelf.pages.structure_files import sdf_text, xyz_text
 from shapeshelf.report.json import report_json
 from shapeshelf.report.model import CompoundReport
-
-REVISION_DIGITS = 8
+from shapeshelf.report.revision import data_text, revision
 
 Reports = Sequence[CompoundReport]
 
@@ -99,12 +97,7 @@ def _finding_pages(catalogue: Catalogue, reports: Reports) -> Iterator[SitePage]
 
 def data_json(report: CompoundReport) -> bytes:
     """Return the contract's JSON of one compound, the entry's fields beside it."""
-    return json.dumps(report_json(report), ensure_ascii=False, indent=1).encode()
-
-
-def revision(report: CompoundReport) -> str:
-    """Return a short hash of all that the compound's data say; the same data, the same mark."""
-    return hashlib.sha256(data_json(report)).hexdigest()[:REVISION_DIGITS]
+    return data_text(report).encode()
 
 
 def _page(address: str, title: str, part: str, **values: object) -> SitePage:
