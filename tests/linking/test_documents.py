@@ -61,6 +61,14 @@ def test_bytes_that_are_no_text_are_read_all_the_same(tmp_path: Path, name: str)
     )
 
 
+def test_a_marked_section_does_not_stop_the_reader(tmp_path: Path) -> None:
+    path = tmp_path / "a.html"
+    path.write_text("<![x[_a <a href='../compounds/none/'>x</a>", "utf-8")
+    assert [link.address for b in document_blocks(path) for link in b.links] == [
+        "../compounds/none/"
+    ]
+
+
 def test_a_folder_is_searched_for_documents(tmp_path: Path, published) -> None:
     """Hidden files and folders, and what is no document, are left out."""
     for name in ("b.md", "a/c.rst", ".git/d.md", "e.png", "~$f.docx"):

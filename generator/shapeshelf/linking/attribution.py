@@ -16,6 +16,7 @@
 """
 
 import re
+from bisect import bisect
 from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass, replace
 
@@ -100,8 +101,9 @@ class NamesOf:
         starts = [match.start() for match in words.WORD_START.finditer(text)]
         ends = [match.start() for match in words.WORD_END.finditer(text)]
         for start in starts:
-            for end in ends:
-                if start < end <= start + self._longest and text[start:end] in self._ids:
+            first, last = bisect(ends, start), bisect(ends, start + self._longest)
+            for end in ends[first:last]:
+                if text[start:end] in self._ids:
                     yield text[start:end]
 
 
@@ -150,6 +152,8 @@ def _beside(
     if in_some_link or quoted.quantity in (None, OTHER, "frequency"):
         return None
     link = _owner(sentence, quoted)
+    if max(quoted.start - link.end, link.start - quoted.end) > words.FAR:
+        return None
     if _speaks_of_another(sentence, link, quoted, names, sections.compound(link)):
         return None
     if _is_another_kind(sentence, link, quoted):

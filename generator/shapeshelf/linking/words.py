@@ -33,7 +33,7 @@ OTHER_KIND_BEFORE = re.compile(
 )
 OTHER_KIND_AFTER = re.compile(
     r"\s*(?:[-\s]*(?:molecular\s+)?sieves?|[-\s]*MS\b|[-\s]*(?:NMR|printer|printed|view|drawing"
-    r"|pulse|bend|elbow|turn|rotation|cone|pores?|resolution)\b)",
+    r"|scans?|images?|maps?|spectr\w+|pulse|bend|elbow|turn|rotation|cone|pores?|resolution)\b)",
     re.IGNORECASE,
 )
 NO_VALUE_BEFORE = re.compile(
@@ -57,5 +57,7 @@ CONTRAST = re.compile(
 ANGLE_WORDS = re.compile(r"\bangles?\b|\bangular\b", re.IGNORECASE)
 THREE_ATOMS = re.compile(r"\b[A-Z][a-z]?\d*(?:\(\w+\))?(?:[-–‐‑−][A-Z][a-z]?\d*(?:\(\w+\))?){2}")
 DIPOLE_WORDS = re.compile(r"\bdipoles?\b|\bmoments?\b|\bpolar\b|\bpolarity\b", re.IGNORECASE)
+FAR = 600
+"""Characters from a link beyond which a number is not beside it, in whatever sentence."""
 NEAR = 40
 """Characters before a number in which a word is next to it."""

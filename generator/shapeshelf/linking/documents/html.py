@@ -20,7 +20,8 @@ _UNSEEN = frozenset(("head", "script", "style", "template", "noscript"))
 def html_blocks(text: str) -> Iterator[Block]:
     """Yield the blocks of an HTML document; what no reader sees is left out."""
     reader = _Reader()
-    reader.feed(text)
+    # Python's reader stops at a marked section that it does not know; as text it does no harm.
+    reader.feed(text.replace("<![", "&lt;!["))
     reader.close()
     yield from reader.finished()
 

@@ -14,7 +14,7 @@ _DEFINITION = re.compile(r"^ {0,3}\[([^\[\]]+)\]:\s*<?([^\s<>]+)>?(?:\s+[\"'(].*
 _LABEL = r"(?:[^\[\]\\]|\\.|\[(?:[^\[\]\\]|\\.)*\])*"
 _INLINE = re.compile(
     rf"""
-      (?P<ticks>`+)(?P<code>.+?)(?P=ticks)(?!`)
+      (?P<ticks>`+)(?P<code>.{1, 2000}?)(?P=ticks)(?!`)
     | \\(?P<escaped>[!-/:-@\[-`{{-~])
     | (?P<image>!\[{_LABEL}\](?:\([^()]*(?:\([^()]*\))?[^()]*\)|\[[^\]]*\])?)
     | \[(?P<text>{_LABEL})\]\(\s*
@@ -23,7 +23,8 @@ _INLINE = re.compile(
     | \[(?P<shown>{_LABEL})\]\[(?P<reference>[^\[\]]*)\]
     | \[(?P<shortcut>[^\[\]]+)\]
     | <(?P<auto>https?://[^<>\s]+)>
-    | <a\s[^>]*?href\s*=\s*(?P<quote>["'])(?P<href>.*?)(?P=quote)[^>]*>(?P<anchor>.*?)</a\s*>
+    | <a\s[^<>]*?href\s*=\s*(?P<quote>["'])(?P<href>[^<>]*?)(?P=quote)[^<>]*>
+        (?P<anchor>.{0, 2000}?)</a\s*>
     | (?P<bare>{URL})
     | (?P<tag></?[A-Za-z][^<>]*>)
     | (?P<emphasis>\*+|(?<!\w)_+|_+(?!\w)|~~)
