@@ -35,6 +35,7 @@ class Surroundings:
     """Atoms whose bonds lie in a plane and that can share in a pi system."""
     paired: frozenset[int]
     """Atoms with a lone pair of their own."""
+    elements: tuple[str, ...] = ()
 
     def length(self, first: int, second: int) -> float:
         """Return the target length in ångström."""
@@ -65,6 +66,7 @@ def surroundings_of(
         linear=linear,
         flat=frozenset(_flat_atoms(neighbours, orders, lewis, centres)) - linear,
         paired=frozenset(k for k, atom in enumerate(lewis.atoms) if _own_pairs(lewis, k) > 0),
+        elements=tuple(atom.element for atom in molecule.atoms),
     )
 
 

@@ -16,7 +16,8 @@ T7  A ring of up to six atoms whose bonds all share in pi bonding is flat even a
     atoms: hexachlorocyclotriphosphazene.
 
 T1 to T4, T6: R. J. Gillespie and I. Hargittai, The VSEPR Model of Molecular Geometry (1991) and
-E. L. Eliel and S. H. Wilen, Stereochemistry of Organic Compounds (1994), recalled from memory.
+E. L. Eliel and S. H. Wilen, Stereochemistry of Organic Compounds (1994); T8, T9: N. N. Greenwood
+and A. Earnshaw, Chemistry of the Elements, 2nd ed. (1997); all recalled from memory.
 The heights (near kcal/mol) only rank the rules and are ours.
 """
 
@@ -24,7 +25,13 @@ from collections.abc import Iterator
 from dataclasses import dataclass
 from itertools import pairwise
 
-from shapeshelf.geometry.surroundings import LINEAR_DEGREES, MULTIPLE_ORDER, Surroundings
+from shapeshelf.geometry.surroundings import (
+    LINEAR_DEGREES,
+    MULTIPLE_ORDER,
+    Surroundings,
+    joined_without,
+)
+from shapeshelf.reference.elements import ELEMENTS
 
 DOUBLE_ORDER = 1.6
 
@@ -117,12 +124,15 @@ def _rule(
     """Return height, fold and minimum of the rule that applies to the bond b-c."""
     flat = (b in known.flat) + (c in known.flat)
     paired = _holds_pair_aside(known, b) + _holds_pair_aside(known, c)
+    if flat == 2 and all(ELEMENTS[known.elements[k]].group == 13 for k in (b, c)):
+        return (12.0, 2, 90.0 if _bears_heavy(known, b) or _bears_heavy(known, c) else 0.0)
     if flat == 2:
         return (60.0 if known.order(b, c) > DOUBLE_ORDER else 12.0, 2, 0.0)
     if flat == 1 and paired == 1:
         return (8.0, 2, 0.0)
     if paired == 2:
-        return (8.0, 2, 90.0)
+        away = _turns_pair_away(known, b) and _turns_pair_away(known, c)
+        return (8.0, 1, 180.0) if away and not joined_without(known, b, c) else (8.0, 2, 90.0)
     if flat == 0:
         return _staggered(known, b, c)
     return None
@@ -131,6 +141,21 @@ def _rule(
 def _holds_pair_aside(known: Surroundings, atom: int) -> bool:
     """Tell whether a lone pair stands beside the bonds as in a pyramid or a bent centre."""
     return atom in known.paired - known.flat and len(known.neighbours[atom]) <= 3
+
+
+def _bears_heavy(known: Surroundings, atom: int) -> bool:
+    return any(ELEMENTS[known.elements[k]].period >= 3 for k in known.neighbours[atom])
+
+
+def _turns_pair_away(known: Surroundings, atom: int) -> bool:
+    """T8."""
+    around, row = known.neighbours[atom], ELEMENTS[known.elements[atom]]
+    return (
+        row.group == 15
+        and row.period >= 3
+        and len(around) == 3
+        and all(known.elements[k] != "H" for k in around)
+    )
 
 
 def _staggered(known: Surroundings, b: int, c: int) -> tuple[float, int, float] | None:
