@@ -152,7 +152,7 @@ def _beside(
     if in_some_link or quoted.quantity in (None, OTHER, "frequency"):
         return None
     link = _owner(sentence, quoted)
-    if max(quoted.start - link.end, link.start - quoted.end) > words.FAR:
+    if link is None or max(quoted.start - link.end, link.start - quoted.end) > words.FAR:
         return None
     if _speaks_of_another(sentence, link, quoted, names, sections.compound(link)):
         return None
@@ -218,8 +218,8 @@ def _fills_cell(text: str, quoted: Quoted) -> bool:
     return before.endswith("|") and (not after or after.startswith("|"))
 
 
-def _owner(sentence: _Sentence, quoted: Quoted) -> Link:
-    """Return the link a number beside links belongs to (rules B2 and B5)."""
+def _owner(sentence: _Sentence, quoted: Quoted) -> Link | None:
+    """Return the link a number beside links belongs to (rules B2 and B5), if it is beside any."""
     links = sentence.links
     alike = [one.start for one in sentence.numbers if one.quantity == quoted.quantity]
     paired = len(links) == len(alike) > 1
@@ -229,7 +229,7 @@ def _owner(sentence: _Sentence, quoted: Quoted) -> Link:
     later = [link for link in links if link.start >= quoted.end]
     if later and _tied(sentence, quoted, later[0]):
         return later[0]
-    return earlier[-1] if earlier else later[0]
+    return next(iter((*earlier[-1:], *later)), None)
 
 
 def _tied(sentence: _Sentence, quoted: Quoted, link: Link) -> bool:
