@@ -30,11 +30,11 @@ from shapeshelf.report.model import CompoundReport
 Array = NDArray[np.float64]
 
 _BOND = 46.0
-_ROOM, _LARGEST = (340.0, 230.0), 1.6
+_ROOM, _LARGEST = (320.0, 220.0), 1.5
 """Pixels for the atoms, the labels around them left aside, and the most that bonds grow to it."""
-_SYMBOL, _NUMBER = 17.0, 12.0
+_SYMBOL, _NUMBER = 17.0, 13.0
 _RING = 12.0
-_NARROWEST = 480.0
+_NARROWEST = 400.0
 _ENOUGH_ROOM = 3.0
 _FEWEST_LEFT_OUT = 10
 _BOND_WIDTH = 2.4
