@@ -14,7 +14,7 @@ _DEFINITION = re.compile(r"^ {0,3}\[([^\[\]]+)\]:\s*<?([^\s<>]+)>?(?:\s+[\"'(].*
 _LABEL = r"(?:[^\[\]\\]|\\.|\[(?:[^\[\]\\]|\\.)*\])*"
 _INLINE = re.compile(
     rf"""
-      (?P<ticks>`+)(?P<code>.{1, 2000}?)(?P=ticks)(?!`)
+      (?P<ticks>`+)(?P<code>.{{1,2000}}?)(?P=ticks)(?!`)
     | \\(?P<escaped>[!-/:-@\[-`{{-~])
     | (?P<image>!\[{_LABEL}\](?:\([^()]*(?:\([^()]*\))?[^()]*\)|\[[^\]]*\])?)
     | \[(?P<text>{_LABEL})\]\(\s*
@@ -24,7 +24,7 @@ _INLINE = re.compile(
     | \[(?P<shortcut>[^\[\]]+)\]
     | <(?P<auto>https?://[^<>\s]+)>
     | <a\s[^<>]*?href\s*=\s*(?P<quote>["'])(?P<href>[^<>]*?)(?P=quote)[^<>]*>
-        (?P<anchor>.{0, 2000}?)</a\s*>
+        (?P<anchor>.{{0,2000}}?)</a\s*>
     | (?P<bare>{URL})
     | (?P<tag></?[A-Za-z][^<>]*>)
     | (?P<emphasis>\*+|(?<!\w)_+|_+(?!\w)|~~)
