@@ -38,6 +38,8 @@ _NARROWEST = 400.0
 _ENOUGH_ROOM = 3.0
 _FEWEST_LEFT_OUT = 10
 _BOND_WIDTH = 2.4
+_INNER_SHARE = 0.16
+"""How far towards the middle of its ring the second line of a bond is looked for."""
 
 
 def numbered_drawing(report: CompoundReport) -> Drawing | None:
@@ -145,8 +147,12 @@ def _crowd(flat: Flat) -> Array:
     rings = smallest_rings(flat.molecule)
     for bond in flat.molecule.bonds:
         if {bond.begin, bond.end} <= flat.shown:
-            lines = 2 if frozenset((bond.begin, bond.end)) in rings else min(bond.order, 2)
-            parts.append(discs_along(flat.points[[bond.begin, bond.end]], 4.5 * lines))
+            ends = flat.points[[bond.begin, bond.end]]
+            middle = _middle(flat, rings.get(frozenset((bond.begin, bond.end))))
+            parts.append(discs_along(ends, 4.5 * (1 if middle else min(bond.order, 2))))
+            if middle:
+                inner = ends + (middle - ends) * _INNER_SHARE
+                parts.append(discs_along(inner, 4.5))
     for atom in flat.lettered:
         parts.append(discs_in_box((*flat.at(atom), _pill_width(flat, atom), 2 * _RING + 2, 0.0)))
     return np.concatenate(parts)
