@@ -1,41 +1,25 @@
-// The small drawings of shapes: put into the page once, shown wherever a row has one.
+// The small drawings of shapes, each one picture however many rows show it.
 
-const SPRITE = "shape-glyphs";
+const pictures = new Map();
 
 /** Lay the drawings by; `glyphs` is our own markup from the index, by the name of the shape. */
 export function showGlyphs(glyphs) {
-  if (document.getElementById(SPRITE)) return;
-  const holder = document.createElement("div");
-  holder.id = SPRITE;
-  holder.hidden = true;
+  if (pictures.size) return;
   for (const [shape, markup] of Object.entries(glyphs)) {
-    const drawn = document.createElement("div");
-    drawn.innerHTML = markup;
-    const svg = drawn.firstElementChild;
-    const group = document.createElementNS(svg.namespaceURI, "symbol");
-    group.id = glyphId(shape);
-    group.setAttribute("viewBox", svg.getAttribute("viewBox"));
-    group.append(...svg.childNodes);
-    svg.removeAttribute("class");
-    svg.replaceChildren(group);
-    holder.append(svg);
+    pictures.set(shape, `data:image/svg+xml,${encodeURIComponent(markup)}`);
   }
-  document.body.append(holder);
 }
 
-/** The drawing of a shape, or an empty place of the same size. */
+/** The drawing of a shape, or an empty place of the same size; the name stands beside it. */
 export function glyph(shape) {
-  const svg = document.createElementNS("http://www.w3.org/2000/svg", "svg");
-  svg.setAttribute("class", "glyph");
-  svg.setAttribute("aria-hidden", "true");
-  if (shape && document.getElementById(glyphId(shape))) {
-    const use = document.createElementNS(svg.namespaceURI, "use");
-    use.setAttribute("href", `#${glyphId(shape)}`);
-    svg.append(use);
+  const picture = pictures.get(shape);
+  const node = document.createElement(picture ? "img" : "span");
+  node.className = "glyph";
+  if (picture) {
+    node.alt = "";
+    node.width = 26;
+    node.height = 26;
+    node.src = picture;
   }
-  return svg;
-}
-
-function glyphId(shape) {
-  return `glyph-${shape.toLowerCase().replace(/[^a-z0-9]+/g, "-")}`;
+  return node;
 }
