@@ -7,7 +7,7 @@ import pytest
 
 from shapeshelf.catalogue.model import Catalogue, Protocol, Source
 from shapeshelf.pages.compound import compound_view
-from shapeshelf.pages.properties import with_inverse
+from shapeshelf.pages.properties import reason_markup, with_inverse
 from shapeshelf.pages.site import site_files, site_pages
 from shapeshelf.report.model import CompoundReport
 
@@ -191,3 +191,21 @@ def test_an_operation_is_counted_with_its_inverse(label: str, counted_as: str) -
     """Character tables write 8 C3 and 6 C4 for the octahedron, not 4 C3, 4 C3^2, 3 C4, 3 C4^3
     (P. Atkins and J. de Paula, Physical Chemistry, recalled from memory)."""
     assert with_inverse(label) == counted_as
+
+
+@pytest.mark.parametrize(
+    ("reason", "symbols"),
+    [
+        ("Symmetry C2v allows a dipole moment along the C2 axis.", ["C2v", "C2"]),
+        ("The C2 axes across the C5 axis (D5h) forbid a dipole moment", ["C2", "C5", "D5h"]),
+        ("The inversion centre (Dinfh) forbids a dipole moment", ["D∞h"]),
+        ("Symmetry Oh forbids it: it cannot lie along several C3 axes.", ["Oh", "C3"]),
+        ("The negative end is on the side of O1 and C2 (F).", []),
+    ],
+)
+def test_symbols_of_symmetry_are_set_in_a_reason(reason: str, symbols: list[str]) -> None:
+    """Groups and axes have their subscripts, atoms stay as they are, words are not changed."""
+    page = Reader(str(reason_markup(reason)))
+    assert page.text.replace("∞", "inf") == reason
+    groups = str(reason_markup(reason)).split('class="pg"')[1:]
+    assert [Reader("<b" + group.split("</span>")[0]).text for group in groups] == symbols

@@ -12,6 +12,7 @@ PARTS = (
     "header.css",
     "prose.css",
     "sheet.css",
+    "parts.css",
     "turn.css",
     "tables.css",
     "lists.css",

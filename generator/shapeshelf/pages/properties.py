@@ -1,10 +1,11 @@
 """Polarity, symmetry and expected spectra of one compound as its page shows them."""
 
+import re
 from collections import Counter
 from collections.abc import Mapping
 from dataclasses import dataclass
 
-from markupsafe import Markup
+from markupsafe import Markup, escape
 
 from shapeshelf.catalogue.model import Measurement, Source
 from shapeshelf.pages.addresses import source_anchor
@@ -19,6 +20,11 @@ from shapeshelf.pages.typesetting import (
 from shapeshelf.pages.values import DEBYE, ValueView, citation, value_view
 from shapeshelf.report.labels import atom_labels
 from shapeshelf.report.model import CompoundReport
+
+_SYMBOL = re.compile(
+    r"((?<=Symmetry )[A-Z]\w*|\bC(?:\d+|inf)(?= ax[ie]s)|(?<=\()[CDSTOI](?:inf|\d)?\w?(?=\)))"
+)
+"""Where a reason names a point group or an axis; ``C2`` elsewhere is an atom."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -38,7 +44,7 @@ class PolarityView:
     word: str
     """``polar``, ``non-polar`` or ``ion``."""
     dipole: ValueView | None
-    reason: str
+    reason: Markup
     bonds: tuple[BondPolarityView, ...]
 
 
@@ -112,8 +118,16 @@ def polarity_view(report: CompoundReport, sources: Mapping[str, Source]) -> Pola
     return PolarityView(
         word=polarity_word(report),
         dipole=value_view(value, DEBYE, sources) if value else None,
-        reason=report.dipole_model.reason,
+        reason=reason_markup(report.dipole_model.reason),
         bonds=_bond_polarities(report),
+    )
+
+
+def reason_markup(reason: str) -> Markup:
+    """Return the reason with the symbols of point groups and axes set as such."""
+    parts = _SYMBOL.split(reason)
+    return Markup("").join(
+        point_group_markup(part) if index % 2 else escape(part) for index, part in enumerate(parts)
     )
 
 
