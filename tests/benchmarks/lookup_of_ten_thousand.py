@@ -31,9 +31,42 @@ from shapeshelf.report.building import report_on_structure
 
 COMPOUNDS, REPORTS, SEED = 10_000, 300, 20262
 MOST_LETTERS = 60
-CONFIG = "site_name: Ten thousand\ndocs_dir: compounds\ntheme: {name: material, font: false}\nplugins: [shapeshelf]\n"
-TAGS = "gas liquid solid solvent ligand precursor standard aromatic fluoride ion toxic".split()
-HAZARDS = "H225 H280 H290 H301 H302 H311 H314 H315 H318 H319 H330 H331 H335 H350 H410".split()
+CONFIG = """\
+site_name: Ten thousand
+docs_dir: compounds
+theme: {name: material, font: false}
+plugins: [shapeshelf]
+"""
+TAGS = [
+    "gas",
+    "liquid",
+    "solid",
+    "solvent",
+    "ligand",
+    "precursor",
+    "standard",
+    "aromatic",
+    "fluoride",
+    "ion",
+    "toxic",
+]
+HAZARDS = [
+    "H225",
+    "H280",
+    "H290",
+    "H301",
+    "H302",
+    "H311",
+    "H314",
+    "H315",
+    "H318",
+    "H319",
+    "H330",
+    "H331",
+    "H335",
+    "H350",
+    "H410",
+]
 TYPED_SLIPS = ("tolune", "cyclohexnae", "benzadehyde", "acetnoitrile", "dimethylformamid")
 TYPED_OTHERS = ("C6H6", "C2H6O", "67-64-1", "benzoic acid", "methyl", "tetrahedral", "C2v", "polar")
 
@@ -92,7 +125,8 @@ MORE_ROWS = """async () => {
 }"""
 CHOICES = """async () => {
   const times = [];
-  for (const box of [...document.querySelectorAll(".choices input")].filter((_, at) => at % 7 === 0)) {
+  const boxes = [...document.querySelectorAll(".choices input")];
+  for (const box of boxes.filter((_, at) => at % 7 === 0)) {
     for (const state of [true, false]) {
       box.checked = state;
       const start = performance.now();
@@ -165,7 +199,9 @@ def _row(one: Any, number: int, patterns: list[LookupRow], chance: random.Random
     pattern = patterns[number % len(patterns)]
     name = one.common_name or one.iupac_name
     others = dict.fromkeys([one.iupac_name, *one.synonyms])
-    also = [text for text in others if text and text != name and not text[:3].isdigit()][: chance.randint(1, 2)]
+    also = [text for text in others if text and text != name and not text[:3].isdigit()][
+        : chance.randint(1, 2)
+    ]
     jitter = chance.randint(-5, 5)
     return replace(
         pattern,

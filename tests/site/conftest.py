@@ -2,8 +2,10 @@
 
 import functools
 import http.server
+import json
 import os
 import shutil
+import subprocess
 import threading
 from collections.abc import Iterator
 from pathlib import Path
@@ -13,6 +15,7 @@ from mkdocs.commands.build import build
 from mkdocs.config import load_config
 
 ROOT = Path(__file__).parents[2]
+MODULES = ROOT / "site_templates" / "theme" / "js"
 BROWSERS = ("chromium", "chromium-browser", "google-chrome", "chrome")
 FLAGS = (
     "--no-sandbox",
@@ -109,6 +112,53 @@ def browser(chromium: str) -> Iterator[object]:
         launched = playwright.chromium.launch(executable_path=chromium, args=list(FLAGS))
         yield launched
         launched.close()
+
+
+@pytest.fixture(scope="session")
+def in_node(tmp_path_factory: pytest.TempPathFactory):
+    """Run a piece of script that may import the site's modules; returns what it ``tell``s.
+
+    Without Node the tests of modules are left out, but never in CI.
+    """
+    node = shutil.which("node")
+    if node is None and os.environ.get("CI") == "true":
+        pytest.fail("no node on the path: the modules cannot be tested")
+    if node is None:
+        pytest.skip("no node on the path")
+    folder = tmp_path_factory.mktemp("modules")
+    shutil.copytree(MODULES, folder / "js")
+    (folder / "package.json").write_text('{"type": "module"}')
+
+    def run(script: str, given: object = None) -> object:
+        text = (
+            'import { readFileSync } from "node:fs";'
+            'const given = JSON.parse(readFileSync(0, "utf8"));'
+            "const tell = (told) => process.stdout.write(JSON.stringify(told));\n" + script
+        )
+        (folder / "run.js").write_text(text)
+        done = subprocess.run(
+            [node, "run.js"],
+            cwd=folder,
+            input=json.dumps(given),
+            capture_output=True,
+            text=True,
+            timeout=60,
+            check=False,
+        )
+        assert done.returncode == 0, done.stderr
+        return json.loads(done.stdout)
+
+    return run
+
+
+@pytest.fixture(scope="session")
+def three_for_files(tmp_path_factory: pytest.TempPathFactory) -> Path:
+    """Three compounds built to be opened from a folder."""
+    folder = write_bench(tmp_path_factory.mktemp("files"))
+    config = CONFIG.replace("  - shapeshelf", "  - shapeshelf:\n      for_files: true")
+    (folder / "mkdocs.yml").write_text(config)
+    build_site(folder)
+    return folder / "site"
 
 
 @pytest.fixture(scope="session")

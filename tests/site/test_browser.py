@@ -1,5 +1,6 @@
-"""The site in a real Chromium: the demo site as a chemist uses it, and the lookup's modules."""
+"""The site in a real Chromium: the demo site as a chemist uses it, by keyboard and on a phone."""
 
+import json
 from collections.abc import Callable, Iterator
 from dataclasses import dataclass, field
 from pathlib import Path
@@ -30,15 +31,6 @@ def visit(browser: Any, serve: Callable[[Path], str], three: Path) -> Iterator[V
 @pytest.fixture
 def demo_visit(browser: Any, serve: Callable[[Path], str], demo: Path) -> Iterator[Visit]:
     yield from _visit(browser, serve(demo))
-
-
-@pytest.fixture(scope="module")
-def modules(browser: Any, serve: Callable[[Path], str], three: Path) -> Iterator[Any]:
-    """One page from which the lookup's modules are imported and asked."""
-    page = browser.new_page()
-    page.goto(serve(three))
-    yield page
-    page.close()
 
 
 @pytest.mark.parametrize(
@@ -76,6 +68,7 @@ def test_every_kind_of_page_of_the_demo_is_quiet(demo_visit: Visit) -> None:
         "", "lookup/", "shapes/", "shapes/see-saw/", "compounds/", "compounds/sf4/",
         "compounds/dppe/", "compounds/nitrate/", "sources/", "protocols/", "protocols/tb-p01/",
         "methods/",
+        "start/", "glossary/", "compare/?ids=sf4,clf3,xef4", "lookup/?shape=see-saw",
     ):  # fmt: skip
         page.goto(demo_visit.home + path)
         page.wait_for_load_state("networkidle")
@@ -146,62 +139,6 @@ def test_the_chosen_face_is_kept(visit: Visit) -> None:
     assert page.evaluate("document.documentElement.dataset.face") == "blueprint"
 
 
-@pytest.mark.parametrize(
-    ("text", "keys"),
-    [
-        ("SF4", ["F4S1/null"]),
-        ("F4S", ["F4S1/null"]),
-        ("SF₄", ["F4S1/null"]),
-        ("sf4", ["F4S1/null"]),
-        ("NO3-", ["N1O1/-3", "N1O3/-1"]),
-        ("[NO3]−", ["N1O3/-1"]),
-        ("SO₄²⁻", ["O4S1/-2"]),
-        ("SO4 2-", ["O4S1/-2"]),
-        ("SO4^2-", ["O4S1/-2"]),
-        ("SO42-", ["O42S1/-1", "O4S1/-2"]),
-        ("(CH3)3SiN3", ["C3H9N3Si1/null"]),
-        ("[Co(NH3)6]3+", ["Co1H18N6/3"]),
-        ("no2", ["N1O2/null", "No2/null"]),
-        ("benzene", []),
-        ("see-saw", []),
-    ],
-)
-def test_formulas_are_read_in_any_order_and_script(
-    modules: Any, text: str, keys: list[str]
-) -> None:
-    """Compositions with alphabetical keys; charges as people write them."""
-    found = modules.evaluate(
-        """async (text) => {
-          const { readFormula } = await import("./js/formula.js");
-          return readFormula(text).map(({ key, charge }) => `${key}/${charge}`);
-        }""",
-        text,
-    )
-    assert sorted(found) == sorted(keys)
-
-
-@pytest.mark.parametrize(
-    ("typed", "held", "limit", "expected"),
-    [
-        ("flouride", "fluoride", 2, 1),
-        ("sulfer", "sulfur tetrafluoride", 2, 1),
-        ("xenon", "argon", 1, 2),
-    ],
-)
-def test_slips_of_the_pen_are_counted(
-    modules: Any, typed: str, held: str, limit: int, expected: int
-) -> None:
-    """Swapped neighbours are one slip; the end of a longer name costs nothing."""
-    found = modules.evaluate(
-        """async ([typed, held, limit]) => {
-          const { distance } = await import("./js/rank.js");
-          return distance(typed, held, limit);
-        }""",
-        [typed, held, limit],
-    )
-    assert found == expected
-
-
 def _visit(browser: Any, home: str) -> Iterator[Visit]:
     context = browser.new_context(viewport=DESK, color_scheme="light")
     visit = Visit(context.new_page(), home)
@@ -240,14 +177,14 @@ def _visit(browser: Any, home: str) -> Iterator[Visit]:
         ("[NO3]-", "nitrate"),
     ],
 )
-def test_the_compound_meant_stands_first(modules: Any, text: str, expected: str) -> None:
+def test_the_compound_meant_stands_first(
+    in_node: Callable[..., Any], three: Path, text: str, expected: str
+) -> None:
     """Identifiers in full, names with slips, formulas with and without their charge."""
-    found = modules.evaluate(
-        """async (text) => {
-          const { loadIndex } = await import("./js/index.js");
-          const { find } = await import("./js/rank.js");
-          return find(await loadIndex("./"), text, 1).map((row) => row.id);
-        }""",
-        text,
-    )
-    assert found == [expected]
+    script = """
+      import { prepare } from "./js/index.js";
+      import { find } from "./js/find.js";
+      tell(find(prepare(given.index), given.text, 1).map((row) => row.id));
+    """
+    index = json.loads((three / "lookup-index.json").read_text("utf-8"))
+    assert in_node(script, {"index": index, "text": text}) == [expected]

@@ -39,9 +39,7 @@ def angle_scale(shape: str, rows: Sequence[ScaleRow], ideals: Sequence[float]) -
     return render(drawing) if drawing else None
 
 
-def scale_drawing(
-    shape: str, rows: Sequence[ScaleRow], ideals: Sequence[float]
-) -> Drawing | None:
+def scale_drawing(shape: str, rows: Sequence[ScaleRow], ideals: Sequence[float]) -> Drawing | None:
     """Return the scale as data."""
     held = [row for row in rows if row.points]
     if not held:
@@ -85,7 +83,9 @@ def _ideal_marks(scale: _Scale, ideals: Sequence[float], foot: float) -> list[Ma
         if not scale.least <= degrees <= scale.most:
             continue
         x = scale.at(degrees)
-        marks.append(Stroke(((x, _TOP - 4), (x, foot)), Style("soft", None, 1.4, (5, 3)), Role.AXIS))
+        marks.append(
+            Stroke(((x, _TOP - 4), (x, foot)), Style("soft", None, 1.4, (5, 3)), Role.AXIS)
+        )
         marks.append(Lettering(x, _TOP - 10, f"ideal {degrees:g}°", _TICK_SIZE, colour="soft"))
     return marks
 

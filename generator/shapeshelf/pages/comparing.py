@@ -52,9 +52,7 @@ def comparison_json(report: CompoundReport, sources: Mapping[str, Source]) -> by
     return json.dumps(content, ensure_ascii=False, separators=(",", ":")).encode()
 
 
-def compared_rows(
-    report: CompoundReport, sources: Mapping[str, Source]
-) -> tuple[ComparedRow, ...]:
+def compared_rows(report: CompoundReport, sources: Mapping[str, Source]) -> tuple[ComparedRow, ...]:
     """Return all rows of a compound in the order in which a comparison prints them."""
     return (
         *_shape_rows(report),
@@ -81,18 +79,14 @@ def _shape_rows(report: CompoundReport) -> Iterator[ComparedRow]:
     yield ComparedRow("group", "Shape", "Point group", report.point_group)
 
 
-def _angle_rows(
-    report: CompoundReport, sources: Mapping[str, Source]
-) -> Iterator[ComparedRow]:
+def _angle_rows(report: CompoundReport, sources: Mapping[str, Source]) -> Iterator[ComparedRow]:
     for centre in _distinct(report):
         for row in centre.angles:
             label = _centreless(row.of)
             yield _value_row(f"angle {label}", "Angles", label, row.degrees, DEGREE, sources)
 
 
-def _length_rows(
-    report: CompoundReport, sources: Mapping[str, Source]
-) -> Iterator[ComparedRow]:
+def _length_rows(report: CompoundReport, sources: Mapping[str, Source]) -> Iterator[ComparedRow]:
     """Yield bonds at the only kind of centre; elsewhere there is nothing to line them up by."""
     if len(_distinct(report)) != 1 or report.shape is None:
         return
@@ -101,9 +95,7 @@ def _length_rows(
         yield _value_row(f"length {label}", "Bond lengths", label, row.angstrom, ANGSTROM, sources)
 
 
-def _polarity_rows(
-    report: CompoundReport, sources: Mapping[str, Source]
-) -> Iterator[ComparedRow]:
+def _polarity_rows(report: CompoundReport, sources: Mapping[str, Source]) -> Iterator[ComparedRow]:
     yield ComparedRow("polarity", "Polarity", "Polarity", polarity_word(report))
     if report.dipole_debye is not None:
         yield _value_row("dipole", "Polarity", "Dipole moment", report.dipole_debye, DEBYE, sources)

@@ -19,7 +19,7 @@ from shapeshelf.pages.lookup_index import (
     lookup_rows,
     shapes_held,
 )
-from shapeshelf.pages.lookup_rows import group_words
+from shapeshelf.pages.lookup_rows import LookupRow, group_words
 from shapeshelf.pages.model import SiteFile
 from shapeshelf.pages.protocols import address_of
 from shapeshelf.pages.rendering import templates_dir
@@ -72,7 +72,9 @@ def entries(catalogue: Catalogue, reports: Sequence[CompoundReport]) -> list[Ent
     ]
 
 
-def _index(catalogue: Catalogue, reports: Sequence[CompoundReport], rows: Sequence) -> bytes:
+def _index(
+    catalogue: Catalogue, reports: Sequence[CompoundReport], rows: Sequence[LookupRow]
+) -> bytes:
     held = {row.glyph for row in rows if row.glyph} | {known.shape for known in SHAPES.values()}
     glyphs = {shape: str(shape_glyph(shape)) for shape in sorted(held)}
     return lookup_index(rows, entries(catalogue, reports), glyphs)

@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from shapeshelf.pages.compound import shape_words
 from shapeshelf.pages.properties import polarity_word
 from shapeshelf.pages.typesetting import point_group_text, without_charge
-from shapeshelf.pages.values import value_view, DEGREE
+from shapeshelf.pages.values import DEGREE, value_view
 from shapeshelf.report.model import AngleRow, Basis, CentreReport, CompoundReport
 
 UNNAMED = "no named shape"

@@ -98,8 +98,8 @@ def overview(reports: Sequence[CompoundReport]) -> OverviewView:
             if centre.shape:
                 key = (centre.centre.bonded, centre.centre.lone_pairs)
                 held.setdefault(key, {}).setdefault(centre.shape, set()).add(report.id or "")
-    for key, shapes in usual_shapes().items():
-        for shape in shapes:
+    for key, usual in usual_shapes().items():
+        for shape in usual:
             held.setdefault(key, {}).setdefault(shape, set())
     neighbours = range(FEWEST_NEIGHBOURS, max([USUAL_NEIGHBOURS, *(n for n, _ in held)]) + 1)
     pairs = range(max([USUAL_LONE_PAIRS, *(p for _, p in held if p is not None)]) + 1)

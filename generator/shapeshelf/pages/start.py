@@ -3,13 +3,14 @@
 from collections.abc import Sequence
 from dataclasses import dataclass
 
+from markupsafe import Markup
+
 from shapeshelf.catalogue.model import Catalogue
 from shapeshelf.pages.centres import AngleView, angle_view
 from shapeshelf.pages.drawings import bench_markup
 from shapeshelf.pages.home import CompoundLine, compound_line
 from shapeshelf.pages.lookup_index import by_name
 from shapeshelf.report.model import AngleRow, Basis, CompoundReport
-from markupsafe import Markup
 
 
 @dataclass(frozen=True, slots=True)
