@@ -78,7 +78,8 @@ def _kept_turns(known: Surroundings, points: Array, barred: Collection[int]) -> 
 def _contradiction(molecule: Molecule, known: Surroundings, points: Array) -> _Contradiction:
     alike = defaultdict(list)
     for bond in known.orders:
-        alike[_bond_kind(molecule, known, bond)].append(bond)
+        if "H" not in (known.elements[bond[0]], known.elements[bond[1]]):
+            alike[_bond_kind(molecule, known, bond)].append(bond)
     uneven = {
         atom
         for bonds in alike.values()
@@ -86,12 +87,14 @@ def _contradiction(molecule: Molecule, known: Surroundings, points: Array) -> _C
         for bond in bonds
         for atom in bond
     }
-    flattened = tuple(
-        atom
+    pyramids = [
+        (atom, ends)
         for atom, ends in enumerate(known.neighbours)
-        if len(ends) == 3
-        and _angle_sum(known.angles, atom, ends) < FLAT_SUM_DEGREES
-        and _angle_sum(_measured(known, points).angles, atom, ends) > FLAT_SUM_DEGREES
+        if len(ends) == 3 and _angle_sum(known.angles, atom, ends) < FLAT_SUM_DEGREES
+    ]
+    found = _measured(known, points).angles if pyramids else {}
+    flattened = tuple(
+        atom for atom, ends in pyramids if _angle_sum(found, atom, ends) > FLAT_SUM_DEGREES
     )
     return _Contradiction(frozenset(uneven), flattened)
 
