@@ -32,7 +32,8 @@ MOST_FORMS = 4
 _BOND, _SYMBOL, _DOT = 56.0, 22.0, 2.3
 _PAIR_OUT, _PAIR_APART = 19.0, 4.2
 _CHARGE_OUT, _CHARGE_SIZE = 23.0, 16.0
-_ARROW, _GAP, _ROW_WIDTH = 52.0, 16.0, 760.0
+_ARROW, _GAP, _ROW_WIDTH = 52.0, 16.0, 440.0
+_NOTE_SIZE = 14.0
 _CROWDED = 5.2
 _HALF_LETTER = 12.0
 _CHARGE_ROOM = 2.0
@@ -54,6 +55,7 @@ def lewis_drawing(report: CompoundReport) -> Drawing | None:
         return None
     forms = report.lewis.forms[: _forms_drawn(report.molecule)]
     marks = _in_rows([_form(report, flat, form) for form in forms])
+    marks += _not_all(marks, len(forms), len(report.lewis.forms))
     marks, height = framed(marks)
     width = math.ceil(extent(marks)[2] + MARGIN)
     title = f"{report.name}, Lewis structure"
@@ -201,6 +203,15 @@ def _in_rows(forms: list[list[Mark]]) -> list[Mark]:
         left += x1 - x0
         row_height = max(row_height, y1 - y0)
     return placed
+
+
+def _not_all(marks: list[Mark], drawn: int, known: int) -> list[Mark]:
+    """Return a note below the forms where there are more than are drawn."""
+    if drawn == known:
+        return []
+    left, _, _, bottom = extent(marks)
+    text = f"{drawn} of {known} forms"
+    return [Lettering(left, bottom + 26, text, _NOTE_SIZE, colour="soft", anchor="start")]
 
 
 def _double_arrow(left: float, y: float) -> list[Mark]:

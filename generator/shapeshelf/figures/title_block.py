@@ -15,6 +15,8 @@ _ROOM = BLOCK_WIDTH - _LABEL_COLUMN - _PAD
 _RULE, _THICK = Style("ink", None, 0.8), Style("ink", None, 1.6)
 _SYMBOL_WIDTH = 70.0
 
+_MOST_LINES = 3
+
 
 def title_block(
     report: CompoundReport,
@@ -72,12 +74,12 @@ def _head(report: CompoundReport, x: float, y: float) -> list[Mark]:
 
 
 def _lines(text: str) -> int:
-    """Return how many lines a row's text takes, two at most."""
-    return 1 if text_width(text, _SMALLEST_TEXT) <= _ROOM else 2
+    """Return how many lines a row's text takes, three at most."""
+    return len(_wrapped(text))
 
 
 def _row(label: str, text: str, x: float, y: float, height: float) -> list[Mark]:
-    lines = _wrapped(text) if _lines(text) > 1 else [text]
+    lines = _wrapped(text)
     step = height / len(lines)
     marks: list[Mark] = [
         Stroke(((x, y), (x + BLOCK_WIDTH, y)), _RULE, Role.FRAME),
@@ -85,18 +87,21 @@ def _row(label: str, text: str, x: float, y: float, height: float) -> list[Mark]
     ]
     for index, line in enumerate(lines):
         shown = fitted(line, _ROOM, _TEXT, _SMALLEST_TEXT)
-        base = y + (index + 0.5) * step + 5 + (1.5 - 3 * index if len(lines) > 1 else 0)
+        base = y + (index + 0.5) * step + 5 + (1.5 * (len(lines) - 1 - 2 * index))
         marks.append(Lettering(x + _LABEL_COLUMN, base, shown.text, shown.size, anchor="start"))
     return marks
 
 
 def _wrapped(text: str) -> list[str]:
-    """Return two lines, broken at the last space that fits."""
-    words = text.split(" ")
-    count = len(words)
-    while count > 1 and text_width(" ".join(words[:count]), _SMALLEST_TEXT) > _ROOM:
-        count -= 1
-    return [" ".join(words[:count]), " ".join(words[count:])]
+    """Return the text in lines, each broken at the last space that fits."""
+    lines, rest = [], text.split(" ")
+    while rest and len(lines) < _MOST_LINES - 1:
+        count = len(rest)
+        while count > 1 and text_width(" ".join(rest[:count]), _SMALLEST_TEXT) > _ROOM:
+            count -= 1
+        lines.append(" ".join(rest[:count]))
+        rest = rest[count:]
+    return [*lines, " ".join(rest)] if rest else lines
 
 
 def _foot(x: float, y: float, scale: float, unit: str) -> list[Mark]:
