@@ -9,7 +9,7 @@ from shapeshelf.catalogue.model import Catalogue, Protocol, Source
 from shapeshelf.pages.compound import compound_view
 from shapeshelf.pages.properties import reason_markup, with_inverse
 from shapeshelf.pages.site import site_files, site_pages
-from shapeshelf.report.model import CompoundReport
+from shapeshelf.report.model import Band, CalculatedVibrations, CompoundReport
 
 ANCHORS = ("shape", "angles", "polarity", "hybridisation", "symmetry", "sources", "centre-S1")
 """The contract's fixed anchors on a compound's page."""
@@ -209,3 +209,12 @@ def test_symbols_of_symmetry_are_set_in_a_reason(reason: str, symbols: list[str]
     assert page.text.replace("∞", "inf") == reason
     groups = str(reason_markup(reason)).split('class="pg"')[1:]
     assert [Reader("<b" + group.split("</span>")[0]).text for group in groups] == symbols
+
+
+def test_calculated_bands_are_drawn_where_on_record(sf4: CompoundReport, catalogue_of) -> None:
+    """With the method below, and no picture without a record."""
+    vibrations = CalculatedVibrations("a method", (Band(730.0, 200.0), Band(890.0, 160.0)))
+    with_record = _pages(replace(sf4, frequencies=vibrations), catalogue_of)["compounds/sf4/"]
+    assert "fig-infrared" in with_record
+    assert "a method, harmonic, unscaled" in with_record
+    assert "fig-infrared" not in _pages(sf4, catalogue_of)["compounds/sf4/"]
