@@ -52,7 +52,9 @@ def _wrapped(name: str, text: str) -> str:
     body = _EXPORT.sub(r"\1 \2", _IMPORT.sub(_destructured, text))
     if found := _LEFT_OVER.search(body):
         raise ShapeshelfError(f"{name}: cannot be put into one script: {found.group()}")
-    return f"const {_variable(name)} = (() => {{\n{body}return {{ {', '.join(exported)} }};\n}})();\n"
+    return (
+        f"const {_variable(name)} = (() => {{\n{body}return {{ {', '.join(exported)} }};\n}})();\n"
+    )
 
 
 def _destructured(match: re.Match[str]) -> str:

@@ -63,8 +63,7 @@ TERMS: tuple[Term, ...] = (
     ),
     Term(
         "calculated",
-        "Obtained by quantum chemistry from the structure, with the method named beside the"
-        " value.",
+        "Obtained by quantum chemistry from the structure, with the method named beside the value.",
         ("quantum chemistry", "computed"),
     ),
     Term(
@@ -131,8 +130,8 @@ TERMS: tuple[Term, ...] = (
     ),
     Term(
         "half-width",
-        "The ± of a value. For the model: how far it was off in two of three cases when it"
-        " predicted molecules of the same class that it had not been fitted to.",
+        "The ± of a value. For the model, two of three predictions of molecules that it had not been"
+        " fitted to, of the same class, were within it.",
         ("uncertainty", "plus minus", "error bar"),
     ),
     Term(

@@ -3,12 +3,12 @@
 import { has, none, put } from "./bits.js";
 import { choiceForm } from "./choices.js";
 import { CHOICES, columnsFor, comparison, factsAt } from "./columns.js";
-import { csvText, tabText } from "./csv.js";
 import { loadData, pageAddress } from "./data.js";
 import { filterBy, prepareFacets } from "./facets.js";
 import { findItems } from "./find.js";
 import { showGlyphs } from "./glyphs.js";
 import { itemAt, loadIndex } from "./index.js";
+import { copyTable, downloadTable } from "./lookup-output.js";
 import { make } from "./nodes.js";
 import { compareAddress, keepPicks, MOST, pickedIds } from "./picks.js";
 import { RANGE_KEYS, rangeSet } from "./ranges.js";
@@ -75,8 +75,8 @@ function listen(page) {
   page.columns.addEventListener("change", () => changed(page));
   page.more.addEventListener("click", () => showMore(page));
   page.clear.addEventListener("click", () => clear(page));
-  page.copy.addEventListener("click", () => copy(page));
-  page.download.addEventListener("click", () => download(page));
+  page.copy.addEventListener("click", () => copyTable(page));
+  page.download.addEventListener("click", () => downloadTable(page));
   page.table.addEventListener("change", (event) => pick(page, event.target));
   for (const form of [page.filters, page.ranges]) form.addEventListener("submit", (event) => event.preventDefault());
   addEventListener("popstate", () => restore(page));
@@ -240,22 +240,4 @@ function chosenColumns({ columns }) {
   const ticked = [...columns.querySelectorAll("input:checked")].map((box) => box.value);
   const usual = columnsFor(null).slice(1).map(({ key }) => key);
   return ticked.length === usual.length && ticked.every((key) => usual.includes(key)) ? null : ticked;
-}
-
-function textRows(page) {
-  const columns = columnsFor(page.state.columns);
-  const rows = page.found.slice(0, page.found.length);
-  return [columns.map(({ label }) => label), ...rows.map((one) => columns.map((column) => column.text(one)))];
-}
-
-async function copy(page) {
-  await navigator.clipboard.writeText(tabText(textRows(page)));
-  page.status.textContent = `${page.found.length} copied`;
-}
-
-function download(page) {
-  const link = make("a", { download: "compounds.csv" });
-  link.href = URL.createObjectURL(new Blob([csvText(textRows(page))], { type: "text/csv;charset=utf-8" }));
-  link.click();
-  setTimeout(() => URL.revokeObjectURL(link.href), 1000);
 }
