@@ -11,6 +11,7 @@ from collections.abc import Iterable, Sequence
 from pathlib import Path
 
 from shapeshelf import __version__
+from shapeshelf.calculation.model import Level
 from shapeshelf.errors import CatalogueError, Problem, ShapeshelfError, UsageError
 
 FINE, PROBLEMS, WRONG_USAGE = 0, 1, 2
@@ -53,8 +54,19 @@ def _parser() -> argparse.ArgumentParser:
         "structure", help="a SMILES string, a .xyz, .mol or .sdf file, or - for one a line"
     )
     assess.add_argument("--json", action="store_true")
+    _compute_command(commands)
     _linking_commands(commands)
     return parser
+
+
+def _compute_command(commands: "argparse._SubParsersAction[argparse.ArgumentParser]") -> None:
+    compute = _command(commands, "compute", _compute, "compute missing and stale records")
+    compute.add_argument("ids", nargs="*", metavar="ID", help="entries; all where none is named")
+    compute.add_argument("--basis", choices=["auto", *Level], default="auto")
+    compute.add_argument("--jobs", type=int, default=1, metavar="N", help="how many side by side")
+    compute.add_argument("--scheduler", metavar="ADDRESS", help="of a Dask cluster")
+    compute.add_argument("--again", action="store_true", help="also what has a record")
+    compute.add_argument("--catalogue", type=Path, default=Path("compounds"))
 
 
 def _linking_commands(commands: "argparse._SubParsersAction[argparse.ArgumentParser]") -> None:
@@ -112,6 +124,18 @@ def _check(options: argparse.Namespace) -> int:
         print(*withdrawn_lines(present), sep="\n", end="\n" if present.published.withdrawn else "")
         print(f"{len(reports)} compounds, {len(catalogue.sources)} sources: no problems")
     return FINE
+
+
+def _compute(options: argparse.Namespace) -> int:
+    from shapeshelf.calculation.computing import compute
+    from shapeshelf.catalogue.reading import read_catalogue
+
+    if options.jobs < 1:
+        raise UsageError(f"--jobs {options.jobs}: at least 1 is needed")
+    level = None if options.basis == "auto" else Level(options.basis)
+    catalogue = read_catalogue(options.catalogue)
+    whole = compute(catalogue, options.ids, level, options.jobs, options.scheduler, options.again)
+    return FINE if whole else PROBLEMS
 
 
 def _assess(options: argparse.Namespace) -> int:

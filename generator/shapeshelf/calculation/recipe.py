@@ -1,0 +1,173 @@
+"""The recipe: from a molecule to a finished record.
+
+C1  Starts come from the domain model (starting.py).
+C2  Every start is optimised roughly; the lowest goes on (methods.py says how, for each level).
+C3  It is optimised finely.
+C4  Second derivatives there give wavenumbers and infrared intensities, and prove the minimum; an
+    imaginary mode is followed downhill and C3 repeated.
+C5  The dipole moment comes from a single point with diffuse functions.
+C7  What fails is a record that says why.
+"""
+
+from collections.abc import Callable, Iterable, Sequence
+from dataclasses import dataclass, replace
+
+import numpy as np
+
+from shapeshelf.calculation.engines import engine_versions
+from shapeshelf.calculation.failing import UnusableError
+from shapeshelf.calculation.judging import check_bonds, check_spin, check_system, imaginary
+from shapeshelf.calculation.keys import settled, structure_key
+from shapeshelf.calculation.methods import NAMES, Method, method_for, settings_of
+from shapeshelf.calculation.minimising import Minimum
+from shapeshelf.calculation.model import (
+    CalculationRecord,
+    Level,
+    Mode,
+    Outcome,
+    PlacementResult,
+    System,
+)
+from shapeshelf.calculation.placements import ends_of, energies_of, placement_results
+from shapeshelf.calculation.starting import Start, shaken, starts_of, with_fitted_lengths
+from shapeshelf.calculation.units import BOHR_ANGSTROM, DEBYE_PER_ATOMIC_UNIT
+from shapeshelf.calculation.vibrations import masses, vibrations
+from shapeshelf.domains.analysis import analyse
+from shapeshelf.geometry.assembly import assemble
+from shapeshelf.geometry.symmetry import find_symmetry
+from shapeshelf.geometry.vectors import Array
+from shapeshelf.structure.molecule import Molecule, Vector
+
+Told = Callable[[str], None]
+"""Receives the name of each stage as it begins."""
+
+MOST_DESCENTS = 3
+DESCENT_BOHR = 0.3
+SYMMETRY_TOLERANCE_ANGSTROM = 0.02
+"""Above what optimising leaves of the shaking, far below a distortion worth a page."""
+
+
+@dataclass(frozen=True, slots=True)
+class Proven:
+    """A minimum with its modes."""
+
+    minimum: Minimum
+    modes: tuple[Mode, ...]
+    descents: int
+
+
+def calculate(molecule: Molecule, level: Level, told: Told) -> CalculationRecord:
+    """Return the record of ``molecule`` at ``level``, a failure as a record too (C7).
+
+    Raises AnalysisError where the domain model gives no structure to start from, CalculationError
+    where a program is not installed.
+    """
+    molecule = settled(molecule)
+    lewis, centres = analyse(molecule)
+    structure = assemble(molecule, lewis, centres)
+    system = System(
+        tuple(atom.element for atom in molecule.atoms), molecule.charge, lewis.multiplicity
+    )
+    record = CalculationRecord(
+        key=structure_key(molecule, lewis.multiplicity),
+        level=level,
+        method=NAMES[level],
+        engines=engine_versions(level),
+        settings=settings_of(level),
+        outcome=Outcome.MINIMUM,
+        elements=system.elements,
+    )
+    starts = starts_of(molecule, lewis, centres, structure)
+    try:
+        check_system(system)
+        return _calculated(record, molecule, system, starts, told)
+    except UnusableError as failure:
+        return replace(record, outcome=failure.outcome, failure=failure.sentence)
+
+
+def _calculated(
+    record: CalculationRecord,
+    molecule: Molecule,
+    system: System,
+    starts: Sequence[Start],
+    told: Told,
+) -> CalculationRecord:
+    method = method_for(record.level, system)
+    rough, placements = _lowest(method, molecule, system, starts, told)
+    proven = _proven(method, system, rough, told)
+    place = _centred(system, proven.minimum.coordinates)
+    check_bonds(molecule, starts[0].coordinates, place)
+    check_spin(system, method.spin_squared())
+    told("dipole moment")
+    dipole = method.dipole(place)
+    return replace(
+        record,
+        coordinates_angstrom=_rows(place * BOHR_ANGSTROM),
+        energy_hartree=proven.minimum.energy,
+        dipole_debye=_rows([dipole * DEBYE_PER_ATOMIC_UNIT])[0],
+        modes=proven.modes,
+        spin_squared=method.spin_squared(),
+        point_group=_point_group(system, place),
+        placements=placements,
+        warnings=_warnings(proven),
+    )
+
+
+def _lowest(
+    method: Method, molecule: Molecule, system: System, starts: Sequence[Start], told: Told
+) -> tuple[Minimum, tuple[PlacementResult, ...]]:
+    """Return the lowest rough minimum (C2) and what became of each placement."""
+    minima = []
+    for start in starts:
+        told(f"first optimisation, {start.shape}" if len(starts) > 1 else "first optimisation")
+        fitted = with_fitted_lengths(molecule, system, start.coordinates)
+        minima.append(method.roughly(shaken(fitted)))
+    ends = ends_of(system, minima)
+    energies = energies_of(method, minima, ends)
+    results = placement_results(starts, minima, ends, energies)
+    return minima[energies.index(min(energies))], results
+
+
+def _proven(method: Method, system: System, rough: Minimum, told: Told) -> Proven:
+    """Return the fine minimum (C3), proven (C4). Raises UnusableError where none is found."""
+    place, hessian = rough.coordinates, rough.hessian
+    for descents in range(MOST_DESCENTS + 1):
+        told("optimisation" if not descents else "optimisation, downhill from a saddle")
+        fine = method.finely(place, hessian)
+        if not fine.converged:
+            raise UnusableError(Outcome.NO_MINIMUM, f"not found in {fine.steps} steps")
+        told("vibrations")
+        hessian, slopes = method.second_derivatives(fine.coordinates)
+        modes, moves = vibrations(system.elements, fine.coordinates, hessian, slopes)
+        if not imaginary(modes):
+            return Proven(fine, modes, descents)
+        place = fine.coordinates + _downhill(moves[0])
+    raise UnusableError(Outcome.NO_MINIMUM, f"{MOST_DESCENTS + 1} saddles in a row")
+
+
+def _downhill(move: Array) -> Array:
+    """Return a displacement (n, 3) in bohr along an imaginary mode."""
+    return np.asarray(move * DESCENT_BOHR / np.linalg.norm(move))
+
+
+def _centred(system: System, place: Array) -> Array:
+    weights = masses(system.elements)
+    return np.asarray(place - weights @ place / weights.sum())
+
+
+def _point_group(system: System, place: Array) -> str:
+    points = place * BOHR_ANGSTROM
+    return find_symmetry(system.elements, points, SYMMETRY_TOLERANCE_ANGSTROM).point_group
+
+
+def _rows(points: Iterable[Array]) -> tuple[Vector, ...]:
+    return tuple((float(x), float(y), float(z)) for x, y, z in points)
+
+
+def _warnings(proven: Proven) -> tuple[str, ...]:
+    found = []
+    if proven.descents:
+        found.append(f"imaginary modes followed downhill: {proven.descents}")
+    if any(mode.wavenumber_per_cm < 0 for mode in proven.modes):
+        found.append("a mode is flat within the noise of the integration grid")
+    return tuple(found)

@@ -1,0 +1,50 @@
+"""Normal modes from a Hessian: wavenumbers and infrared intensities, double-harmonic."""
+
+from collections.abc import Sequence
+
+import numpy as np
+
+from shapeshelf.calculation.minimising import rigid_motions
+from shapeshelf.calculation.model import Mode
+from shapeshelf.calculation.units import (
+    DALTON_ELECTRON_MASSES,
+    INTENSITY_KM_MOL,
+    WAVENUMBER_PER_ROOT,
+)
+from shapeshelf.geometry.vectors import Array
+from shapeshelf.reference.elements import ELEMENTS
+
+
+def vibrations(
+    elements: Sequence[str], coordinates: Array, hessian: Array, dipole_derivatives: Array
+) -> tuple[tuple[Mode, ...], Array]:
+    """Return the modes, lowest first, and their Cartesian displacements (modes, n, 3).
+
+    ``coordinates`` (n, 3), ``hessian`` (3n, 3n) and ``dipole_derivatives`` (3n, 3) in atomic
+    units; translations and rotations are projected out. Standard atomic weights.
+    """
+    weights = 1 / np.sqrt(np.repeat(masses(elements), 3))
+    weighted = hessian * np.outer(weights, weights)
+    basis = _internal_basis(elements, coordinates)
+    values, inner = np.linalg.eigh(basis.T @ ((weighted + weighted.T) / 2) @ basis)
+    vectors = basis @ inner
+    moves = (vectors * weights[:, None]).T
+    wavenumbers = np.sign(values) * np.sqrt(np.abs(values)) * WAVENUMBER_PER_ROOT
+    strengths = ((moves @ dipole_derivatives) ** 2).sum(axis=1) * INTENSITY_KM_MOL
+    modes = tuple(Mode(float(w), float(s)) for w, s in zip(wavenumbers, strengths, strict=True))
+    return modes, moves.reshape(len(modes), -1, 3)
+
+
+def masses(elements: Sequence[str]) -> Array:
+    """Return the standard atomic masses (n,) in electron masses."""
+    return np.array([ELEMENTS[symbol].atomic_weight for symbol in elements]) * (
+        DALTON_ELECTRON_MASSES
+    )
+
+
+def _internal_basis(elements: Sequence[str], coordinates: Array) -> Array:
+    """Return orthonormal mass-weighted motions (3n, m) other than translation and rotation."""
+    roots = np.repeat(np.sqrt(masses(elements)), 3)
+    rigid = rigid_motions(coordinates) * roots
+    left, _, _ = np.linalg.svd(rigid.T, full_matrices=True)
+    return np.asarray(left[:, len(rigid) :])
