@@ -82,7 +82,7 @@ function listen(page) {
   addEventListener("popstate", () => restore(page));
 }
 
-/** Read what stands in the fields, keep it in the address, draw. */
+/** Read what stands in the fields and answer; the address follows with the next frame. */
 function changed(page) {
   const asked = {};
   for (const key of RANGE_KEYS) {
@@ -96,7 +96,6 @@ function changed(page) {
     columns: chosenColumns(page),
     sort: page.state.sort,
   };
-  keep(page);
   draw(page);
 }
 
@@ -116,6 +115,7 @@ function draw(page) {
   answer(page);
   page.frame ??= requestAnimationFrame(() => {
     page.frame = null;
+    keep(page);
     drawNow(page);
   });
 }
