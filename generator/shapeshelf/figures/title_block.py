@@ -94,7 +94,8 @@ def _row(label: str, text: str, x: float, y: float, height: float) -> list[Mark]
 
 def _wrapped(text: str) -> list[str]:
     """Return the text in lines, each broken at the last space that fits."""
-    lines, rest = [], text.split(" ")
+    lines: list[str] = []
+    rest = text.split(" ")
     while rest and len(lines) < _MOST_LINES - 1:
         count = len(rest)
         while count > 1 and text_width(" ".join(rest[:count]), _SMALLEST_TEXT) > _ROOM:
