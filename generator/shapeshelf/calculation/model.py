@@ -85,6 +85,7 @@ class PlacementResult:
 class ConformerResult:
     """What GFN2-xTB says of the conformers of a flexible molecule."""
 
+    level: Level
     count: int
     """Distinct minima within the energy window."""
     window_kj_mol: float

@@ -59,9 +59,8 @@ def _centre_report(
 def _shape(
     analysis: Analysis, centre: Centre, deviation: ShapeDeviation | None
 ) -> tuple[str | None, str | None]:
-    """Return shape and symbol: the model's, or the nearest polyhedron to supplied coordinates."""
-    supplied = analysis.structure.basis is StructureBasis.SUPPLIED
-    if centre.shape is not None or not supplied:
+    """Return shape and symbol: the model's, or the polyhedron nearest to other coordinates."""
+    if centre.shape is not None or analysis.structure.basis is StructureBasis.MODEL:
         return centre.shape, centre.polyhedral_symbol
     if deviation is None or not deviation.measures:
         return None, None

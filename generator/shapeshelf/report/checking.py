@@ -24,7 +24,7 @@ def report_on_catalogue(root: Path) -> tuple[Catalogue, tuple[CompoundReport, ..
     catalogue, problems = read_catalogue_with_problems(root)
     reports = []
     for entry in catalogue.entries:
-        found = _report_or_problems(entry)
+        found = _report_or_problems(entry, catalogue.root)
         if isinstance(found, CompoundReport):
             reports.append(found)
         else:
@@ -40,9 +40,9 @@ def _new(found: list[Problem], known: list[Problem]) -> list[Problem]:
     return [item for item in found if (item.file, item.line, item.field) not in said]
 
 
-def _report_or_problems(entry: Entry) -> CompoundReport | list[Problem]:
+def _report_or_problems(entry: Entry, root: Path) -> CompoundReport | list[Problem]:
     try:
-        report = report_on_entry(entry)
+        report = report_on_entry(entry, root)
     except (StructureError, AnalysisError) as error:
         return [problem_at(entry, "structure", str(error))]
     problems = _formula_problems(entry, report) + _label_problems(entry, report)

@@ -3,6 +3,7 @@
 from dataclasses import dataclass
 from enum import StrEnum
 
+from shapeshelf.calculation.model import CalculationRecord
 from shapeshelf.catalogue.model import Entry, Measurement
 from shapeshelf.domains.model import Centre, LewisCount
 from shapeshelf.geometry.model import ShapeDeviation, Structure, Symmetry
@@ -151,3 +152,5 @@ class CompoundReport:
     """Measured values whose label fits nothing in the structure."""
     frequencies: CalculatedVibrations | None = None
     """``None`` where no calculation of them is on record."""
+    calculation: CalculationRecord | None = None
+    """The record that counts for the structure, a failed one too."""

@@ -1,6 +1,7 @@
 """One number from several bases: measured before calculated before supplied before model."""
 
 from collections.abc import Iterable
+from dataclasses import replace
 
 from shapeshelf.catalogue.model import Measurement
 from shapeshelf.geometry.model import Structure, StructureBasis
@@ -48,6 +49,16 @@ def best_value(
         source=source,
         measurement=measurement,
         supplied=supplied,
+    )
+
+
+def with_calculated(value: Value, calculated: float, half_width: float, method: str) -> Value:
+    """Return ``value`` with a calculated one beside the others; it is the best but a measured."""
+    beside = replace(value, calculated=calculated, calculated_uncertainty=half_width)
+    if value.basis is Basis.MEASURED:
+        return beside
+    return replace(
+        beside, value=calculated, uncertainty=half_width, basis=Basis.CALCULATED, source=method
     )
 
 

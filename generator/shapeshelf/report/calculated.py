@@ -1,0 +1,119 @@
+"""What a record of quantum chemistry adds to a report: a structure, angles, lengths, a moment.
+
+K1  Rows of angles and bonds stay those of the model, so that labels do not depend on whether a
+    record is there; a calculated value is the mean over the members of its row.
+K2  The structure, its point group and what follows from it are the calculated ones: a record
+    counts only where it is a proven minimum of the structure as it is drawn now.
+"""
+
+from collections.abc import Callable, Mapping, Sequence
+from dataclasses import dataclass, replace
+
+import numpy as np
+
+from shapeshelf.calculation.accuracy import ACCURACY, Accuracy
+from shapeshelf.calculation.mapping import laid_onto
+from shapeshelf.calculation.model import CalculationRecord
+from shapeshelf.geometry.model import Structure, StructureBasis, Symmetry
+from shapeshelf.geometry.symmetry import find_symmetry
+from shapeshelf.geometry.vectors import angle_degrees, distance
+from shapeshelf.report.model import (
+    Analysis,
+    AngleRow,
+    Band,
+    CalculatedVibrations,
+    LengthRow,
+    Value,
+)
+from shapeshelf.report.values import with_calculated
+from shapeshelf.structure.molecule import Vector
+
+SYMMETRY_TOLERANCE_ANGSTROM = 0.02
+"""Above what an optimisation leaves, far below a distortion worth a page."""
+
+
+@dataclass(frozen=True, slots=True)
+class Calculated:
+    """A record laid onto the molecule as it is drawn."""
+
+    record: CalculationRecord
+    structure: Structure
+    symmetry: Symmetry
+    accuracy: Accuracy
+
+
+def calculated_of(model: Analysis, record: CalculationRecord) -> Calculated:
+    """Return ``record`` in the order and frame of ``model``."""
+    recorded = np.array(record.coordinates_angstrom)
+    fixed = np.array(model.structure.coordinates_angstrom)
+    rows = laid_onto(model.molecule, recorded, fixed).tolist()
+    points = tuple((x, y, z) for x, y, z in rows)
+    elements = [atom.element for atom in model.molecule.atoms]
+    return Calculated(
+        record,
+        Structure(points, StructureBasis.CALCULATED, f"optimised with {record.method}"),
+        find_symmetry(elements, points, SYMMETRY_TOLERANCE_ANGSTROM),
+        ACCURACY[record.level],
+    )
+
+
+def with_calculated_angles(
+    rows: Mapping[int, tuple[AngleRow, ...]], found: Calculated
+) -> dict[int, tuple[AngleRow, ...]]:
+    """Return the rows of each centre with calculated angles beside the others (K1)."""
+    return {
+        centre: tuple(
+            replace(
+                row,
+                degrees=_merged(
+                    row.degrees, row.members, found, angle_degrees, found.accuracy.angle_degrees
+                ),
+            )
+            for row in own
+        )
+        for centre, own in rows.items()
+    }
+
+
+def with_calculated_lengths(rows: Sequence[LengthRow], found: Calculated) -> tuple[LengthRow, ...]:
+    """Return the rows of bonds with calculated lengths beside the others (K1)."""
+    return tuple(
+        replace(
+            row,
+            angstrom=_merged(
+                row.angstrom, row.members, found, distance, found.accuracy.length_angstrom
+            ),
+        )
+        for row in rows
+    )
+
+
+def with_calculated_moment(value: Value, found: Calculated) -> Value:
+    """Return a dipole moment with the calculated one, of a flexible molecule the averaged one."""
+    record = found.record
+    if record.dipole_debye is None:
+        return value
+    moment = float(np.linalg.norm(record.dipole_debye))
+    if record.conformers is not None and record.level is record.conformers.level:
+        moment = record.conformers.mean_dipole_debye
+    return with_calculated(value, moment, found.accuracy.dipole_debye, record.method)
+
+
+def vibrations_of(record: CalculationRecord) -> CalculatedVibrations | None:
+    """Return the vibrations of a record as a page shows them."""
+    if not record.modes:
+        return None
+    bands = tuple(Band(mode.wavenumber_per_cm, mode.intensity_km_per_mol) for mode in record.modes)
+    return CalculatedVibrations(record.method, bands)
+
+
+def _merged(
+    value: Value,
+    members: Sequence[tuple[int, ...]],
+    found: Calculated,
+    measure: Callable[..., float],
+    half_width: float,
+) -> Value:
+    points: Sequence[Vector] = found.structure.coordinates_angstrom
+    mean = sum(measure(*(points[atom] for atom in one)) for one in members) / len(members)
+    return with_calculated(value, mean, half_width, found.record.method)
