@@ -1,6 +1,7 @@
 """The recipe: from a molecule to a finished record.
 
-C1  Starts come from the domain model (starting.py).
+C1  Starts come from the domain model (starting.py); of a flexible molecule at GFN2-xTB level, from
+    its lowest conformer (conformers.py).
 C2  Every start is optimised roughly; the lowest goes on (methods.py says how, for each level).
 C3  It is optimised finely.
 C4  Second derivatives there give wavenumbers and infrared intensities, and prove the minimum; an
@@ -14,6 +15,7 @@ from dataclasses import dataclass, replace
 
 import numpy as np
 
+from shapeshelf.calculation.conformers import averaged, conformers_of
 from shapeshelf.calculation.engines import engine_versions
 from shapeshelf.calculation.failing import UnusableError
 from shapeshelf.calculation.judging import check_bonds, check_spin, check_system, imaginary
@@ -42,7 +44,8 @@ Told = Callable[[str], None]
 """Receives the name of each stage as it begins."""
 
 MOST_DESCENTS = 3
-DESCENT_BOHR = 0.3
+DESCENT_BOHR, DESCENT_GROWTH = 0.3, 3.0
+"""A short way down a steep mode; a long one where a shallow saddle held the optimisation."""
 SYMMETRY_TOLERANCE_ANGSTROM = 0.02
 """Above what optimising leaves of the shaking, far below a distortion worth a page."""
 
@@ -93,7 +96,12 @@ def _calculated(
     told: Told,
 ) -> CalculationRecord:
     method = method_for(record.level, system)
-    rough, placements = _lowest(method, molecule, system, starts, told)
+    told("conformers")
+    conformers = conformers_of(molecule, system, starts[0].coordinates)
+    if conformers and record.level is Level.XTB:
+        rough, placements = conformers[0].minimum, ()
+    else:
+        rough, placements = _lowest(method, molecule, system, starts, told)
     proven = _proven(method, system, rough, told)
     place = _centred(system, proven.minimum.coordinates)
     check_bonds(molecule, starts[0].coordinates, place)
@@ -109,6 +117,7 @@ def _calculated(
         spin_squared=method.spin_squared(),
         point_group=_point_group(system, place),
         placements=placements,
+        conformers=averaged(conformers),
         warnings=_warnings(proven),
     )
 
@@ -141,13 +150,13 @@ def _proven(method: Method, system: System, rough: Minimum, told: Told) -> Prove
         modes, moves = vibrations(system.elements, fine.coordinates, hessian, slopes)
         if not imaginary(modes):
             return Proven(fine, modes, descents)
-        place = fine.coordinates + _downhill(moves[0])
+        place = fine.coordinates + _downhill(moves[0], descents)
     raise UnusableError(Outcome.NO_MINIMUM, f"{MOST_DESCENTS + 1} saddles in a row")
 
 
-def _downhill(move: Array) -> Array:
-    """Return a displacement (n, 3) in bohr along an imaginary mode."""
-    return np.asarray(move * DESCENT_BOHR / np.linalg.norm(move))
+def _downhill(move: Array, descents: int) -> Array:
+    """Return a displacement (n, 3) in bohr along an imaginary mode, longer at every descent."""
+    return np.asarray(move * DESCENT_BOHR * DESCENT_GROWTH**descents / np.linalg.norm(move))
 
 
 def _centred(system: System, place: Array) -> Array:
