@@ -2,12 +2,8 @@
 
 import pytest
 
-from shapeshelf.domains.analysis import analyse
-from shapeshelf.geometry.assembly import assemble
-from shapeshelf.geometry.symmetry import find_symmetry
 from shapeshelf.properties.modes import mode_species
 from shapeshelf.properties.spectra import expect_spectra
-from shapeshelf.structure.reading import read_smiles
 
 NAKAMOTO = """K. Nakamoto, Infrared and Raman Spectra of Inorganic and Coordination Compounds,
 Part A, 6th ed. (2009), ISBN 978-0-471-74339-2, recalled from memory; benzene, ethylene, allene,
@@ -54,17 +50,8 @@ ACTIVE_STRETCHES = [
 ]
 
 
-def worked_out(smiles):
-    molecule = read_smiles(smiles)
-    lewis, centres = analyse(molecule)
-    structure = assemble(molecule, lewis, centres)
-    elements = [atom.element for atom in molecule.atoms]
-    symmetry = find_symmetry(elements, structure.coordinates_angstrom)
-    return molecule, lewis, centres, symmetry
-
-
 @pytest.mark.parametrize(("smiles", "group", "published"), PUBLISHED)
-def test_species_of_the_normal_modes(smiles, group, published):
+def test_species_of_the_normal_modes(smiles, group, published, worked_out):
     """Every species occurs as often as published (NAKAMOTO)."""
     molecule, _, _, symmetry = worked_out(smiles)
     found = {mode.species: mode.count for mode in mode_species(molecule, symmetry)}
@@ -73,7 +60,7 @@ def test_species_of_the_normal_modes(smiles, group, published):
 
 
 @pytest.mark.parametrize(("smiles", "group", "published"), PUBLISHED)
-def test_all_degrees_of_freedom_are_spent(smiles, group, published):
+def test_all_degrees_of_freedom_are_spent(smiles, group, published, worked_out):
     """3N - 6 vibrations, 3N - 5 of a linear molecule."""
     molecule, _, _, symmetry = worked_out(smiles)
     modes = mode_species(molecule, symmetry)
@@ -82,19 +69,19 @@ def test_all_degrees_of_freedom_are_spent(smiles, group, published):
 
 
 @pytest.mark.parametrize(("smiles", "infrared", "raman"), ACTIVE_STRETCHES)
-def test_active_stretches(smiles, infrared, raman):
+def test_active_stretches(smiles, infrared, raman, worked_out):
     """Stretching modes that infrared and Raman spectra show (NAKAMOTO)."""
     spectra = expect_spectra(*worked_out(smiles))
     assert (spectra.infrared_stretches, spectra.raman_stretches) == (infrared, raman)
 
 
 @pytest.mark.parametrize("smiles", ["O=C=O", "C#C", "F/N=N/F", "FS(F)(F)(F)(F)F", "c1ccccc1"])
-def test_mutual_exclusion(smiles):
+def test_mutual_exclusion(smiles, worked_out):
     """With a centre of inversion no band is both infrared- and Raman-active."""
     assert expect_spectra(*worked_out(smiles)).coincidences == 0
 
 
-def test_isomers_are_told_apart_by_infrared_stretches():
+def test_isomers_are_told_apart_by_infrared_stretches(worked_out):
     """trans-N2F2 hides its symmetric stretches from the infrared, cis-N2F2 shows all three."""
     trans = expect_spectra(*worked_out("F/N=N/F"))
     cis = expect_spectra(*worked_out("F/N=N\\F"))
@@ -113,6 +100,6 @@ def test_isomers_are_told_apart_by_infrared_stretches():
         ("FN=O", ("a", "b")),
     ],
 )
-def test_microwave_axes(smiles, axes):
+def test_microwave_axes(smiles, axes, worked_out):
     """Components of the dipole moment along the inertial axes, by symmetry."""
     assert expect_spectra(*worked_out(smiles)).microwave_axes == axes

@@ -2,12 +2,8 @@
 
 import pytest
 
-from shapeshelf.domains.analysis import analyse
-from shapeshelf.geometry.assembly import assemble
-from shapeshelf.geometry.symmetry import find_symmetry
 from shapeshelf.properties.nmr import nmr_signals
 from shapeshelf.properties.spectra import expect_spectra
-from shapeshelf.structure.reading import read_smiles
 
 GUENTHER = """H. Guenther, NMR Spectroscopy, 2nd ed. (1995); inorganic fluorides: E. L. Muetterties
 and W. D. Phillips, J. Am. Chem. Soc. 79 (1957) 322 and 81 (1959) 1084; all recalled from memory."""
@@ -34,19 +30,10 @@ PUBLISHED = [
 ]
 
 
-def signals_of(smiles):
-    molecule = read_smiles(smiles)
-    lewis, centres = analyse(molecule)
-    structure = assemble(molecule, lewis, centres)
-    elements = [atom.element for atom in molecule.atoms]
-    symmetry = find_symmetry(elements, structure.coordinates_angstrom)
-    return molecule, lewis, centres, symmetry
-
-
 @pytest.mark.parametrize(("smiles", "nucleus", "published"), PUBLISHED)
-def test_signals_areas_and_patterns(smiles, nucleus, published):
+def test_signals_areas_and_patterns(smiles, nucleus, published, worked_out):
     """Sets, relative areas and first-order patterns as published (GUENTHER)."""
-    found = [s for s in nmr_signals(*signals_of(smiles)) if s.nucleus == nucleus]
+    found = [s for s in nmr_signals(*worked_out(smiles)) if s.nucleus == nucleus]
     areas = sorted(len(signal.atoms) for signal in found)
     assert areas == sorted(area for area, _ in published)
     for area, pattern in published:
@@ -54,19 +41,19 @@ def test_signals_areas_and_patterns(smiles, nucleus, published):
             assert any(s.multiplicity == pattern for s in found if len(s.atoms) == area)
 
 
-def test_rings_on_a_phosphine_show_three_proton_signals():
+def test_rings_on_a_phosphine_show_three_proton_signals(worked_out):
     """Ortho, meta and para of triphenylphosphine: 6, 6 and 3 (common practice, no source)."""
-    signals = nmr_signals(*signals_of("c1ccccc1P(c1ccccc1)c1ccccc1"))
+    signals = nmr_signals(*worked_out("c1ccccc1P(c1ccccc1)c1ccccc1"))
     assert sorted(len(s.atoms) for s in signals if s.nucleus == "1H") == [3, 6, 6]
 
 
 @pytest.mark.parametrize("smiles", ["FP(F)(F)(F)F", "FS(F)(F)F"])
-def test_fluxional_molecules_say_so(smiles):
+def test_fluxional_molecules_say_so(smiles, worked_out):
     """PF5 and SF4 exchange sites: a warm sample shows fewer signals (GUENTHER)."""
-    note = expect_spectra(*signals_of(smiles)).fluxional_note
+    note = expect_spectra(*worked_out(smiles)).fluxional_note
     assert note is not None
     assert "averaged" in note
 
 
-def test_rigid_molecule_has_no_such_note():
-    assert expect_spectra(*signals_of("FB(F)F")).fluxional_note is None
+def test_rigid_molecule_has_no_such_note(worked_out):
+    assert expect_spectra(*worked_out("FB(F)F")).fluxional_note is None
