@@ -113,14 +113,18 @@ def _serve(options: argparse.Namespace) -> int:
 def _check(options: argparse.Namespace) -> int:
     from shapeshelf.linking.releasing import present_values
     from shapeshelf.linking.telling import withdrawn_lines
-    from shapeshelf.report.checking import report_on_catalogue
+    from shapeshelf.report.checking import record_notes, report_on_catalogue
 
     catalogue, reports = report_on_catalogue(options.catalogue)
     present = present_values(catalogue, reports)
+    notes = record_notes(catalogue, reports)
     if options.json:
         withdrawn = sorted(present.published.withdrawn)
-        _print_json({"problems": [], "compounds": len(reports), "withdrawn": withdrawn})
+        _print_json(
+            {"problems": [], "compounds": len(reports), "withdrawn": withdrawn, "records": notes}
+        )
     else:
+        print(*notes, sep="\n", end="\n" if notes else "")
         print(*withdrawn_lines(present), sep="\n", end="\n" if present.published.withdrawn else "")
         print(f"{len(reports)} compounds, {len(catalogue.sources)} sources: no problems")
     return FINE

@@ -25,7 +25,9 @@ Surface = Callable[[Array], tuple[float, Array]]
 LEAST_CURVATURE = 0.02
 """Smallest eigenvalue (hartree/bohr²) a first Hessian is given: turns a saddle's or a free
 motion's direction into one that is walked down in moderate steps."""
-FIRST_TRUST, MOST_TRUST, LEAST_TRUST = 0.3, 0.6, 0.002
+FIRST_TRUST, MOST_TRUST, LEAST_TRUST = 0.3, 0.6, 1e-4
+MOST_REFUSED = 8
+"""Steps taken back in a row: there is no way further down that the gradient knows of."""
 POOR, GOOD = 0.25, 0.75
 RIGID_RATIO = 0.03
 """A rotation whose weight relative to the largest is below this is none: the atoms lie on a line
@@ -64,15 +66,17 @@ def minimise(surface: Surface, start: Array, hessian: Array, tolerances: Toleran
     surface = _held(surface)
     energy, gradient = surface(start)
     place = Minimum(start, energy, gradient, positive(hessian), 0, False)
-    trust = FIRST_TRUST
+    trust, refused = FIRST_TRUST, 0
     while place.steps < tolerances.most_steps:
         step = _step(place, trust)
         if _done(place, step, tolerances):
             return replace(place, converged=True)
+        before = place
         place, trust = _advanced(surface, place, step, trust)
-        if trust < LEAST_TRUST:
+        refused = refused + 1 if place.coordinates is before.coordinates else 0
+        if refused == MOST_REFUSED:
             break
-    return place
+    return replace(place, converged=_flat(place, tolerances))
 
 
 def positive(hessian: Array) -> Array:
@@ -115,8 +119,11 @@ def _step(place: Minimum, trust: float) -> Array:
 
 
 def _done(place: Minimum, step: Array, tolerances: Tolerances) -> bool:
-    flat = float(np.abs(place.gradient).max()) <= tolerances.gradient
-    return flat and float(np.abs(step).max()) <= tolerances.step
+    return _flat(place, tolerances) and float(np.abs(step).max()) <= tolerances.step
+
+
+def _flat(place: Minimum, tolerances: Tolerances) -> bool:
+    return float(np.abs(place.gradient).max()) <= tolerances.gradient
 
 
 def _advanced(surface: Surface, place: Minimum, step: Array, trust: float) -> tuple[Minimum, float]:
@@ -129,10 +136,10 @@ def _advanced(surface: Surface, place: Minimum, step: Array, trust: float) -> tu
     length = float(np.linalg.norm(step))
     steps = place.steps + 1
     if change > max(ENERGY_NOISE, 0.5 * abs(predicted)):
-        return replace(place, hessian=hessian, steps=steps), length / 3
+        return replace(place, hessian=hessian, steps=steps), max(length / 3, LEAST_TRUST)
     ratio = change / predicted if abs(predicted) > ENERGY_NOISE else 1.0
     if ratio < POOR:
-        trust = max(length / 2, 2 * LEAST_TRUST)
+        trust = max(length / 2, LEAST_TRUST)
     elif ratio > GOOD and length > 0.8 * trust:
         trust = min(2 * trust, MOST_TRUST)
     return Minimum(there, energy, gradient, hessian, steps, False), trust

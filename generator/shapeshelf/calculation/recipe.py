@@ -98,8 +98,9 @@ def _calculated(
     method = method_for(record.level, system)
     told("conformers")
     conformers = conformers_of(molecule, system, starts[0].coordinates)
+    placements: tuple[PlacementResult, ...] = ()
     if conformers and record.level is Level.XTB:
-        rough, placements = conformers[0].minimum, ()
+        rough = conformers[0].minimum
     else:
         rough, placements = _lowest(method, molecule, system, starts, told)
     proven = _proven(method, system, rough, told)

@@ -34,6 +34,7 @@ ROUNDED = {
     "most_dipole_debye": 3,
 }
 """Decimals of each number, by its field."""
+NOT_IN_JSON = ("key", "elements", "coordinates_angstrom", "dipole_debye")
 RECORD = TypeAdapter(CalculationRecord)
 
 
@@ -81,6 +82,12 @@ def rounded_record(record: CalculationRecord) -> CalculationRecord:
     held = json.loads(record_text(record))
     held.pop("schema")
     return RECORD.validate_python(held)
+
+
+def record_json(record: CalculationRecord) -> dict[str, Any]:
+    """Return what scripts may want of a record; the geometry stands among the compound's atoms."""
+    held = _rounded(asdict(record))
+    return {name: value for name, value in held.items() if name not in NOT_IN_JSON}
 
 
 def record_text(record: CalculationRecord) -> str:

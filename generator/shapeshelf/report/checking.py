@@ -4,9 +4,11 @@ The catalogue room finds what is wrong in the text; here structures are read, fo
 against them and measured labels against the angles and bonds that exist.
 """
 
+from collections.abc import Sequence
 from difflib import get_close_matches
 from pathlib import Path
 
+from shapeshelf.calculation.states import State, standing_of
 from shapeshelf.catalogue.model import Catalogue, Entry, Measurement, Quantity
 from shapeshelf.catalogue.problems import problem_at
 from shapeshelf.catalogue.reading import read_catalogue_with_problems
@@ -14,6 +16,13 @@ from shapeshelf.errors import AnalysisError, CatalogueError, Problem, StructureE
 from shapeshelf.report.building import report_on_entry
 from shapeshelf.report.model import CompoundReport
 from shapeshelf.structure.formulas import formulas_agree
+
+MOST_NAMED = 12
+RECORD_WORDS = {
+    State.BROKEN: "with a file that is no record",
+    State.STALE: "whose record belongs to another structure",
+    State.MISSING: "without calculated values",
+}
 
 
 def report_on_catalogue(root: Path) -> tuple[Catalogue, tuple[CompoundReport, ...]]:
@@ -32,6 +41,27 @@ def report_on_catalogue(root: Path) -> tuple[Catalogue, tuple[CompoundReport, ..
     if problems:
         raise CatalogueError(tuple(problems))
     return catalogue, tuple(reports)
+
+
+def record_notes(catalogue: Catalogue, reports: Sequence[CompoundReport]) -> list[str]:
+    """Return a line for each kind of record that does not count, with the command that helps."""
+    found: dict[State, list[str]] = {}
+    for report in reports:
+        if report.id is not None:
+            standing = standing_of(
+                catalogue.root, report.id, report.molecule, report.lewis.multiplicity
+            )
+            found.setdefault(standing.state, []).append(report.id)
+    return [
+        f"{len(found[state])} {words}: shapeshelf compute {_named(found[state])}".rstrip()
+        for state, words in RECORD_WORDS.items()
+        if state in found
+    ]
+
+
+def _named(ids: Sequence[str]) -> str:
+    """Return the ids to put on a command line; none where all of them would be too many."""
+    return " ".join(ids) if len(ids) <= MOST_NAMED else ""
 
 
 def _new(found: list[Problem], known: list[Problem]) -> list[Problem]:

@@ -5,6 +5,7 @@ Angles in degrees to 0.01, lengths in ångström to 0.0001, dipole moments in de
 
 from typing import Any
 
+from shapeshelf.calculation.records import record_json
 from shapeshelf.catalogue.model import Entry
 from shapeshelf.properties.model import ExpectedSpectra
 from shapeshelf.report.model import AngleRow, CentreReport, CompoundReport, LengthRow, Value
@@ -46,6 +47,7 @@ def report_json(report: CompoundReport) -> Json:
             "basis": report.structure.basis.value,
             "method": report.structure.method,
         },
+        "calculation": record_json(report.calculation) if report.calculation else None,
         "molar_mass": round(report.molar_mass_g_mol, 3),
         "topological_polar_surface_area": _rounded(report.topological_polar_surface_area, 2),
         "crippen_log_p": _rounded(report.crippen_log_p, 2),
