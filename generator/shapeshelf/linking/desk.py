@@ -2,7 +2,7 @@
 
 * D1  no measured value at all
 * D2  a measured and a calculated value further apart than both ± together
-* D3  no calculated value
+* D3  no record of a calculation that counts: missing, stale, failed or broken
 * D4  every measured value set down from memory of its source
 * D5  a group known for hazard in the structure, and no H-code
 * D6  used in no protocol, and linked to by none
@@ -14,6 +14,7 @@ from collections import defaultdict
 from collections.abc import Callable, Iterator, Sequence
 from dataclasses import dataclass
 
+from shapeshelf.calculation.states import State, standing_of
 from shapeshelf.catalogue.model import Entry, SourceKind
 from shapeshelf.catalogue.problems import line_of
 from shapeshelf.linking.citing import Checked
@@ -28,6 +29,12 @@ Entries = Sequence[tuple[Entry, CompoundReport]]
 Rule = Callable[[Entry, CompoundReport], Iterator[tuple[str, str]]]
 """Yields field and message of each point about one entry."""
 
+RECORD_WORDS = {
+    State.MISSING: "no calculation is on record",
+    State.STALE: "the calculation on record is of an earlier structure",
+    State.FAILED: "the calculation on record found no minimum",
+    State.BROKEN: "the file on record is no calculation",
+}
 UNSTATED = {"angle": 0.1, "length": 0.001, "dipole": 0.01, "frequency": 1.0}
 """Taken for a ± that is not stated: one in the last digit usually given (common practice, no
 source)."""
@@ -70,7 +77,7 @@ def desk_sections(present: Present, protocols: Sequence[Checked]) -> tuple[DeskS
          made.each(entries, made.quarrels)),
         ("duplicates", "One structure twice", made.duplicates(entries)),
         ("not-measured", "No measured value", made.each(entries, made.not_measured)),
-        ("not-calculated", "No calculated value", made.each(entries, made.not_calculated)),
+        ("not-calculated", "No calculation that counts", made.each(entries, made.not_calculated)),
         ("recalled", "Sources only recalled", made.each(entries, made.only_recalled)),
         ("unused", "Used in no protocol", made.each(entries, made.unused(cited))),
     )  # fmt: skip
@@ -92,10 +99,11 @@ class _Maker:
         if not entry.measured:
             yield "measured", "nothing measured is given"
 
-    def not_calculated(self, entry: Entry, _: CompoundReport) -> Iterator[tuple[str, str]]:
-        values = self._present.published.compounds[entry.id].values.values()
-        if all(value.calculated is None for value in values if value.quantity != "frequency"):
-            yield "structure", "no calculation is on record"
+    def not_calculated(self, entry: Entry, report: CompoundReport) -> Iterator[tuple[str, str]]:
+        root, spin = self._present.catalogue.root, report.lewis.multiplicity
+        state = standing_of(root, entry.id, report.molecule, spin).state
+        if state is not State.FRESH:
+            yield "structure", RECORD_WORDS[state]
 
     def quarrels(self, entry: Entry, _: CompoundReport) -> Iterator[tuple[str, str]]:
         for value in self._present.published.compounds[entry.id].values.values():
