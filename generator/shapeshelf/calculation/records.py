@@ -12,7 +12,7 @@ from dataclasses import asdict
 from pathlib import Path
 from typing import Any
 
-from pydantic import TypeAdapter, ValidationError
+from pydantic import TypeAdapter
 
 from shapeshelf.calculation.model import CalculationRecord
 from shapeshelf.errors import CalculationError
@@ -73,7 +73,7 @@ def read_record(path: Path) -> CalculationRecord | None:
         if held.pop("schema") != SCHEMA:
             raise CalculationError(str(path), f"not a record of schema {SCHEMA}; compute it again")
         return RECORD.validate_python(held)
-    except (ValueError, KeyError, AttributeError, ValidationError) as error:
+    except (ValueError, KeyError, TypeError, AttributeError) as error:
         raise CalculationError(str(path), "not a record; compute it again") from error
 
 
