@@ -24,7 +24,7 @@ def run_on_cluster(jobs: Sequence[Job], address: str, staged: Staged) -> Iterato
     from distributed import Client, as_completed  # an extra: loaded only when asked for
 
     try:
-        client = Client(address, timeout=CONNECT_SECONDS, set_as_default=False)
+        client = Client(address, timeout=CONNECT_SECONDS)
     except (OSError, TimeoutError, ValueError) as error:
         raise CalculationError(address, "no scheduler answers there") from error
     with client:

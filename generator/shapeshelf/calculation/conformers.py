@@ -34,7 +34,7 @@ TEMPERATURE_KELVIN = 298.15
 WINDOW_KJ_MOL = 15.0
 """Higher conformers weigh less than 0.3 % each."""
 SAME_KJ_MOL, SAME_DEBYE = 0.1, 0.02
-TOLERANCES = Tolerances(gradient=2e-4, step=5e-3, most_steps=300)
+TOLERANCES = Tolerances(gradient=5e-5, step=2e-3, most_steps=300)
 SEED = 20050
 PER_TURN, MOST, MOST_OF_LARGE, LARGE = 6, 24, 8, 30
 SYMMETRY_TOLERANCE_ANGSTROM = 0.05

@@ -57,13 +57,13 @@ def solver_of(
     from pyscf import dft, lib, scf  # an extra: loaded only when asked for
 
     lib.num_threads(1)
+    scf.hf.MUTE_CHKFILE = True  # it would leave a temporary file open
     molecule = _molecule(system, treatment.basis, coordinates)
     kind = dft.RKS if system.multiplicity == 1 else dft.UKS
     field = kind(molecule, xc=FUNCTIONAL).density_fit()
     field.grids.level = treatment.grid
     field.conv_tol = ENERGY_TOLERANCE
     field.max_cycle = MOST_CYCLES
-    field.chkfile = None
     solver = Solver(field)
     if earlier is not None and earlier.field.mo_coeff is not None:
         project = scf.addons.project_dm_nr2nr
