@@ -1,6 +1,9 @@
 """How far each method is from measurement: 68 % half-widths of the residuals.
 
-Measured by ``tests/benchmarks/accuracy_of_methods.py`` against the tables in ``tests/data/``.
+GFN2-xTB's angles and dipole moments are measured by ``tests/benchmarks/accuracy_of_methods.py``
+against the tables in ``tests/data/``, molecules of at most eight atoms. The half-widths of both
+density-functional levels, and all those of lengths, are provisional: estimates set before enough
+molecules were run, to be replaced by measured ones before a record is released.
 Angles and dipole moments in degrees and debye; lengths in ångström.
 """
 
@@ -21,5 +24,5 @@ class Accuracy:
 ACCURACY = {
     Level.DFT: Accuracy(0.5, 0.01, 0.06),
     Level.DFT_SMALL: Accuracy(1.0, 0.02, 0.15),
-    Level.XTB: Accuracy(2.5, 0.03, 0.7),
+    Level.XTB: Accuracy(2.8, 0.03, 0.58),
 }

@@ -10,6 +10,7 @@ import os
 import signal
 import threading
 from collections.abc import Callable, Iterator, Sequence
+from contextlib import contextmanager
 from multiprocessing.connection import Connection, wait
 from multiprocessing.context import SpawnProcess
 from typing import Any
@@ -59,9 +60,23 @@ def _started(job: Job) -> tuple[Connection, tuple[Job, SpawnProcess]]:
     context = multiprocessing.get_context("spawn")
     here, there = context.Pipe(duplex=False)
     process = context.Process(target=_work, args=(job, there), daemon=True)
-    process.start()
+    with _undisturbed():
+        process.start()
     there.close()
     return here, (job, process)
+
+
+@contextmanager
+def _undisturbed() -> Iterator[None]:
+    """Hold an interruption back until a child is whole; the child then never hears of it."""
+    if not hasattr(signal, "pthread_sigmask"):
+        yield
+        return
+    before = signal.pthread_sigmask(signal.SIG_BLOCK, {signal.SIGINT})
+    try:
+        yield
+    finally:
+        signal.pthread_sigmask(signal.SIG_SETMASK, before)
 
 
 def _heard(
