@@ -24,6 +24,8 @@ Indices = NDArray[np.int64]
 MOST_FOR_NEWTON = 18
 NEWTON_STEPS = 20
 LAST_STEPS = 400
+MOST_ATOM_STEPS = 30_000
+"""Atoms times steps: beyond some hundred atoms the last steps change little."""
 LAST_SLOPE = 5e-3
 NEWTON_SLOPE = 1e-3
 DIFFERENCE_ANGSTROM = 1e-4
@@ -95,7 +97,8 @@ def settled_down(terms: Terms, points: Array) -> tuple[Array, float]:
     """
     exactly = len(points) <= MOST_FOR_NEWTON
     slope = NEWTON_SLOPE if exactly else LAST_SLOPE
-    moved, found = minimised(terms, points[None], LAST_STEPS, slope)
+    steps = min(LAST_STEPS, MOST_ATOM_STEPS // len(points))
+    moved, found = minimised(terms, points[None], steps, slope)
     points, energy = moved[0], float(found[0])
     if not exactly:
         return points, energy

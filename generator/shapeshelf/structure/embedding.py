@@ -31,7 +31,7 @@ Relaxer = Callable[[CoordinatesLike], tuple[Coordinates, float]]
 MOST_STEPS = 2000
 MOST_ATOM_STEPS = 40_000
 """Of a relaxation: atoms times steps; beyond some hundred atoms the last steps change little."""
-FIRST_TRIES, MOST_TRIES = 10, 30
+FIRST_TRIES, MOST_TRIES = 5, 30
 """Starts for one conformer before the next way is tried; more for the last way."""
 MOST_FOR_ORDERLY_START = 80
 """Larger molecules seldom fold into their distances from an orderly start; random ones do."""
