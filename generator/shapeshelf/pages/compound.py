@@ -13,6 +13,7 @@ from shapeshelf.pages.addresses import (
     source_anchor,
 )
 from shapeshelf.pages.anchors import value_anchors
+from shapeshelf.pages.calculation import CalculationView, calculation_view
 from shapeshelf.pages.centres import AngleView, CentreView, angle_view, centre_views
 from shapeshelf.pages.history import Change
 from shapeshelf.pages.model import Standing
@@ -126,6 +127,7 @@ class CompoundView:
     unreleased: bool
     description: str
     """One plain sentence for search engines and previews."""
+    calculation: CalculationView | None = None
 
 
 def compound_view(
@@ -182,6 +184,7 @@ def compound_view(
         url=standing.page_url(compound_address(entry.id)),
         news=standing.news.get(entry.id, {}),
         unreleased=entry.id in standing.unreleased,
+        calculation=calculation_view(report.calculation),
     )
 
 
