@@ -23,6 +23,7 @@ PARTS = (
     "links.css",
     "print.css",
 )
+DARK_FACE = "blueprint.css"
 BELOW = "assets/stylesheets/main.*.min.css"
 
 
@@ -32,7 +33,7 @@ def stylesheet(theme_dirs: Sequence[Path]) -> str:
     The installed theme's own styles come first, in a cascade layer of their own, so that any
     rule of ours stands above any of theirs however specific it is.
     """
-    return "\n".join([_layered(theme_dirs), _figure_colours(), *_own(theme_dirs)])
+    return "\n".join([_layered(theme_dirs), _faces(theme_dirs), *_own(theme_dirs)])
 
 
 def _layered(theme_dirs: Sequence[Path]) -> str:
@@ -44,8 +45,11 @@ def _layered(theme_dirs: Sequence[Path]) -> str:
     return f"@layer installed{{{text}}}"
 
 
-def _figure_colours() -> str:
-    light, dark = css_variables(dark=False), css_variables(dark=True)
+def _faces(theme_dirs: Sequence[Path]) -> str:
+    """Return the colours of both faces: the figures' own, and what the dark one changes."""
+    light = css_variables(dark=False)
+    changed = _first(theme_dirs, DARK_FACE).read_text("utf-8").partition(":root {")[2]
+    dark = css_variables(dark=True) + changed.rpartition("}")[0]
     return (
         f":root{{{light}}}"
         f"@media screen and (prefers-color-scheme:dark){{:root:not([data-face=paper]){{{dark}}}}}"

@@ -19,6 +19,7 @@ from shapeshelf.pages.typesetting import (
 )
 from shapeshelf.pages.values import DEBYE, ValueView, citation, value_view
 from shapeshelf.report.labels import atom_labels
+from shapeshelf.properties.model import ExpectedSpectra
 from shapeshelf.report.model import CompoundReport
 
 _SYMBOL = re.compile(
@@ -96,17 +97,11 @@ class SymmetryView:
 
 @dataclass(frozen=True, slots=True)
 class SpectraView:
-    """What symmetry lets one expect."""
+    """What symmetry lets one expect, and what was measured and calculated of it."""
 
+    expected: ExpectedSpectra
     modes: tuple[ModeView, ...]
-    infrared_bands: int
-    raman_bands: int
-    coincidences: int
-    infrared_stretches: int
-    raman_stretches: int
-    microwave_axes: tuple[str, ...]
     nmr: tuple[NmrView, ...]
-    fluxional_note: str | None
     frequencies: tuple[FrequencyView, ...]
     method: str
     """Of the calculated vibrations, empty where there are none."""
@@ -177,16 +172,11 @@ def spectra_view(report: CompoundReport, sources: Mapping[str, Source]) -> Spect
     spectra = report.spectra
     labels = atom_labels(report.molecule)
     return SpectraView(
+        expected=spectra,
         modes=tuple(
             ModeView(species_markup(m.species), m.count, m.stretches, m.infrared, m.raman)
             for m in spectra.modes
         ),
-        infrared_bands=spectra.infrared_bands,
-        raman_bands=spectra.raman_bands,
-        coincidences=spectra.coincidences,
-        infrared_stretches=spectra.infrared_stretches,
-        raman_stretches=spectra.raman_stretches,
-        microwave_axes=spectra.microwave_axes,
         nmr=tuple(
             NmrView(
                 nucleus=_nucleus_markup(signal.nucleus),
@@ -196,7 +186,6 @@ def spectra_view(report: CompoundReport, sources: Mapping[str, Source]) -> Spect
             )
             for signal in spectra.nmr
         ),
-        fluxional_note=spectra.fluxional_note,
         frequencies=_frequencies(report, sources),
         method=report.frequencies.method if report.frequencies else "",
     )
