@@ -18,8 +18,8 @@ from shapeshelf.pages.typesetting import (
     species_markup,
 )
 from shapeshelf.pages.values import DEBYE, ValueView, citation, value_view
-from shapeshelf.report.labels import atom_labels
 from shapeshelf.properties.model import ExpectedSpectra
+from shapeshelf.report.labels import atom_labels
 from shapeshelf.report.model import CompoundReport
 
 _SYMBOL = re.compile(
