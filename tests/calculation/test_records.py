@@ -54,13 +54,13 @@ def test_numbers_are_rounded(record_of):
     """Each field has its decimals, and nothing prints as minus nought."""
     record = record_of(
         energy_hartree=-76.12345678,
-        modes=(Mode(1623.4499, 81.96),),
+        modes=(Mode(1623.4499, 81.96, "A1", 0.0251),),
         dipole_debye=(-0.0001, 0.00049, -1.86449),
         coordinates_angstrom=((0.12345, -0.00001, 1.0),),
     )
     held = json.loads(record_text(record))
     assert held["energy_hartree"] == -76.123457
-    assert held["modes"] == [{"wavenumber_per_cm": 1623.4, "intensity_km_per_mol": 82.0}]
+    assert list(held["modes"][0].values()) == [1623.4, 82.0, "A1", 0.03]
     assert held["dipole_debye"] == [0.0, 0.0, -1.864]
     assert held["coordinates_angstrom"] == [[0.1235, 0.0, 1.0]]
     assert "-0.0," not in record_text(record)

@@ -213,8 +213,12 @@ def test_symbols_of_symmetry_are_set_in_a_reason(reason: str, symbols: list[str]
 
 def test_calculated_bands_are_drawn_where_on_record(sf4: CompoundReport, catalogue_of) -> None:
     """With the method below, and no picture without a record."""
-    vibrations = CalculatedVibrations("a method", (Band(730.0, 200.0), Band(890.0, 160.0)))
+    vibrations = CalculatedVibrations(
+        "a method", (Band(730.0, 200.0, "B2", 1, 0.97), Band(890.0, 160.0, "A1", 1, 0.1))
+    )
     with_record = _pages(replace(sf4, frequencies=vibrations), catalogue_of)["compounds/sf4/"]
     assert "fig-infrared" in with_record
     assert "a method, harmonic, unscaled" in with_record
+    table = Reader(with_record).text.partition("Calculated vibrations")[2]
+    assert table.index("bend or torsion") < table.index("730") < table.index("stretch")
     assert "fig-infrared" not in _pages(sf4, catalogue_of)["compounds/sf4/"]

@@ -13,6 +13,7 @@ from shapeshelf.calculation.model import CalculationRecord, Level, Mode, Outcome
 from shapeshelf.calculation.records import record_path, write_record
 from shapeshelf.catalogue.model import Entry, Measurement, Quantity, StructureInput
 from shapeshelf.report.building import report_on_entry
+from shapeshelf.report.calculated import vibrations_of
 from shapeshelf.report.json import report_json
 from shapeshelf.report.model import Basis
 from shapeshelf.structure.reading import read_smiles
@@ -146,3 +147,22 @@ def test_the_programs_make_no_difference_to_a_build(tmp_path):
     ]
     assert outputs[0] == outputs[1]
     assert json.loads(outputs[0])[0]["point_group"]["basis"] == "calculated"
+
+
+def test_members_of_a_degenerate_mode_are_one_band():
+    """Their intensities add up; modes of other species stay apart, however near."""
+    modes = (
+        Mode(523.4, 0.0, "T2g", 0.1),
+        Mode(523.6, 1.0, "T1u", 0.3),
+        Mode(523.6, 2.0, "T1u", 0.3),
+        Mode(900.0, 5.0),
+        Mode(900.0, 6.0),
+    )
+    bands = vibrations_of(water_record(modes=modes)).bands
+    assert [(band.species, band.degeneracy) for band in bands] == [
+        ("T2g", 1),
+        ("T1u", 2),
+        (None, 1),
+        (None, 1),
+    ]
+    assert [band.intensity_km_per_mol for band in bands] == [0.0, 3.0, 5.0, 6.0]

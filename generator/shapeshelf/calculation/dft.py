@@ -16,9 +16,16 @@ from typing import Any
 
 import numpy as np
 
+from shapeshelf.calculation.differences import (
+    averaged_derivatives,
+    differentiate,
+    displacements_of,
+    evaluations_of,
+)
 from shapeshelf.calculation.failing import UnusableError
 from shapeshelf.calculation.minimising import Surface
 from shapeshelf.calculation.model import Outcome, System
+from shapeshelf.geometry.model import Symmetry
 from shapeshelf.geometry.vectors import Array
 from shapeshelf.reference.elements import ELEMENTS
 
@@ -26,10 +33,15 @@ FUNCTIONAL = "pbe0"
 METHOD = "PBE0"
 ENERGY_TOLERANCE = 1e-9
 MOST_CYCLES = 120
-HESSIAN_GRID = 4
+HESSIAN_GRID = 3
 """The second derivatives leave out how the grid moves with the atoms, so it must be fine."""
 RESPONSE_GRID = 0
 """The coupled-perturbed equations do not suffer from that; coarse and fine grids agree."""
+MOST_EVALUATIONS_PER_ATOM = 2
+"""Up to so many gradients for each atom take less time than the analytic second derivatives."""
+DISPLACEMENT = 0.01
+"""Bohr, to either side."""
+ENERGY_TOLERANCE_OF_DIFFERENCES = 1e-10
 CORE_POTENTIAL_FROM_PERIOD = 5
 
 
@@ -114,7 +126,21 @@ def spin_squared(solver: Solver) -> float | None:
     return float(field.spin_square()[0]) if np.ndim(field.mo_occ) > 1 else None
 
 
-def second_derivatives(solver: Solver) -> tuple[Array, Array]:
+def second_derivatives(
+    solver: Solver, coordinates: Array, symmetry: Symmetry
+) -> tuple[Array, Array]:
+    """Return the Hessian (3n, 3n) and dipole derivatives (3n, 3) at ``coordinates`` (n, 3).
+
+    Analytic, but from differences of gradients where symmetry leaves few to compute.
+    """
+    wanted = evaluations_of(displacements_of(coordinates, symmetry))
+    if wanted <= MOST_EVALUATIONS_PER_ATOM * len(coordinates):
+        return _differences(solver, coordinates, symmetry)
+    solve(solver, coordinates)
+    return averaged_derivatives(*analytic_second_derivatives(solver), symmetry)
+
+
+def analytic_second_derivatives(solver: Solver) -> tuple[Array, Array]:
     """Return the analytic Hessian (3n, 3n) and dipole derivatives (3n, 3) of the solution."""
     second = solver.field.Hessian()
     second.verbose = 0
@@ -132,6 +158,24 @@ def second_derivatives(solver: Solver) -> tuple[Array, Array]:
     size = 3 * len(blocks)
     hessian = blocks.transpose(0, 2, 1, 3).reshape(size, size)
     return (hessian + hessian.T) / 2, _dipole_derivatives(solver.field, kept[0])
+
+
+def _differences(solver: Solver, coordinates: Array, symmetry: Symmetry) -> tuple[Array, Array]:
+    field = solver.field
+    field.conv_tol = ENERGY_TOLERANCE_OF_DIFFERENCES
+    solve(solver, coordinates)
+    centre = solver.density
+
+    def evaluated(place: Array) -> tuple[Array, Array]:
+        solver.density = centre
+        _, gradient = surface_of(solver)(place)
+        return gradient, dipole(solver)
+
+    try:
+        return differentiate(evaluated, coordinates, symmetry, DISPLACEMENT)
+    finally:
+        field.conv_tol = ENERGY_TOLERANCE
+        solve(solver, coordinates)
 
 
 @contextmanager

@@ -19,7 +19,7 @@ BROKEN = 1.45
 """A bond longer than the start's times this is broken."""
 
 MOST_ATOMS_DFT = 10
-MOST_ATOMS_SMALL_BASIS = 16
+MOST_ATOMS_SMALL_BASIS = 25
 MOST_ATOMS_WITH_METAL = 7
 """Sizes up to which ``auto`` asks for each level: what one core does in minutes."""
 SAME_BOHR = 0.1

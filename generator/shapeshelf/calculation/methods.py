@@ -14,6 +14,9 @@ import numpy as np
 from shapeshelf.calculation import dft, xtb
 from shapeshelf.calculation.minimising import Minimum, Tolerances, minimise
 from shapeshelf.calculation.model import Level, System
+from shapeshelf.calculation.units import BOHR_ANGSTROM
+from shapeshelf.geometry.model import Symmetry
+from shapeshelf.geometry.symmetry import find_symmetry
 from shapeshelf.geometry.vectors import Array
 
 ROUGH = dft.Treatment("def2-svp", 1)
@@ -25,6 +28,8 @@ DIFFUSE = dft.Treatment("def2-tzvpd", 3)
 ROUGH_TOLERANCES = Tolerances(gradient=1e-3, step=1e-2, most_steps=80)
 FINE_TOLERANCES = Tolerances(gradient=1e-4, step=2e-3, most_steps=80)
 XTB_TOLERANCES = Tolerances(gradient=3e-5, step=1e-3, most_steps=400)
+EXACT_ANGSTROM = 1e-4
+"""Atoms within this of a symmetric structure are in it."""
 NAMES = {
     Level.DFT: "PBE0/def2-TZVP",
     Level.DFT_SMALL: "PBE0/def2-SVP",
@@ -42,7 +47,7 @@ class Method:
     """Energy as ``finely`` sees it, without moving."""
     finely: Callable[[Array, Array], Minimum]
     """From coordinates and a Hessian to the minimum."""
-    second_derivatives: Callable[[Array], tuple[Array, Array]]
+    second_derivatives: Callable[[Array, Symmetry], tuple[Array, Array]]
     """Hessian (3n, 3n) and dipole derivatives (3n, 3)."""
     dipole: Callable[[Array], Array]
     """Dipole moment (3,) from the origin."""
@@ -72,8 +77,12 @@ def settings_of(level: Level) -> tuple[tuple[str, str], ...]:
             "optimisation",
             f"{_treatment_text(FINE[level])}, {_tolerances_text(FINE_TOLERANCES)}",
         ),
-        ("hessian", f"{FINE[level].basis}, grid {dft.HESSIAN_GRID}, analytic"),
-        ("response", f"grid {dft.RESPONSE_GRID}"),
+        (
+            "hessian",
+            f"{FINE[level].basis}, grid {dft.HESSIAN_GRID}, analytic, response on grid "
+            f"{dft.RESPONSE_GRID}; where symmetry leaves at most {dft.MOST_EVALUATIONS_PER_ATOM} "
+            f"gradients an atom, their differences over {dft.DISPLACEMENT} bohr",
+        ),
         ("dipole", _treatment_text(DIFFUSE)),
     )
 
@@ -82,7 +91,8 @@ def _dft_method(level: Level, system: System) -> Method:
     held: dict[str, dft.Solver] = {}
 
     def roughly(start: Array) -> Minimum:
-        guess, _ = xtb.second_derivatives(system, start)
+        symmetry = find_symmetry(system.elements, start * BOHR_ANGSTROM, EXACT_ANGSTROM)
+        guess, _ = xtb.second_derivatives(system, start, symmetry)
         held["now"] = dft.solver_of(system, ROUGH, start)
         return minimise(dft.surface_of(held["now"]), start, guess, ROUGH_TOLERANCES)
 
@@ -93,9 +103,8 @@ def _dft_method(level: Level, system: System) -> Method:
         held["now"] = dft.solver_of(system, FINE[level], start, held.get("now"))
         return minimise(dft.surface_of(held["now"]), start, hessian, FINE_TOLERANCES)
 
-    def second_derivatives(place: Array) -> tuple[Array, Array]:
-        dft.solve(held["now"], place)
-        return dft.second_derivatives(held["now"])
+    def second_derivatives(place: Array, symmetry: Symmetry) -> tuple[Array, Array]:
+        return dft.second_derivatives(held["now"], place, symmetry)
 
     def dipole(place: Array) -> Array:
         solver = dft.solver_of(system, DIFFUSE, place, held["now"])
@@ -120,8 +129,8 @@ def _xtb_method(system: System) -> Method:
     def finely(start: Array, hessian: Array) -> Minimum:
         return minimise(surface, start, hessian, XTB_TOLERANCES)
 
-    def second_derivatives(place: Array) -> tuple[Array, Array]:
-        return xtb.second_derivatives(system, place)
+    def second_derivatives(place: Array, symmetry: Symmetry) -> tuple[Array, Array]:
+        return xtb.second_derivatives(system, place, symmetry)
 
     def dipole(place: Array) -> Array:
         return xtb.evaluate(system, place).dipole

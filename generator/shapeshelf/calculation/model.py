@@ -63,6 +63,10 @@ class Mode:
     wavenumber_per_cm: float
     """Negative for an imaginary one. Harmonic, unscaled."""
     intensity_km_per_mol: float
+    species: str | None = None
+    """Symmetry species in the record's point group; ``None`` where it is of no single one."""
+    stretching: float | None = None
+    """How much of it is bond stretching, 0 to 1."""
 
 
 @dataclass(frozen=True, slots=True)

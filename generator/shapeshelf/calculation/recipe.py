@@ -1,11 +1,11 @@
 """The recipe: from a molecule to a finished record.
 
-C1  Starts come from the domain model (starting.py); of a flexible molecule at GFN2-xTB level, from
-    its lowest conformer (conformers.py).
+C1  Starts come from the domain model (starting.py); the lowest conformer of a flexible molecule
+    (conformers.py) is one more, and the only one at GFN2-xTB level.
 C2  Every start is optimised roughly; the lowest goes on (methods.py says how, for each level).
 C3  It is optimised finely.
-C4  Second derivatives there give wavenumbers and infrared intensities, and prove the minimum; an
-    imaginary mode is followed downhill and C3 repeated.
+C4  Second derivatives there, its symmetry made exact, give wavenumbers and infrared intensities,
+    and prove the minimum; an imaginary mode is followed downhill and C3 repeated.
 C5  The dipole moment comes from a single point with diffuse functions.
 C7  What fails is a record that says why.
 """
@@ -33,7 +33,7 @@ from shapeshelf.calculation.model import (
 from shapeshelf.calculation.placements import ends_of, energies_of, placement_results
 from shapeshelf.calculation.starting import Start, shaken, starts_of, with_fitted_lengths
 from shapeshelf.calculation.units import BOHR_ANGSTROM, DEBYE_PER_ATOMIC_UNIT
-from shapeshelf.calculation.vibrations import masses, vibrations
+from shapeshelf.calculation.vibrations import labelled, masses, vibrations
 from shapeshelf.domains.analysis import analyse
 from shapeshelf.geometry.assembly import assemble
 from shapeshelf.geometry.symmetry import find_symmetry
@@ -56,6 +56,8 @@ class Proven:
 
     minimum: Minimum
     modes: tuple[Mode, ...]
+    moves: Array
+    """What each mode moves, (modes, n, 3)."""
     descents: int
 
 
@@ -103,20 +105,26 @@ def _calculated(
         rough = conformers[0].minimum
     else:
         rough, placements = _lowest(method, molecule, system, starts, told)
+    if len(conformers) > 1 and record.level is not Level.XTB:
+        told("first optimisation, lowest conformer")
+        other = method.roughly(shaken(conformers[0].minimum.coordinates))
+        rough = min(rough, other, key=lambda one: one.energy)
     proven = _proven(method, system, rough, told)
     place = _centred(system, proven.minimum.coordinates)
     check_bonds(molecule, starts[0].coordinates, place)
     check_spin(system, method.spin_squared())
     told("dipole moment")
     dipole = method.dipole(place)
+    points = place * BOHR_ANGSTROM
+    symmetry = find_symmetry(system.elements, points, SYMMETRY_TOLERANCE_ANGSTROM)
     return replace(
         record,
-        coordinates_angstrom=_rows(place * BOHR_ANGSTROM),
+        coordinates_angstrom=_rows(points),
         energy_hartree=proven.minimum.energy,
         dipole_debye=_rows([dipole * DEBYE_PER_ATOMIC_UNIT])[0],
-        modes=proven.modes,
+        modes=labelled(proven.modes, proven.moves, molecule, symmetry),
         spin_squared=method.spin_squared(),
-        point_group=_point_group(system, place),
+        point_group=symmetry.point_group,
         placements=placements,
         conformers=averaged(conformers),
         warnings=_warnings(proven),
@@ -147,11 +155,14 @@ def _proven(method: Method, system: System, rough: Minimum, told: Told) -> Prove
         if not fine.converged:
             raise UnusableError(Outcome.NO_MINIMUM, f"not found in {fine.steps} steps")
         told("vibrations")
-        hessian, slopes = method.second_derivatives(fine.coordinates)
-        modes, moves = vibrations(system.elements, fine.coordinates, hessian, slopes)
+        points = fine.coordinates * BOHR_ANGSTROM
+        symmetry = find_symmetry(system.elements, points, SYMMETRY_TOLERANCE_ANGSTROM)
+        exact = np.array(symmetry.coordinates_angstrom) / BOHR_ANGSTROM
+        hessian, slopes = method.second_derivatives(exact, symmetry)
+        modes, moves = vibrations(system.elements, exact, hessian, slopes)
         if not imaginary(modes):
-            return Proven(fine, modes, descents)
-        place = fine.coordinates + _downhill(moves[0], descents)
+            return Proven(replace(fine, coordinates=exact), modes, moves, descents)
+        place = exact + _downhill(moves[0], descents)
     raise UnusableError(Outcome.NO_MINIMUM, f"{MOST_DESCENTS + 1} saddles in a row")
 
 
@@ -163,11 +174,6 @@ def _downhill(move: Array, descents: int) -> Array:
 def _centred(system: System, place: Array) -> Array:
     weights = masses(system.elements)
     return np.asarray(place - weights @ place / weights.sum())
-
-
-def _point_group(system: System, place: Array) -> str:
-    points = place * BOHR_ANGSTROM
-    return find_symmetry(system.elements, points, SYMMETRY_TOLERANCE_ANGSTROM).point_group
 
 
 def _rows(points: Iterable[Array]) -> tuple[Vector, ...]:

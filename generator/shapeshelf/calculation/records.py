@@ -25,6 +25,7 @@ ROUNDED = {
     "dipole_debye": 3,
     "wavenumber_per_cm": 1,
     "intensity_km_per_mol": 1,
+    "stretching": 2,
     "spin_squared": 3,
     "model_energy": 4,
     "energy_kj_mol": 1,

@@ -1,6 +1,7 @@
 """Normal modes from a Hessian: wavenumbers and infrared intensities, double-harmonic."""
 
 from collections.abc import Sequence
+from dataclasses import replace
 
 import numpy as np
 
@@ -11,8 +12,11 @@ from shapeshelf.calculation.units import (
     INTENSITY_KM_MOL,
     WAVENUMBER_PER_ROOT,
 )
+from shapeshelf.geometry.model import Symmetry
 from shapeshelf.geometry.vectors import Array
+from shapeshelf.properties.mode_labels import species_of_modes, stretching_shares
 from shapeshelf.reference.elements import ELEMENTS
+from shapeshelf.structure.molecule import Molecule
 
 
 def vibrations(
@@ -33,6 +37,24 @@ def vibrations(
     strengths = ((moves @ dipole_derivatives) ** 2).sum(axis=1) * INTENSITY_KM_MOL
     modes = tuple(Mode(float(w), float(s)) for w, s in zip(wavenumbers, strengths, strict=True))
     return modes, moves.reshape(len(modes), -1, 3)
+
+
+def labelled(
+    modes: Sequence[Mode], moves: Array, molecule: Molecule, symmetry: Symmetry
+) -> tuple[Mode, ...]:
+    """Return the modes with their species in the point group and their share of stretching.
+
+    ``moves`` (modes, n, 3) in the frame of ``symmetry``, whose coordinates are the structure.
+    """
+    elements = [atom.element for atom in molecule.atoms]
+    bonds = [(bond.begin, bond.end) for bond in molecule.bonds]
+    points = np.array(symmetry.coordinates_angstrom)
+    shares = stretching_shares(bonds, points, masses(elements), moves)
+    names = species_of_modes(symmetry, moves)
+    return tuple(
+        replace(mode, species=name, stretching=float(share))
+        for mode, name, share in zip(modes, names, shares, strict=True)
+    )
 
 
 def masses(elements: Sequence[str]) -> Array:

@@ -8,9 +8,11 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from shapeshelf.calculation.differences import differentiate
 from shapeshelf.calculation.failing import UnusableError
 from shapeshelf.calculation.minimising import Surface
 from shapeshelf.calculation.model import Outcome, System
+from shapeshelf.geometry.model import Symmetry
 from shapeshelf.geometry.vectors import Array
 from shapeshelf.reference.elements import ELEMENTS
 
@@ -67,16 +69,13 @@ def surface_of(system: System) -> Surface:
     return surface
 
 
-def second_derivatives(system: System, coordinates: Array) -> tuple[Array, Array]:
+def second_derivatives(
+    system: System, coordinates: Array, symmetry: Symmetry
+) -> tuple[Array, Array]:
     """Return the Hessian (3n, 3n) and the dipole derivatives (3n, 3), numerical."""
-    size = coordinates.size
-    hessian, slopes = np.zeros((size, size)), np.zeros((size, 3))
-    for index in range(size):
-        shift = np.zeros(size)
-        shift[index] = DISPLACEMENT
-        ahead, behind = (
-            evaluate(system, coordinates + sign * shift.reshape(-1, 3)) for sign in (1, -1)
-        )
-        hessian[index] = (ahead.gradient - behind.gradient).ravel() / (2 * DISPLACEMENT)
-        slopes[index] = (ahead.dipole - behind.dipole) / (2 * DISPLACEMENT)
-    return (hessian + hessian.T) / 2, slopes
+
+    def evaluated(place: Array) -> tuple[Array, Array]:
+        point = evaluate(system, place)
+        return point.gradient, point.dipole
+
+    return differentiate(evaluated, coordinates, symmetry, DISPLACEMENT)

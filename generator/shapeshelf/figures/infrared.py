@@ -2,17 +2,15 @@
 
 import math
 from collections.abc import Sequence
-from dataclasses import replace
 
 from shapeshelf.figures.canvas import render, text_width
+from shapeshelf.figures.lettering import symmetry_species
 from shapeshelf.figures.model import Drawing, Lettering, Mark, Role, Stroke, Style, Svg
 from shapeshelf.report.model import Band, CompoundReport
 
 WIDTH = 520.0
 _HEIGHT, _LEFT, _RIGHT, _BASE, _TOP = 220.0, 24.0, 496.0, 176.0, 62.0
 _NOTE = 12.5
-_SAME_BAND = 2.0
-"""Wavenumbers (1/cm) closer than this are one band: members of a degenerate mode."""
 _FAINTEST, _MOST_LABELS, _LEVELS, _LEVEL = 0.01, 8, 3, 17.0
 
 
@@ -24,7 +22,8 @@ def infrared_sticks(report: CompoundReport) -> Svg | None:
 
 def infrared_drawing(report: CompoundReport) -> Drawing | None:
     """Return the stick spectrum as data."""
-    bands = _merged(report.frequencies.bands) if report.frequencies else []
+    calculated = report.frequencies.bands if report.frequencies else ()
+    bands = [band for band in calculated if band.wavenumber_per_cm > 0]
     strongest = max((band.intensity_km_per_mol for band in bands), default=0.0)
     if report.frequencies is None or not strongest:
         return None
@@ -34,21 +33,6 @@ def infrared_drawing(report: CompoundReport) -> Drawing | None:
     words = f"{report.frequencies.method}: {_in_words(bands)}."
     title = f"{report.name}, calculated infrared bands"
     return Drawing("infrared", WIDTH, _HEIGHT, tuple(marks), title, words)
-
-
-def _merged(bands: Sequence[Band]) -> list[Band]:
-    """Join the members of degenerate bands; leave imaginary ones out."""
-    merged: list[Band] = []
-    for band in sorted(bands, key=lambda band: band.wavenumber_per_cm):
-        if band.wavenumber_per_cm <= 0:
-            continue
-        last = merged[-1] if merged else None
-        if last and band.wavenumber_per_cm - last.wavenumber_per_cm < _SAME_BAND:
-            total = last.intensity_km_per_mol + band.intensity_km_per_mol
-            merged[-1] = replace(last, intensity_km_per_mol=total)
-        else:
-            merged.append(band)
-    return merged
 
 
 def _stick(band: Band, strongest: float, limit: float) -> Stroke:
@@ -82,7 +66,7 @@ def _labels(bands: Sequence[Band], strongest: float, limit: float) -> list[Mark]
     for band in chosen:
         if band.intensity_km_per_mol < _FAINTEST * strongest:
             continue
-        text = f"{band.wavenumber_per_cm:.0f} {band.label}".strip()
+        text = f"{band.wavenumber_per_cm:.0f} {symmetry_species(band.species or '')}".strip()
         half = text_width(text, _NOTE) / 2 + 3
         x = min(max(_x_of(band.wavenumber_per_cm, limit), half), WIDTH - half)
         level = _free_level(taken, x - half, x + half)
@@ -101,7 +85,12 @@ def _free_level(taken: Sequence[tuple[float, float, int]], low: float, high: flo
 
 def _in_words(bands: Sequence[Band]) -> str:
     return ", ".join(
-        f"{band.wavenumber_per_cm:.0f} cm⁻¹ ({band.intensity_km_per_mol:.0f} km/mol)"
+        f"{band.wavenumber_per_cm:.0f} cm⁻¹ ({_species_in_words(band)}"
+        f"{band.intensity_km_per_mol:.0f} km/mol)"
         for band in bands
         if band.intensity_km_per_mol > 0.5
     )
+
+
+def _species_in_words(band: Band) -> str:
+    return f"{band.species}, " if band.species else ""

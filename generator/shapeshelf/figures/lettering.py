@@ -10,6 +10,7 @@ _DROP_EM, _RISE_EM = 0.34, -0.55
 """Shift of the baseline in em of the script's own size."""
 _SCRIPT = re.compile(r"([_^])\{([^}]*)\}")
 _POINT_GROUP = re.compile(r"([CDSTOIK])(inf|\d*)([vhdis]*)")
+_SPECIES = re.compile(r"([A-Z]|[ΣΠΔΦ])([0-9gu]*)('*)([+-]?)")
 _FORMULA_PART = re.compile(r"([A-Z][a-z]?|\))(\d+)")
 
 
@@ -61,6 +62,17 @@ def point_group(symbol: str) -> str:
     letter, order, rest = match.groups()
     script = order.replace("inf", "∞") + rest
     return f"{letter}_{{{script}}}" if script else letter
+
+
+def symmetry_species(name: str) -> str:
+    """Return a symmetry species in plain letters with its marks set: ``B2u``, ``E'``, ``Σg+``."""
+    match = _SPECIES.fullmatch(name)
+    if match is None:
+        return name
+    letter, below, primes, sign = match.groups()
+    primes = primes.replace("''", "″").replace("'", "′")
+    script = f"_{{{below}}}" if below else ""
+    return f"{letter}{script}{primes}" + (f"^{{{sign.replace('-', '−')}}}" if sign else "")
 
 
 def element_of(label: str) -> str:

@@ -22,6 +22,8 @@ from shapeshelf.properties.model import ExpectedSpectra
 from shapeshelf.report.labels import atom_labels
 from shapeshelf.report.model import CompoundReport
 
+MOSTLY = 0.8
+"""Share of stretching from which a mode is called one."""
 _SYMBOL = re.compile(
     r"((?<=Symmetry )[A-Z]\w*|\bC(?:\d+|inf)(?= ax[ie]s)|(?<=\()[CDSTOI](?:inf|\d)?\w?(?=\)))"
 )
@@ -83,6 +85,17 @@ class FrequencyView:
 
 
 @dataclass(frozen=True, slots=True)
+class BandView:
+    """One calculated vibration."""
+
+    wavenumber: str
+    species: Markup
+    degeneracy: int
+    intensity: str
+    motion: str
+
+
+@dataclass(frozen=True, slots=True)
 class SymmetryView:
     """Point group and what follows from it."""
 
@@ -103,6 +116,7 @@ class SpectraView:
     modes: tuple[ModeView, ...]
     nmr: tuple[NmrView, ...]
     frequencies: tuple[FrequencyView, ...]
+    bands: tuple[BandView, ...]
     method: str
     """Of the calculated vibrations, empty where there are none."""
 
@@ -187,6 +201,7 @@ def spectra_view(report: CompoundReport, sources: Mapping[str, Source]) -> Spect
             for signal in spectra.nmr
         ),
         frequencies=_frequencies(report, sources),
+        bands=_bands(report),
         method=report.frequencies.method if report.frequencies else "",
     )
 
@@ -223,6 +238,29 @@ def _frequencies(
     return tuple(
         _frequency_view(item, anchor, sources) for item, anchor in frequency_anchors(report)
     )
+
+
+def _bands(report: CompoundReport) -> tuple[BandView, ...]:
+    bands = report.frequencies.bands if report.frequencies else ()
+    return tuple(
+        BandView(
+            wavenumber=number_text(band.wavenumber_per_cm, 0),
+            species=species_markup(band.species or "–"),
+            degeneracy=band.degeneracy,
+            intensity=number_text(band.intensity_km_per_mol, 0),
+            motion=_motion(band.stretching),
+        )
+        for band in reversed(bands)
+    )
+
+
+def _motion(stretching: float | None) -> str:
+    """Return what moves, from how much of a mode is bond stretching."""
+    if stretching is None:
+        return "–"
+    if stretching >= MOSTLY:
+        return "stretch"
+    return "bend or torsion" if stretching <= 1 - MOSTLY else "both"
 
 
 def _frequency_view(item: Measurement, anchor: str, sources: Mapping[str, Source]) -> FrequencyView:

@@ -13,7 +13,7 @@ NO_BREAK = "\N{NO-BREAK SPACE}"
 
 _FORMULA_TOKEN = re.compile(r"(\d+)|([^\d]+)")
 _POINT_GROUP = re.compile(r"(C|D|S|T|O|I|K)(inf|\d+)?([a-z]*)")
-_SPECIES = re.compile(r"(A|B|E|T|G|H|Sigma|Pi|Delta|Phi)(.*)")
+_SPECIES = re.compile(r"(A|B|E|T|G|H|Sigma|Pi|Delta|Phi|Σ|Π|Δ|Φ)(.*)")
 _GREEK = {"Sigma": "Σ", "Pi": "Π", "Delta": "Δ", "Phi": "Φ"}
 
 

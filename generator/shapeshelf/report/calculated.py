@@ -13,7 +13,7 @@ import numpy as np
 
 from shapeshelf.calculation.accuracy import ACCURACY, Accuracy
 from shapeshelf.calculation.mapping import laid_onto
-from shapeshelf.calculation.model import CalculationRecord
+from shapeshelf.calculation.model import CalculationRecord, Mode
 from shapeshelf.geometry.model import Structure, StructureBasis, Symmetry
 from shapeshelf.geometry.symmetry import find_symmetry
 from shapeshelf.geometry.vectors import angle_degrees, distance
@@ -30,6 +30,8 @@ from shapeshelf.structure.molecule import Vector
 
 SYMMETRY_TOLERANCE_ANGSTROM = 0.02
 """Above what an optimisation leaves, far below a distortion worth a page."""
+SAME_BAND_PER_CM = 0.5
+"""Members of a degenerate mode differ by no more; the structure of a record is symmetric."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -103,8 +105,30 @@ def vibrations_of(record: CalculationRecord) -> CalculatedVibrations | None:
     """Return the vibrations of a record as a page shows them."""
     if not record.modes:
         return None
-    bands = tuple(Band(mode.wavenumber_per_cm, mode.intensity_km_per_mol) for mode in record.modes)
-    return CalculatedVibrations(record.method, bands)
+    bands: list[Band] = []
+    for mode in sorted(record.modes, key=lambda mode: mode.wavenumber_per_cm):
+        if bands and _same_band(bands[-1], mode):
+            bands[-1] = replace(
+                bands[-1],
+                intensity_km_per_mol=bands[-1].intensity_km_per_mol + mode.intensity_km_per_mol,
+                degeneracy=bands[-1].degeneracy + 1,
+            )
+        else:
+            bands.append(
+                Band(
+                    mode.wavenumber_per_cm,
+                    mode.intensity_km_per_mol,
+                    mode.species,
+                    stretching=mode.stretching,
+                )
+            )
+    return CalculatedVibrations(record.method, tuple(bands))
+
+
+def _same_band(band: Band, mode: Mode) -> bool:
+    """Tell whether a mode is one more member of a degenerate band."""
+    near = mode.wavenumber_per_cm - band.wavenumber_per_cm <= SAME_BAND_PER_CM
+    return near and mode.species is not None and mode.species == band.species
 
 
 def _merged(

@@ -106,12 +106,16 @@ class Caution:
 
 @dataclass(frozen=True, slots=True)
 class Band:
-    """One calculated vibration."""
+    """One calculated vibration, the members of a degenerate one together."""
 
     wavenumber_per_cm: float
     intensity_km_per_mol: float
-    label: str = ""
-    """The mode by species and number, or by what moves, where that is known."""
+    """Of all members."""
+    species: str | None = None
+    """``None`` where the mode is of no single symmetry species."""
+    degeneracy: int = 1
+    stretching: float | None = None
+    """How much of it is bond stretching, 0 to 1."""
 
 
 @dataclass(frozen=True, slots=True)
