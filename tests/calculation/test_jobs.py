@@ -11,11 +11,17 @@ from shapeshelf.errors import UsageError
 
 def test_cheapest_first(folder):
     """The small ones are done while the large ones wait."""
-    root = folder({"sf6": "FS(F)(F)(F)(F)F", "water": "O", "biphenyl": "c1ccc(cc1)c1ccccc1"})
+    root = folder(
+        {
+            "sf6": "FS(F)(F)(F)(F)F",
+            "water": "O",
+            "triphenylphosphane": "c1ccc(cc1)P(c1ccccc1)c1ccccc1",
+        }
+    )
     plan = plan_of(read_catalogue(root), [], None, False)
     assert [(job.id, job.level) for job in plan.jobs] == [
-        ("biphenyl", Level.XTB),
         ("water", Level.DFT),
+        ("triphenylphosphane", Level.XTB),
         ("sf6", Level.DFT),
     ]
 

@@ -72,7 +72,7 @@ def test_imaginary_modes(wavenumber, leads):
         ("F[W](F)(F)(F)(F)F", Level.DFT),
         ("c1ccncc1", Level.DFT_SMALL),
         ("[O+]#[C-]->[Ni](<-[C-]#[O+])(<-[C-]#[O+])<-[C-]#[O+]", Level.XTB),
-        ("c1ccc(cc1)c1ccccc1", Level.XTB),
+        ("c1ccc(cc1)P(c1ccccc1)c1ccccc1", Level.XTB),
     ],
 )
 def test_level_by_size(smiles, level):
