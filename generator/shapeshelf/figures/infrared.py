@@ -8,9 +8,10 @@ from shapeshelf.figures.lettering import symmetry_species
 from shapeshelf.figures.model import Drawing, Lettering, Mark, Role, Stroke, Style, Svg
 from shapeshelf.report.model import Band, CompoundReport
 
-WIDTH = 520.0
-_HEIGHT, _LEFT, _RIGHT, _BASE, _TOP = 220.0, 24.0, 496.0, 176.0, 62.0
+WIDTH = 420.0
+_HEIGHT, _LEFT, _RIGHT, _BASE, _TOP = 210.0, 20.0, 400.0, 166.0, 62.0
 _NOTE = 12.5
+_LEAST_LEADER = 14.0
 _FAINTEST, _MOST_LABELS, _LEVELS, _LEVEL = 0.01, 8, 3, 17.0
 
 
@@ -37,8 +38,12 @@ def infrared_drawing(report: CompoundReport) -> Drawing | None:
 
 def _stick(band: Band, strongest: float, limit: float) -> Stroke:
     x = _x_of(band.wavenumber_per_cm, limit)
-    y = _BASE - (_BASE - _TOP) * band.intensity_km_per_mol / strongest
-    return Stroke(((x, _BASE), (x, y)), Style("ink", None, 2.0), Role.DATA)
+    points = ((x, _BASE), (x, _top_of(band, strongest)))
+    return Stroke(points, Style("ink", None, 2.0), Role.DATA)
+
+
+def _top_of(band: Band, strongest: float) -> float:
+    return _BASE - (_BASE - _TOP) * band.intensity_km_per_mol / strongest
 
 
 def _x_of(wavenumber: float, limit: float) -> float:
@@ -73,7 +78,17 @@ def _labels(bands: Sequence[Band], strongest: float, limit: float) -> list[Mark]
         if level is not None:
             taken.append((x - half, x + half, level))
             marks.append(Lettering(x, _TOP - 10 - _LEVEL * level, text, _NOTE))
+            if level == 0:
+                marks += _leader(band, x, strongest, limit)
     return marks
+
+
+def _leader(band: Band, label_x: float, strongest: float, limit: float) -> list[Mark]:
+    """Return a thin line from a label down to its stick, none where they nearly touch."""
+    x, top = _x_of(band.wavenumber_per_cm, limit), _top_of(band, strongest)
+    if top - _TOP < _LEAST_LEADER:
+        return []
+    return [Stroke(((label_x, _TOP - 4), (x, top - 4)), Style("line", None, 0.7), Role.AXIS)]
 
 
 def _free_level(taken: Sequence[tuple[float, float, int]], low: float, high: float) -> int | None:
