@@ -20,6 +20,7 @@ from pathlib import Path
 import numpy as np
 from scipy.optimize import linear_sum_assignment
 
+from shapeshelf.calculation.conformers import turning_bonds
 from shapeshelf.calculation.jobs import cost_of
 from shapeshelf.calculation.keys import settled, structure_key
 from shapeshelf.calculation.model import CalculationRecord, Level, Outcome
@@ -125,7 +126,7 @@ def _angles(name: str) -> Iterator[Measured]:
 def _dipoles() -> Iterator[Measured]:
     with (DATA / "dipoles.csv").open(encoding="utf-8") as file:
         for row in csv.DictReader(file):
-            if row["rotors"] == "0":
+            if row["rotors"] == "0" and not turning_bonds(read_smiles(row["smiles"])):
                 value = float(row["dipole_D"])
                 yield Measured("dipole", row["name"], row["smiles"], "", value, "NIST CCCBDB", True)
 

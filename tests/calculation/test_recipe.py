@@ -7,6 +7,9 @@ from shapeshelf.calculation import dft, methods, xtb
 from shapeshelf.calculation.minimising import Tolerances
 from shapeshelf.calculation.model import Level, Outcome, System
 from shapeshelf.calculation.recipe import calculate
+from shapeshelf.calculation.units import BOHR_ANGSTROM
+from shapeshelf.calculation.vibrations import vibrations
+from shapeshelf.geometry.symmetry import find_symmetry
 from shapeshelf.geometry.vectors import angle_degrees
 from shapeshelf.structure.reading import read_smiles
 
@@ -18,6 +21,8 @@ DIPOLE_DEBYE = 0.05
 """What the method is known to be right to."""
 ANGLE_DEGREES = 0.8
 BOND_ANGSTROM = 0.005
+WAVENUMBER_PER_CM = 5.0
+"""What the grid leaves of a difference; without its correction it is some hundred."""
 DIFFERENTIAL_DEBYE_PER_ANGSTROM = 0.01
 
 
@@ -86,6 +91,20 @@ def test_dipole_derivatives_follow_the_dipole():
         assert slopes[5] == pytest.approx(
             (moments[0] - moments[1]) / 0.02, abs=DIFFERENTIAL_DEBYE_PER_ANGSTROM
         )
+
+
+def test_analytic_second_derivatives_are_those_of_the_gradient(monkeypatch):
+    """Chlorine, where the grid round heavy atoms spoils derivatives that ignore it."""
+    elements, points = ("Cl", "Cl"), [[0, 0, 0], [0, 0, 2.0]]
+    symmetry = find_symmetry(elements, np.array(points, float), 0.01)
+    place = np.array(symmetry.coordinates_angstrom) / BOHR_ANGSTROM
+    solver = dft.solver_of(System(elements, 0, 1), dft.Treatment("def2-svp", 1), place)
+    found = []
+    for most in (0, 9):
+        monkeypatch.setattr(dft, "MOST_EVALUATIONS_PER_ATOM", most)
+        modes, _ = vibrations(elements, place, *dft.second_derivatives(solver, place, symmetry))
+        found.append([mode.wavenumber_per_cm for mode in modes])
+    assert found[0] == pytest.approx(found[1], abs=WAVENUMBER_PER_CM)
 
 
 def test_a_field_that_does_not_converge_is_a_record(monkeypatch):

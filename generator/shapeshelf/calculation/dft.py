@@ -33,10 +33,8 @@ FUNCTIONAL = "pbe0"
 METHOD = "PBE0"
 ENERGY_TOLERANCE = 1e-9
 MOST_CYCLES = 120
-HESSIAN_GRID = 3
-"""The second derivatives leave out how the grid moves with the atoms, so it must be fine."""
 RESPONSE_GRID = 0
-"""The coupled-perturbed equations do not suffer from that; coarse and fine grids agree."""
+"""For the coupled-perturbed equations; coarse and fine grids agree."""
 MOST_EVALUATIONS_PER_ATOM = 2
 """Up to so many gradients for each atom take less time than the analytic second derivatives."""
 DISPLACEMENT = 0.01
@@ -153,11 +151,22 @@ def analytic_second_derivatives(solver: Solver) -> tuple[Array, Array]:
         return tuple(kept)
 
     second.solve_mo1 = remembering
-    with _grid(solver.field, HESSIAN_GRID):
-        blocks = np.array(second.kernel())
+    blocks = np.array(second.kernel())
+    _free_translation(blocks)
     size = 3 * len(blocks)
     hessian = blocks.transpose(0, 2, 1, 3).reshape(size, size)
     return (hessian + hessian.T) / 2, _dipole_derivatives(solver.field, kept[0])
+
+
+def _free_translation(blocks: Array) -> None:
+    """Set each atom's block with itself (n, n, 3, 3) so that shifting the molecule costs nothing.
+
+    PySCF's second derivatives leave out how the grid moves with the atoms. Near a nucleus, where
+    the density is steep, that spoils the block of an atom with itself and hardly any other.
+    """
+    for atom, row in enumerate(blocks):
+        row[atom] = 0.0
+        row[atom] = -row.sum(axis=0)
 
 
 def _differences(solver: Solver, coordinates: Array, symmetry: Symmetry) -> tuple[Array, Array]:

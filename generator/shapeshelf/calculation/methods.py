@@ -79,7 +79,7 @@ def settings_of(level: Level) -> tuple[tuple[str, str], ...]:
         ),
         (
             "hessian",
-            f"{FINE[level].basis}, grid {dft.HESSIAN_GRID}, analytic, response on grid "
+            f"{_treatment_text(FINE[level])}, analytic, free of translation, response on grid "
             f"{dft.RESPONSE_GRID}; where symmetry leaves at most {dft.MOST_EVALUATIONS_PER_ATOM} "
             f"gradients an atom, their differences over {dft.DISPLACEMENT} bohr",
         ),
