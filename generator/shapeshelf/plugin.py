@@ -31,7 +31,7 @@ from shapeshelf.pages.assets import stylesheet
 from shapeshelf.pages.for_files import link_to_files
 from shapeshelf.pages.model import SiteFile, SitePage
 from shapeshelf.pages.rendering import templates_dir
-from shapeshelf.pages.site import site_files, site_pages
+from shapeshelf.pages.site import handwritten_pages, site_files, site_pages
 from shapeshelf.pages.staging import Staging, discard, stage, swap
 from shapeshelf.report.checking import report_on_catalogue
 
@@ -258,11 +258,7 @@ def _page_file(page: SitePage, config: MkDocsConfig) -> File:
 
 
 def _handwritten(config: MkDocsConfig) -> list[File]:
-    folder = templates_dir() / "pages"
-    return [
-        _virtual_file(path.relative_to(folder).as_posix(), path.read_text("utf-8"), config)
-        for path in sorted(folder.rglob("*.md"))
-    ]
+    return [_virtual_file(name, text, config) for name, text in handwritten_pages()]
 
 
 def _virtual_file(name: str, content: str, config: MkDocsConfig) -> File:

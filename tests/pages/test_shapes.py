@@ -37,6 +37,24 @@ def test_equivalent_centres_count_once(sf4: CompoundReport, sources: dict[str, S
     assert [angle.plain_label for angle in member.angles] == ["F(ax)-S-F(ax)", "F(eq)-S-F(eq)"]
 
 
+def test_the_scale_leads_to_its_compounds(sf4: CompoundReport, sources: dict[str, Source]) -> None:
+    """One line a compound, with the way to it from the page of the shape."""
+    (row,) = {view.name: view for view in shape_views([sf4], sources)}["see-saw"].scale
+    assert (row.name, row.address) == ("Sulfur tetrafluoride", "../../compounds/sf4/")
+    assert (173.1, "measured") in row.points
+
+
+def test_only_arrangements_that_lead_to_a_shape_are_named(
+    sf4: CompoundReport, sources: dict[str, Source]
+) -> None:
+    """Those of the table below them, which tells how each does."""
+    views = {view.name: view for view in shape_views([sf4], sources)}
+    for view in views.values():
+        if view.ways:
+            assert set(view.arrangements) == {way.arrangement for way in view.ways}
+    assert views["see-saw"].arrangements == ("trigonal bipyramidal",)
+
+
 def test_a_glyph_may_stand_several_times_on_a_page() -> None:
     """It has no id, and a screen reader passes over it: the name stands beside it."""
     markup = shape_glyph("see-saw")

@@ -14,6 +14,8 @@ import pytest
 from mkdocs.commands.build import build
 from mkdocs.config import load_config
 
+from shapeshelf.cli import main
+
 ROOT = Path(__file__).parents[2]
 MODULES = ROOT / "site_templates" / "theme" / "js"
 BROWSERS = ("chromium", "chromium-browser", "google-chrome", "chrome")
@@ -153,11 +155,9 @@ def in_node(tmp_path_factory: pytest.TempPathFactory):
 
 @pytest.fixture(scope="session")
 def three_for_files(tmp_path_factory: pytest.TempPathFactory) -> Path:
-    """Three compounds built to be opened from a folder."""
+    """Three compounds built by the command to be opened from a folder."""
     folder = write_bench(tmp_path_factory.mktemp("files"))
-    config = CONFIG.replace("  - shapeshelf", "  - shapeshelf:\n      for_files: true")
-    (folder / "mkdocs.yml").write_text(config)
-    build_site(folder)
+    assert main(["build", "--for-files", "--config", str(folder / "mkdocs.yml")]) == 0
     return folder / "site"
 
 

@@ -3,6 +3,7 @@
 import csv
 import gzip
 import json
+import shutil
 from collections.abc import Callable, Iterator
 from pathlib import Path
 from typing import Any
@@ -11,17 +12,41 @@ from urllib.parse import urlsplit
 import pytest
 from axe_playwright_python.sync_playwright import Axe
 
+from shapeshelf.plugin import build_site
+
 DATA = Path(__file__).parents[1] / "data"
 QUERIES = list(csv.DictReader((DATA / "queries.csv").read_text("utf-8").splitlines()))
 DESK = {"width": 1440, "height": 900}
 MOST_SCRIPT_BYTES = 60_000
 """All script of the site, compressed."""
+LEAST_TARGET = 24
+"""Pixels: WCAG 2.2, success criterion 2.5.8."""
 
 FIND_ALL = """
   import { prepare } from "./js/index.js";
   import { find } from "./js/find.js";
   const index = prepare(given.index);
   tell(given.queries.map((query) => find(index, query, 1)[0] ?? null));
+"""
+FIND_WORDS = """
+  import { prepare } from "./js/index.js";
+  import { find } from "./js/find.js";
+  import { foldName } from "./js/normalise.js";
+  const index = prepare(given.index);
+  const words = (text) => foldName(text).split(" ");
+  const facts = ({ shape, group, polarity, tags }) => [shape, group, polarity, ...tags];
+  const wordsOf = (one, also) => [
+    ...[one.name, ...also].flatMap(words),
+    ...facts(one).flatMap((text) => [...words(text), words(text).join("")]),
+  ];
+  const begun = (words, asked) =>
+    asked.split(" ").every((start) => words.some((word) => word.startsWith(start)));
+  const { columns } = index;
+  const all = columns.id.map((id) => find(index, id, 1)[0]);
+  tell(given.queries.map((asked) => [
+    all.filter((one, at) => begun(wordsOf(one, columns.also[at] || []), asked)).map(({ id }) => id),
+    find(index, asked).filter(({ kind }) => kind === "compound").map(({ id }) => id),
+  ]));
 """
 FILTER_ALL = """
   import { all } from "./js/bits.js";
@@ -55,6 +80,13 @@ COUNTS = """
   }
   tell(wrong);
 """
+TERMS = """
+  import { CHOICES } from "./js/columns.js";
+  import { ROW_TERMS } from "./js/compare-rows.js";
+  import { GROUPS } from "./js/facets.js";
+  const named = [...CHOICES, ...GROUPS].map(({ term }) => term).filter(Boolean);
+  tell([...Object.values(ROW_TERMS), ...named]);
+"""
 FILTERS: list[tuple[dict[str, list[str]], dict[str, str], list[str]]] = [
     ({"shape": ["see-saw"]}, {}, ["sf4", "tecl4", "xeo2f2"]),
     ({"shape": ["T-shaped"], "element": ["Cl"]}, {}, ["clf3"]),
@@ -84,6 +116,15 @@ def test_the_expected_answer_stands_first(found: dict[str, Any], case: dict[str,
     assert answer is not None
     last = answer.get("id") or answer["address"].rstrip("/").replace("=", "/").replace("#", "/")
     assert (answer["kind"], last.split("/")[-1]) == (case["kind"], case["expected"])
+
+
+def test_each_word_may_begin_a_name_or_a_fact(in_node: Callable[..., Any], demo: Path) -> None:
+    """Names, shape, point group, polarity and tags together, held against a plain search."""
+    queries = ["fluoride gas", "tetrahedral polar chlor", "nonpolar fluor", "seesaw nonpolar"]
+    given = {"index": _data(demo, "lookup-index"), "queries": queries}
+    answers = in_node(FIND_WORDS, given)
+    assert [sorted(found) for _, found in answers] == [sorted(plain) for plain, _ in answers]
+    assert [len(plain) > 1 for plain, _ in answers] == [True, True, True, False]
 
 
 def test_filters_leave_the_compounds_that_fit(in_node: Callable[..., Any], demo: Path) -> None:
@@ -122,7 +163,7 @@ def test_a_filtered_list_is_made_by_keyboard_and_kept_in_the_address(page: Any, 
     page.locator("th[aria-sort=ascending]").wait_for()
     names = page.locator("tbody th").all_inner_texts()
     assert len(names) > 2
-    assert "element=Xe" in page.url
+    assert page.url.partition("?")[2] == "q=fluoride&element=Xe&sort=angle"
     page.goto(page.url)
     page.locator("[data-ready]").wait_for()
     assert page.locator("tbody th").all_inner_texts() == names
@@ -166,6 +207,69 @@ def test_a_compound_is_added_and_taken_out(page: Any, home: str) -> None:
     page.wait_for_url("**/compare/?ids=clf3")
 
 
+def test_every_term_a_module_names_is_in_the_glossary(
+    in_node: Callable[..., Any], demo: Path
+) -> None:
+    """Headings and filters of the lookup, rows of a comparison."""
+    assert set(in_node(TERMS)) <= set(_data(demo, "glossary"))
+
+
+def test_rows_and_badges_of_a_comparison_are_explained(page: Any, home: str) -> None:
+    """As they are on a compound's page; a recalled value is a measured one as well."""
+    page.goto(f"{home}compare/?ids=sf4,clf3")
+    page.locator("[data-ready]").wait_for()
+    page.get_by_role("link", name="Lone pairs").focus()
+    assert page.get_by_role("tooltip").inner_text().startswith("Two valence electrons")
+    angle = page.locator("tbody tr", has=page.get_by_role("rowheader", name="F(eq)-•-F(eq)"))
+    badges = angle.locator("td").first.get_by_role("link")
+    assert badges.all_inner_texts() == ["measured", "recalled"]
+
+
+def test_the_sample_of_a_citation_is_what_the_button_copies(page: Any, home: str) -> None:
+    """The newcomers' page shows one of the group's own values as its link."""
+    page.goto(f"{home}start/")
+    sample = page.locator(".sample").inner_text()
+    path, anchor = sample.removesuffix(")").rpartition("(…/")[2].split("#")
+    page.goto(home + path)
+    name = page.locator("article.compound").get_attribute("data-name")
+    held = page.locator(f"#{anchor}").evaluate("(row) => ({ ...row.dataset })")
+    value = " ".join(held["value"].split())
+    said = f"{name}, {held['of']}: {value} ({held['basis']})"
+    assert " ".join(sample.split()) == f"[{said}](…/{path}#{anchor})"
+
+
+def test_a_line_of_the_scale_leads_to_its_compound(page: Any, home: str) -> None:
+    """By its name to a screen reader, by keyboard with a rim to see, by a target to tap."""
+    page.goto(f"{home}shapes/see-saw/")
+    link = page.locator(".scale").get_by_role("link", name="Sulfur tetrafluoride: 87.7° model")
+    area = link.locator("rect")
+    assert area.bounding_box()["height"] >= LEAST_TARGET
+    bare = area.evaluate("(rect) => getComputedStyle(rect).stroke")
+    page.locator(".scale").focus()
+    page.keyboard.press("Tab")
+    assert link.evaluate("(link) => link === document.activeElement")
+    assert area.evaluate("(rect) => getComputedStyle(rect).stroke") != bare
+    page.keyboard.press("Enter")
+    page.wait_for_url("**/compounds/sf4/")
+
+
+def test_a_badge_explains_itself(page: Any, home: str) -> None:
+    """When the pointer rests on it; the tab key stops at the first of a kind."""
+    page.emulate_media(reduced_motion="reduce")
+    page.goto(f"{home}compounds/sf4/")
+    badges = page.locator("a.basis--measured")
+    assert badges.evaluate_all("(all) => all.filter((one) => one.tabIndex === 0).length") == 1
+    badges.last.hover()
+    note = page.get_by_role("tooltip")
+    note.wait_for()
+    assert note.inner_text().startswith("Published from an experiment")
+    page.goto(f"{home}lookup/?columns=basis")
+    page.locator("[data-ready]").wait_for()
+    page.get_by_role("button", name="Basis").focus()
+    note.wait_for()
+    assert note.inner_text().startswith("What a value rests on")
+
+
 def test_a_term_is_explained_where_it_stands(page: Any, home: str) -> None:
     """On focus, told to a screen reader, gone with Escape."""
     page.goto(f"{home}compounds/sf4/")
@@ -190,6 +294,7 @@ def test_a_term_is_explained_where_it_stands(page: Any, home: str) -> None:
         "glossary/",
         "shapes/",
         "shapes/see-saw/",
+        "methods/",
     ],
 )
 def test_axe_finds_nothing(browser: Any, home: str, path: str, scheme: str, width: int) -> None:
@@ -222,10 +327,32 @@ def test_a_site_for_files_works_without_a_server(browser: Any, three_for_files: 
     page.get_by_role("link", name="Lookup").click()
     page.locator("[data-ready]").wait_for()
     assert page.locator("tbody th").count() == 3
+    page.locator("input[name=element][value=F]").check()
+    page.wait_for_url("**/lookup/index.html?element=F")
+    assert page.locator("tbody th").all_inner_texts() == ["Sulfur tetrafluoride"]
     page.goto((three_for_files / "compare" / "index.html").as_uri() + "?ids=sf4,water")
-    page.get_by_role("columnheader", name="Water").wait_for()
+    page.get_by_role("columnheader", name="Water").get_by_role("link").wait_for()
+    page.get_by_role("link", name="Point group").focus()
+    page.get_by_role("tooltip").wait_for()
+    page.locator("#add").fill("nitrate")
+    page.keyboard.press("Enter")
+    page.wait_for_url("**/compare/index.html?ids=sf4,water,nitrate")
+    page.goto((three_for_files / "shapes" / "bent" / "index.html").as_uri())
+    page.locator(".scale").get_by_role("link", name="Water").focus()
+    page.keyboard.press("Enter")
+    page.wait_for_url("**/compounds/water/index.html")
     assert complaints == []
     page.close()
+
+
+def test_the_option_builds_what_the_command_builds(three_for_files: Path, tmp_path: Path) -> None:
+    """``for_files`` of the plugin and ``--for-files`` of the command, byte for byte."""
+    shutil.copytree(three_for_files.parent, tmp_path / "files")
+    config = tmp_path / "files" / "mkdocs.yml"
+    option = "  - shapeshelf:\n      for_files: true\n"
+    config.write_text(config.read_text().replace("  - shapeshelf\n", option))
+    build_site(config)
+    assert _contents(tmp_path / "files" / "site") == _contents(three_for_files)
 
 
 @pytest.fixture(scope="module")
@@ -247,6 +374,11 @@ def page(browser: Any, home: str) -> Iterator[Any]:
 
 def _outside(url: str, host: str) -> bool:
     return not url.startswith(("data:", "blob:")) and urlsplit(url).netloc != host
+
+
+def _contents(site: Path) -> dict[str, bytes]:
+    files = (path for path in site.rglob("*") if path.is_file() and path.suffix != ".gz")
+    return {str(path.relative_to(site)): path.read_bytes() for path in files}
 
 
 def _both(site: Path) -> dict[str, Any]:

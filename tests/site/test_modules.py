@@ -66,12 +66,29 @@ def test_slips_of_the_pen_are_counted(in_node: Run):
         ("C₂ᵥ", "c2v"),
         ("Bent's rule", "bents rule"),
         ("Grüneisen", "gruneisen"),
+        ("Gru\u0308neisen", "gruneisen"),
     ],
 )
 def test_names_are_folded_to_one_spelling(in_node: Run, text: str, folded: str):
     """Greek letters spelled out, accents and scripts plain, one spelling of sulfur."""
     script = 'import { foldName } from "./js/normalise.js"; tell(foldName(given));'
     assert in_node(script, text) == folded
+
+
+@pytest.mark.parametrize(
+    ("start", "lines"),
+    [("ethyl", [0, 1]), ("eth", [0, 1, 2]), ("acetate", [1]), ("a", [0, 1]), ("yl", []), ("z", [])],
+)
+def test_words_are_found_by_their_beginning(in_node: Run, start: str, lines: list[int]):
+    """Every line with such a word, none where it only stands inside one."""
+    script = """
+      import { eachLineWith, wordsIn } from "./js/words.js";
+      const found = new Set();
+      eachLineWith(wordsIn(given.text), given.start, (line) => found.add(line));
+      tell([...found].sort());
+    """
+    text = "ethyl alcohol\nethyl acetate\nmethanol ether methanol"
+    assert in_node(script, {"text": text, "start": start}) == lines
 
 
 def test_sets_of_compounds(in_node: Run):

@@ -115,9 +115,7 @@ def known_to_all(points: Sequence[ParityPoint], quantity: str) -> tuple[ParityPo
     )
 
 
-def averages_of(
-    points: Iterable[ParityPoint], quantity: str, method: Method
-) -> Averages | None:
+def averages_of(points: Iterable[ParityPoint], quantity: str, method: Method) -> Averages | None:
     """Return how far ``method`` is off on average, ``None`` where no value of it counts."""
     counted = [one for one in deviations_of(points, quantity, method) if one.point.counts]
     if not counted:
@@ -159,6 +157,11 @@ def spoken_name(name: str) -> str:
 def is_formula(name: str) -> bool:
     """Tell whether ``name`` is a formula, in which numbers stand below the line."""
     return _FORMULA.fullmatch(name.removeprefix("trans-")) is not None
+
+
+def charge_in(formula: str) -> int:
+    """Return the charge that a formula of the table ends in: -1 of ``NO2-``."""
+    return {"+": 1, "-": -1}.get(formula[-1], 0)
 
 
 def _value(point: ParityPoint, method: Method) -> float | None:

@@ -24,7 +24,16 @@ from shapeshelf.errors import ShapeshelfError
 Staged = Callable[[Job, str], None]
 """Receives a job and the stage it has come to."""
 POLL_SECONDS = 5.0
-ONE_THREAD = ("OMP_NUM_THREADS", "OPENBLAS_NUM_THREADS", "MKL_NUM_THREADS")
+SURROUNDINGS = {
+    "OMP_NUM_THREADS": "1",
+    "OPENBLAS_NUM_THREADS": "1",
+    "MKL_NUM_THREADS": "1",
+    "MALLOC_MMAP_MAX_": "0",
+    "MALLOC_TRIM_THRESHOLD_": str(10**11),
+    "MALLOC_TOP_PAD_": str(2**28),
+}
+"""One thread a job; and, where the C library is glibc, memory that is kept instead of given back
+and asked for again at every step, which took a quarter of the time."""
 STAGE, DONE, FAILED = "stage", "done", "failed"
 
 
@@ -35,8 +44,8 @@ def run_job(job: Job, told: Callable[[str], None] = lambda stage: None) -> Calcu
 
 def run_jobs(jobs: Sequence[Job], side_by_side: int, staged: Staged) -> Iterator[Finished]:
     """Yield every job as it ends, at most ``side_by_side`` at a time."""
-    for name in ONE_THREAD:
-        os.environ.setdefault(name, "1")
+    for name, value in SURROUNDINGS.items():
+        os.environ.setdefault(name, value)
     waiting = list(jobs)
     running: dict[Connection, tuple[Job, SpawnProcess]] = {}
     try:

@@ -5,7 +5,7 @@ import re
 from html import escape
 
 from shapeshelf.figures.lettering import markup
-from shapeshelf.figures.model import Drawing, Lettering, Mark, Stroke, Style
+from shapeshelf.figures.model import Drawing, Lettering, Link, Mark, Stroke, Style
 from shapeshelf.figures.palette import colours
 
 FONT_STACK = (
@@ -40,12 +40,26 @@ def finish(written: str, drawing: Drawing) -> str:
     """
     paths = [match.group(1) for match in _ELEMENT.finditer(written)]
     pairs = zip(batches(drawing.marks), paths, strict=True)
-    return _frame("".join(_element(batch, path) for batch, path in pairs), drawing)
+    body = "".join(_element(batch, path) for batch, path in pairs)
+    return _frame(_linked(body, drawing.links) if drawing.links else body, drawing)
 
 
 def colour(name: str) -> str:
     """Return the CSS value of a named colour."""
     return f"var(--fig-{name},{colours()[name].light})"
+
+
+def _linked(body: str, links: tuple[Link, ...]) -> str:
+    """Return the links with the marks over them, which let every pointer through."""
+    return "".join(map(_link, links)) + f'<g pointer-events="none">{body}</g>'
+
+
+def _link(link: Link) -> str:
+    x, y, width, height = map(_round, (link.x, link.y, link.width, link.height))
+    return (
+        f'<a href="{escape(link.address)}"><title>{escape(link.name, quote=False)}</title>'
+        f'<rect x="{x}" y="{y}" width="{width}" height="{height}" fill="transparent"/></a>'
+    )
 
 
 def _element(batch: Lettering | list[Stroke], path: str | None) -> str:
@@ -84,12 +98,14 @@ def _text(mark: Lettering) -> str:
 
 
 def _frame(body: str, drawing: Drawing) -> str:
+    """Return the element; one with links is no single picture to a screen reader."""
+    role = "group" if drawing.links else "img"
     size = f"{drawing.width:g} {drawing.height:g}"
     name = f"{drawing.kind}-{hashlib.sha256((drawing.title + body).encode()).hexdigest()[:8]}"
     return (
         f'<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 {size}" '
         f'width="{drawing.width:g}" height="{drawing.height:g}" class="fig fig-{drawing.kind}" '
-        f'role="img" aria-labelledby="{name}-t" aria-describedby="{name}-d" '
+        f'role="{role}" aria-labelledby="{name}-t" aria-describedby="{name}-d" '
         f'font-family="{FONT_STACK}">'
         f'<title id="{name}-t">{escape(drawing.title, quote=False)}</title>'
         f'<desc id="{name}-d">{escape(drawing.description, quote=False)}</desc>'

@@ -72,6 +72,19 @@ Mark = Stroke | Lettering
 
 
 @dataclass(frozen=True, slots=True)
+class Link:
+    """A rectangle behind the marks that leads to another page."""
+
+    address: str
+    name: str
+    """What a screen reader and a pointer that rests on it are told."""
+    x: float
+    y: float
+    width: float
+    height: float
+
+
+@dataclass(frozen=True, slots=True)
 class Drawing:
     """A finished figure as data."""
 
@@ -82,6 +95,7 @@ class Drawing:
     marks: tuple[Mark, ...]
     title: str
     description: str
+    links: tuple[Link, ...] = ()
 
 
 @dataclass(frozen=True, slots=True)

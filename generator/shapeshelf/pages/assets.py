@@ -20,6 +20,7 @@ PARTS = (
     "filters.css",
     "compare.css",
     "learning.css",
+    "methods.css",
     "links.css",
     "print.css",
 )

@@ -9,6 +9,7 @@ from functools import cache, lru_cache
 
 from markupsafe import Markup
 
+from shapeshelf.calculation.parity import Method, ParityPoint
 from shapeshelf.figures.angle_scale import ScaleRow, angle_scale
 from shapeshelf.figures.bench import bench_view
 from shapeshelf.figures.glyph import glyph, shape_drawing
@@ -16,6 +17,7 @@ from shapeshelf.figures.infrared import infrared_sticks
 from shapeshelf.figures.lewis import lewis_structure
 from shapeshelf.figures.model import Svg
 from shapeshelf.figures.nmr import nmr_pattern
+from shapeshelf.figures.parity import parity_plots
 from shapeshelf.figures.sheet import sheet
 from shapeshelf.figures.strip import strip
 from shapeshelf.pages.turning import turn_data
@@ -95,6 +97,11 @@ def shape_figure(shape: str) -> Markup | None:
 def scale_figure(shape: str, rows: Sequence[ScaleRow], ideals: Sequence[float]) -> Markup | None:
     """Return the angles of a shape's compounds on one scale."""
     return _maybe(angle_scale(shape, rows, ideals))
+
+
+def parity_figures(points: Sequence[ParityPoint], quantity: str) -> dict[Method, Markup]:
+    """Return what each method says of a quantity, plotted against what is measured."""
+    return {method: _markup(svg) for method, svg in parity_plots(points, quantity).items()}
 
 
 def _maybe(svg: Svg | None) -> Markup | None:

@@ -31,13 +31,16 @@ def term_anchor(name: str) -> str:
     return slug(name.replace("'", ""))
 
 
-def term_link(root: str, text: str, name: str | None = None) -> Markup:
+def term_link(root: str, text: str, name: str | None = None, looks: str = "") -> Markup:
     """Return ``text`` as a link to the term of that name; without one the text names the term.
 
-    Raises KeyError for a term the glossary does not have, so that no link goes nowhere.
+    ``looks`` are further classes: a basis is set in a box. Raises KeyError for a term the
+    glossary does not have, so that no link goes nowhere.
     """
-    view = _BY_NAME[(name or text).casefold()]
-    return Markup('<a class="term" href="{}{}#{}">{}</a>').format(root, GLOSSARY, view.anchor, text)
+    anchor = _BY_NAME[(name or text).casefold()].anchor
+    classes = f"term {looks}".rstrip()
+    link = '<a class="{}" href="{}{}#{}">{}</a>'
+    return Markup(link).format(classes, root, GLOSSARY, anchor, text)
 
 
 def definitions_json() -> bytes:

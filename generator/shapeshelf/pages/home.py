@@ -49,13 +49,25 @@ def home_view(
         angles=len(angles),
         measured=sum(row.degrees.basis == "measured" for row in angles),
         shapes=tuple(shape for shape in shapes if shape.compounds),
-        start_here=tuple(
-            compound_line(report, report.entry.start_here)
-            for report in reports
-            if report.entry and report.entry.start_here
-        ),
+        start_here=first_compounds(reports),
         latest=_latest(reports, changes),
     )
+
+
+def first_compounds(reports: Sequence[CompoundReport]) -> tuple[CompoundLine, ...]:
+    """Return the compounds to know first with their reasons, each after what it builds on.
+
+    In the order of the domains at their most crowded centre, then of its lone pairs.
+    """
+    reasons = {report.id: report.entry.start_here for report in reports if report.entry}
+    chosen = sorted((report for report in reports if reasons.get(report.id)), key=_crowding)
+    return tuple(compound_line(report, reasons[report.id] or "") for report in chosen)
+
+
+def _crowding(report: CompoundReport) -> tuple[int, int, str]:
+    counts = [(one.centre.bonded, one.centre.lone_pairs or 0) for one in report.centres]
+    domains, pairs = max(((bonded + pairs, pairs) for bonded, pairs in counts), default=(0, 0))
+    return domains, pairs, report.name.casefold()
 
 
 def compound_line(report: CompoundReport, note: str) -> CompoundLine:

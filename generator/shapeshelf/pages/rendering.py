@@ -27,6 +27,11 @@ def render(part: str, **values: object) -> str:
     return environment().get_template(part).render(values)
 
 
+def fill(text: str, **values: object) -> str:
+    """Return hand-written text with what it asks of parts and values in its place."""
+    return environment().from_string(text).render(values)
+
+
 @cache
 def environment() -> jinja2.Environment:
     """Return the one Jinja environment of all parts; an unknown name is an error."""
@@ -43,6 +48,6 @@ def environment() -> jinja2.Environment:
 
 
 @jinja2.pass_context
-def _term(context: Context, text: str, name: str | None = None) -> Markup:
+def _term(context: Context, text: str, name: str | None = None, looks: str = "") -> Markup:
     """Let a part say ``term("Point group")`` for a link to the glossary from where it stands."""
-    return term_link(context["root"], text, name)
+    return term_link(context["root"], text, name, looks)

@@ -8,7 +8,7 @@ from markupsafe import Markup
 
 from shapeshelf.catalogue.model import Source
 from shapeshelf.figures.angle_scale import ScaleRow
-from shapeshelf.pages.addresses import compound_address, shape_address
+from shapeshelf.pages.addresses import compound_address, root_from, shape_address
 from shapeshelf.pages.centres import AngleView, angle_view
 from shapeshelf.pages.shape_notes import OriginView, ideal_degrees, origins, usual_shapes
 from shapeshelf.pages.typesetting import (
@@ -134,29 +134,40 @@ def _shape_view(
     known = [(key[0], value) for key, value in SHAPES.items() if value.shape == name]
     symbols = [value.polyhedral_symbol for _, value in known]
     symbols += [centre.polyhedral_symbol for _, centre in members]
+    ways = origins(name)
+    arrangements = [way.arrangement for way in ways] or [arrangement for arrangement, _ in known]
     return ShapeView(
         name=name,
         address=shape_address(name),
         symbols=tuple(dict.fromkeys(symbol for symbol in symbols if symbol)),
-        arrangements=tuple(dict.fromkeys(arrangement for arrangement, _ in known)),
+        arrangements=tuple(dict.fromkeys(arrangements)),
         members=tuple(_member_view(report, centre, sources) for report, centre in members),
         compounds=len({report.id for report, _ in members}),
-        ways=origins(name),
-        scale=_scale_rows(members),
+        ways=ways,
+        scale=_scale_rows(members, root_from(shape_address(name))),
         ideals=ideal_degrees(name),
     )
 
 
-def _scale_rows(members: Sequence[tuple[CompoundReport, CentreReport]]) -> tuple[ScaleRow, ...]:
+def _scale_rows(
+    members: Sequence[tuple[CompoundReport, CentreReport]], root: str
+) -> tuple[ScaleRow, ...]:
     """Return one row a compound in the order of its widest angle, measured ones kept first."""
-    rows: dict[str, ScaleRow] = {}
+    points: dict[str, tuple[tuple[float, str], ...]] = {}
+    reports = {report.id or "": report for report, _ in members}
     for report, centre in members:
-        points = tuple((row.degrees.value, row.degrees.basis.value) for row in centre.angles)
-        held = rows.get(report.id or "")
-        label = _lettering(report.molecule.formula, report.molecule.charge)
-        rows[report.id or ""] = ScaleRow(label, (*(held.points if held else ()), *points))
-    told = sorted((row for row in rows.values() if row.points), key=_measured_first)
+        more = tuple((row.degrees.value, row.degrees.basis.value) for row in centre.angles)
+        points[report.id or ""] = points.get(report.id or "", ()) + more
+    rows = [_scale_row(reports[key], held, root) for key, held in points.items() if held]
+    told = sorted(rows, key=_measured_first)
     return tuple(sorted(told[:MOST_ON_SCALE], key=lambda row: max(row.points)[0]))
+
+
+def _scale_row(
+    report: CompoundReport, points: tuple[tuple[float, str], ...], root: str
+) -> ScaleRow:
+    label = _lettering(report.molecule.formula, report.molecule.charge)
+    return ScaleRow(label, points, report.name, root + compound_address(report.id or ""))
 
 
 def _measured_first(row: ScaleRow) -> bool:

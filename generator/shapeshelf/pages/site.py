@@ -21,6 +21,7 @@ from shapeshelf.pages.history import Change, last_changes
 from shapeshelf.pages.home import CompoundLine, compound_line, home_view
 from shapeshelf.pages.json_ld import json_ld
 from shapeshelf.pages.lookup_index import by_name
+from shapeshelf.pages.methods import methods_view
 from shapeshelf.pages.model import SiteFile, SitePage, Standing
 from shapeshelf.pages.protocols import (
     ProtocolView,
@@ -28,7 +29,7 @@ from shapeshelf.pages.protocols import (
     is_markdown,
     protocol_views,
 )
-from shapeshelf.pages.rendering import render
+from shapeshelf.pages.rendering import fill, render, templates_dir
 from shapeshelf.pages.scripts import site_script
 from shapeshelf.pages.shapes import ShapeView, overview, shape_views
 from shapeshelf.pages.start import start_view
@@ -59,6 +60,18 @@ def site_pages(
     yield from _protocol_pages(catalogue, protocols)
     for report in reports:
         yield from _compound_pages(report, catalogue, changes, standing)
+
+
+def handwritten_pages() -> Iterator[tuple[str, str]]:
+    """Yield each hand-written page: its path, ``methods.md``, and its Markdown.
+
+    A page may import parts and print values of ``methods``, as every part does.
+    """
+    folder = templates_dir() / "pages"
+    for path in sorted(folder.rglob("*.md")):
+        name = path.relative_to(folder).as_posix()
+        root = addresses.root_from(name.removesuffix(".md") + "/")
+        yield name, fill(path.read_text("utf-8"), root=root, methods=methods_view())
 
 
 def site_files(

@@ -6,10 +6,12 @@ from dataclasses import dataclass
 from markupsafe import Markup
 
 from shapeshelf.catalogue.model import Catalogue
+from shapeshelf.pages.anchors import value_anchors
 from shapeshelf.pages.centres import AngleView, angle_view
 from shapeshelf.pages.drawings import bench_markup
-from shapeshelf.pages.home import CompoundLine, compound_line
+from shapeshelf.pages.home import CompoundLine, compound_line, first_compounds
 from shapeshelf.pages.lookup_index import by_name
+from shapeshelf.pages.typesetting import notation_markup
 from shapeshelf.report.model import AngleRow, Basis, CompoundReport
 
 
@@ -19,7 +21,7 @@ class ExampleView:
 
     line: CompoundLine
     shape: str
-    notation: str
+    notation: Markup
     angle: AngleView | None
     drawing: Markup
 
@@ -43,7 +45,6 @@ class StartView:
     trust: tuple[TrustView, ...]
     cautioned: int
     total: int
-    example_id: str
 
 
 def start_view(catalogue: Catalogue, reports: Sequence[CompoundReport]) -> StartView:
@@ -51,17 +52,12 @@ def start_view(catalogue: Catalogue, reports: Sequence[CompoundReport]) -> Start
     chosen = [report for report in by_name(reports) if report.entry and report.entry.start_here]
     example = _example(chosen or list(reports))
     return StartView(
-        compounds=tuple(compound_line(report, _reason(report)) for report in chosen),
+        compounds=first_compounds(reports),
         example=_example_view(example, catalogue) if example else None,
         trust=_trust(reports),
         cautioned=sum(bool(report.cautions) for report in reports),
         total=len(reports),
-        example_id=(example.id or "") if example else "",
     )
-
-
-def _reason(report: CompoundReport) -> str:
-    return (report.entry.start_here if report.entry else None) or ""
 
 
 def _example(reports: Sequence[CompoundReport]) -> CompoundReport | None:
@@ -78,11 +74,13 @@ def _tells(report: CompoundReport) -> tuple[int, int, int]:
 
 def _example_view(report: CompoundReport, catalogue: Catalogue) -> ExampleView:
     rows = sorted(_angles(report), key=lambda row: row.degrees.basis is not Basis.MEASURED)
+    anchors = value_anchors(report)
+    views = [angle_view(row, catalogue.sources, anchors.get(row.atoms, "")) for row in rows[:1]]
     return ExampleView(
         line=compound_line(report, ""),
         shape=report.shape or "",
-        notation=report.centres[0].centre.notation if report.centres else "",
-        angle=angle_view(rows[0], catalogue.sources) if rows else None,
+        notation=notation_markup(report.centres[0].centre.notation if report.centres else ""),
+        angle=views[0] if views else None,
         drawing=bench_markup(report),
     )
 

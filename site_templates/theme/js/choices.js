@@ -1,5 +1,6 @@
 // The filters beside the table: one field set a group, a count beside every choice.
 
+import { groupNode, hybridNode } from "./chemistry.js";
 import { GROUPS } from "./facets.js";
 import { make } from "./nodes.js";
 
@@ -25,7 +26,7 @@ function fieldFor(group, values) {
     make("legend", { class: "unseen" }, `${group.label}, ${MODES[group.mode]}`),
     ...lines.map(({ label }) => label),
   );
-  const summary = make("summary", {}, group.label, " ", make("small", {}, MODES[group.mode]), chosen);
+  const summary = make("summary", { "data-term": group.term }, group.label, " ", make("small", {}, MODES[group.mode]), chosen);
   const fold = make("details", { class: "choices__fold", "data-group": group.key, open: OPEN.has(group.key) }, summary, set);
   return { key: group.key, fold, lines, chosen };
 }
@@ -37,7 +38,8 @@ function lineFor(group, value) {
 }
 
 function worded({ key }, value) {
-  return key === "group" ? value.replace("inf", "∞") : value;
+  if (key === "group") return groupNode(value);
+  return key === "hybrid" ? hybridNode(value) : value;
 }
 
 function showField({ lines, chosen, fold }, values, counts) {

@@ -1,35 +1,48 @@
 // The columns of the lookup's table: what each shows, copies and is sorted by.
 
-import { formulaNode, formulaText, groupNode } from "./chemistry.js";
+import { formulaNode, formulaText, groupNode, hybridNode } from "./chemistry.js";
+import { make } from "./nodes.js";
 
 const USUAL = ["formula", "shape", "angle", "polarity", "dipole", "group", "cas", "code"];
 const NOTHING = "–";
 
-/** Every column: `text` to copy and sort, `value` where a number sorts, `node` where it is set. */
+/** Every column: `text` to copy and sort, `value` where a number sorts, `node` where it is set, its `term`. */
 const COLUMNS = [
   { key: "name", label: "Name", text: ({ row }) => row.name },
   {
     key: "formula", label: "Formula", text: ({ row }) => formulaText(row.formula, row.charge),
     node: ({ row }) => formulaNode(row.formula, row.charge),
   },
-  { key: "shape", label: "Shape", text: ({ row }) => row.shape },
-  { key: "angle", label: "Key angle, °", text: ({ row }) => row.angle, value: ({ row }) => number(row.angle) },
-  { key: "polarity", label: "Polarity", text: ({ row }) => row.polarity },
+  { key: "shape", label: "Shape", term: "shape", text: ({ row }) => row.shape },
   {
-    key: "dipole", label: "Dipole, D", text: ({ facts }) => fixed(facts.dipole, 2),
+    key: "angle", label: "Key angle, °", term: "bond-angle", text: ({ row }) => row.angle,
+    value: ({ row }) => number(row.angle),
+  },
+  { key: "polarity", label: "Polarity", term: "polar", text: ({ row }) => row.polarity },
+  {
+    key: "dipole", label: "Dipole, D", term: "dipole-moment", text: ({ facts }) => fixed(facts.dipole, 2),
     value: ({ facts }) => facts.dipole,
   },
-  { key: "group", label: "Point group", text: ({ row }) => row.group, node: ({ row }) => groupNode(row.group) },
-  { key: "mass", label: "Molar mass, g/mol", text: ({ facts }) => fixed(facts.mass, 2), value: ({ facts }) => facts.mass },
-  { key: "neighbours", label: "Neighbours", text: ({ facts }) => listed(facts.sites, 1) },
-  { key: "pairs", label: "Lone pairs", text: ({ facts }) => listed(facts.sites, 2) },
-  { key: "hybrid", label: "Hybridisation", text: ({ facts }) => listed(facts.sites, 3) },
   {
-    key: "stretches", label: "IR stretches", text: ({ facts }) => String(facts.stretches),
+    key: "group", label: "Point group", term: "point-group", text: ({ row }) => row.group,
+    node: ({ row }) => groupNode(row.group),
+  },
+  { key: "mass", label: "Molar mass, g/mol", text: ({ facts }) => fixed(facts.mass, 2), value: ({ facts }) => facts.mass },
+  { key: "neighbours", label: "Neighbours", term: "neighbours", text: ({ facts }) => listed(facts.sites, 1) },
+  { key: "pairs", label: "Lone pairs", term: "lone-pair", text: ({ facts }) => listed(facts.sites, 2) },
+  {
+    key: "hybrid", label: "Hybridisation", term: "hybridisation", text: ({ facts }) => listed(facts.sites, 3),
+    node: ({ facts }) => hybridNode(listed(facts.sites, 3) || NOTHING),
+  },
+  {
+    key: "stretches", label: "IR stretches", term: "infrared-active", text: ({ facts }) => String(facts.stretches),
     value: ({ facts }) => facts.stretches,
   },
   { key: "signals", label: "NMR signals", text: ({ facts }) => facts.signals.map(([n, count]) => `${n} ${count}`).join(", ") },
-  { key: "basis", label: "Basis", text: ({ facts }) => facts.bases.join(", ") },
+  {
+    key: "basis", label: "Basis", term: "basis", text: ({ facts }) => facts.bases.join(", "),
+    node: ({ facts }) => badgesNode(facts.bases),
+  },
   { key: "cas", label: "CAS", text: ({ row }) => row.cas },
   { key: "code", label: "Code", text: ({ row }) => row.code },
   { key: "tags", label: "Tags", text: ({ row }) => row.tags.join(", ") },
@@ -75,6 +88,11 @@ export function comparison(column, down) {
 export function cellContent(column, compound) {
   if (column.node) return column.node(compound);
   return column.text(compound) || NOTHING;
+}
+
+function badgesNode(bases) {
+  const badges = bases.map((basis) => make("span", { class: `basis basis--${basis}`, "data-term": basis }, basis));
+  return make("span", { class: "badges" }, ...badges);
 }
 
 function listed(sites, at) {

@@ -1,5 +1,12 @@
 // Rows of several compounds lined up by their keys, and whether they differ.
 
+/** The terms of the glossary that rows are called by, by their keys. */
+export const ROW_TERMS = {
+  shape: "shape", neighbours: "neighbours", pairs: "lone-pair", notation: "axe-notation",
+  hybrid: "hybridisation", group: "point-group", polarity: "polar", dipole: "dipole-moment",
+  stretches: "infrared-active", infrared: "infrared-active", raman: "raman-active", cautions: "caution",
+};
+
 /** `[[group, [{ key, label, cells }]]]`; a cell holds the rows of one compound with that key. */
 export function linedUp(compounds) {
   const groups = new Map();

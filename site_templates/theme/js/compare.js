@@ -3,9 +3,10 @@
 import { formulaNode, groupNode, hybridNode } from "./chemistry.js";
 import { loadData, pageAddress } from "./data.js";
 import { addField } from "./compare-field.js";
-import { differs, linedUp } from "./compare-rows.js";
+import { differs, linedUp, ROW_TERMS } from "./compare-rows.js";
 import { make } from "./nodes.js";
 import { compareAddress, keepPicks, MOST } from "./picks.js";
+import { passRepeatedBadges } from "./terms.js";
 
 const ROOM = 300;
 const ROOM_FOR_MANY = 215;
@@ -14,6 +15,7 @@ const SHARE_OF_A_PHONE = 0.33;
 const OWN = new Set(["cas", "code", "kept", "owner"]);
 const SETTERS = { group: groupNode, hybrid: hybridNode, notation: (text) => formulaNode(text, 0) };
 const LARGEST_FACTOR = 1.6;
+const BADGES = { recalled: ["measured", "recalled"] };
 
 export async function comparePage(section) {
   if (!section) return;
@@ -56,7 +58,7 @@ async function show(page) {
   page.status.textContent = words(compounds.length, missing);
   page.table.hidden = compounds.length === 0;
   drawHead(page, compounds);
-  drawRows(page.table, compounds);
+  drawRows(page, compounds);
 }
 
 function words(count, missing) {
@@ -95,30 +97,37 @@ function drawing(one, factor) {
   return holder;
 }
 
-function drawRows(table, compounds) {
+function drawRows({ table, root }, compounds) {
   const bodies = linedUp(compounds).map(([group, rows]) => {
     const head = make("th", { scope: "rowgroup", colspan: compounds.length + 1 }, group);
-    return make("tbody", {}, make("tr", { class: "grid__group" }, head), ...rows.map(line));
+    return make("tbody", {}, make("tr", { class: "grid__group" }, head), ...rows.map((row) => line(row, root)));
   });
   for (const body of [...table.tBodies]) body.remove();
   table.append(...bodies);
+  passRepeatedBadges();
 }
 
 /** What each compound has of its own, such as its CAS number, is no difference worth a mark. */
-function line({ key, label, cells }) {
+function line({ key, label, cells }, root) {
   const unlike = !OWN.has(key) && differs(cells);
   const mark = unlike ? make("span", { class: "unlike" }, "differs") : "";
   return make(
     "tr", { class: unlike ? "compare__unlike" : "compare__alike" },
-    make("th", { scope: "row" }, label, " ", mark),
-    ...cells.map((rows) => make("td", {}, ...cellParts(rows))),
+    make("th", { scope: "row" }, ROW_TERMS[key] ? termNode(ROW_TERMS[key], label, root) : label, " ", mark),
+    ...cells.map((rows) => make("td", {}, ...cellParts(rows, root))),
   );
 }
 
-function cellParts(rows) {
+function cellParts(rows, root) {
   if (!rows.length) return [make("span", { class: "nil" }, "–")];
   return rows.map(({ key, text, basis }) => {
-    const badge = basis ? make("span", { class: `basis basis--${basis}` }, basis) : "";
-    return make("span", { class: "compare__value" }, SETTERS[key]?.(text) ?? text, " ", badge);
+    const badges = (BADGES[basis] ?? [basis]).filter(Boolean);
+    const set = badges.flatMap((one) => [" ", termNode(one, one, root, `basis basis--${one}`)]);
+    return make("span", { class: "compare__value" }, SETTERS[key]?.(text) ?? text, ...set);
   });
+}
+
+/** A link to the glossary that explains itself, as those that come with a page do. */
+function termNode(term, text, root, looks = "") {
+  return make("a", { class: `term ${looks}`.trim(), href: pageAddress(root, `glossary/#${term}`) }, text);
 }

@@ -21,6 +21,7 @@ export const GROUPS = [
 ];
 const SITE_GROUPS = GROUPS.filter((group) => group.site !== undefined);
 const OTHER_GROUPS = GROUPS.filter((group) => group.site === undefined);
+const SYMBOL = /[A-Z][a-z]?/g;
 const BASIS_ORDER = ["measured", "calculated", "supplied", "model"];
 
 /** The sets of compounds behind every choice: `prepareFacets(index, facets)`. */
@@ -29,12 +30,12 @@ export function prepareFacets(index, facets) {
   const { columns, words } = index;
   const held = Object.fromEntries(GROUPS.map(({ key }) => [key, new Map()]));
   const add = (key, value, item) => {
-    if (!held[key].has(value)) held[key].set(value, none(size));
-    put(held[key].get(value), item);
+    const set = held[key].get(value);
+    put(set ?? held[key].set(value, none(size)).get(value), item);
   };
   const kinds = facets.words.sites.map(() => none(size));
   for (let item = 0; item < size; item += 1) {
-    for (const element of elementsOf(columns.formula[item])) add("element", element, item);
+    for (const [symbol] of columns.formula[item].matchAll(SYMBOL)) add("element", symbol, item);
     add("group", words.group[columns.group[item]], item);
     add("polarity", words.polarity[columns.polarity[item]], item);
     for (const tag of columns.tags[item] || []) add("tag", words.tags[tag], item);
@@ -108,8 +109,4 @@ function valuesOf(held, sites) {
 function siteText(value) {
   if (value === null) return "not counted";
   return value === "" ? "none" : String(value);
-}
-
-function elementsOf(formula) {
-  return new Set([...formula.matchAll(/[A-Z][a-z]?/g)].map(([symbol]) => symbol));
 }

@@ -3,9 +3,8 @@
 import { pageAddress } from "./data.js";
 import { find } from "./find.js";
 import { showGlyphs } from "./glyphs.js";
-import { loadIndex } from "./index.js";
+import { loadIndex, prepareLater } from "./index.js";
 import { resultParts } from "./results.js";
-import { readyForSlips } from "./slips.js";
 
 const MOST = 8;
 
@@ -23,12 +22,6 @@ export function findField(form) {
     if (!form.contains(event.relatedTarget)) close(state);
   });
   document.addEventListener("keydown", (event) => onSlash(event, input));
-}
-
-/** What misspelt names need is made in a quiet moment, before it is wanted. */
-function prepareLater(index) {
-  const idle = globalThis.requestIdleCallback ?? ((run) => setTimeout(run, 200));
-  idle(() => readyForSlips(index));
 }
 
 function rootOf(form) {
@@ -92,6 +85,7 @@ function nothing() {
   return item;
 }
 
+/** Typing does not wait for the list to be laid out: it scrolls with the next frame. */
 function choose(state, at) {
   state.active = at;
   const options = [...state.list.querySelectorAll(".result:not(.result--none)")];
@@ -101,7 +95,7 @@ function choose(state, at) {
     return;
   }
   state.input.setAttribute("aria-activedescendant", options[at].id);
-  options[at].scrollIntoView({ block: "nearest" });
+  requestAnimationFrame(() => options[at].scrollIntoView({ block: "nearest" }));
 }
 
 function close(state) {

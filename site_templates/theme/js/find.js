@@ -1,9 +1,10 @@
 // Which items answer a query, best first. An exact identifier always stands before any likeness.
 
 import { readFormula } from "./formula.js";
-import { formulasOf, itemAt, keyAt } from "./index.js";
+import { itemAt, keyAt } from "./index.js";
 import { casDigits, foldCode, foldName } from "./normalise.js";
 import { misspelt } from "./slips.js";
+import { beginning, eachLineWith } from "./words.js";
 
 const EXACT = 1000;
 const FORMULA = 900;
@@ -16,6 +17,8 @@ const WORD_START = 300;
 const INSIDE = 200;
 const FACTS = 150;
 const LONGEST = 90;
+const LONGEST_AROUND = 40;
+const LEAST_INSIDE = 3;
 const LEAST_KEY_LETTERS = 6;
 
 /** Items that answer as plain objects, best first, at most `most`. */
@@ -34,7 +37,7 @@ export function findItems(index, text) {
   identifiers(index, query, give);
   formulas(index, query, give);
   names(index, query, give);
-  facts(index, query, give);
+  words(index, query, give);
   const found = ordered(scores);
   if (found.length) return found;
   misspelt(index, query, give);
@@ -66,14 +69,14 @@ function ordered(scores) {
 }
 
 function identifiers(index, query, give) {
-  const { codes, smiles } = index.exact;
+  const { codes, codeList, smiles } = index.exact;
   for (const item of codes.get(query.code) ?? []) give(item, EXACT);
   const plain = /^[A-Za-z0-9]*$/.test(query.text);
   for (const item of smiles.get(query.text) ?? []) give(item, plain ? PLAIN_SMILES : EXACT);
   starting(index.digits, query.digits, give);
   if (query.code.length > 1) {
-    for (const [code, items] of codes) {
-      if (code.startsWith(query.code)) for (const item of items) give(item, IDENTIFIER_START);
+    for (const code of codeList.slice(...beginning(codeList, query.code))) {
+      for (const item of codes.get(code)) give(item, IDENTIFIER_START);
     }
   }
   keys(index, query.text.toUpperCase(), give);
@@ -98,62 +101,74 @@ function keys(index, start, give) {
 }
 
 function formulas(index, query, give) {
-  if (!query.formulas.length) return;
-  const held = formulasOf(index);
   for (const { key, charge } of query.formulas) {
-    for (const [item, its] of held.get(key) ?? []) {
+    for (const [item, its] of index.formulas.get(key) ?? []) {
       give(item, (charge ?? 0) === its ? FORMULA : FORMULA_OTHER_CHARGE);
     }
   }
 }
 
-function names(index, { name, words, close }, give) {
-  if (!name) return;
-  const lines = index.names;
-  const tight = lines.close;
-  eachAt(lines, `\n${name}`, (item, end, length) => {
-    give(item, lines.text[end] === "\n" ? NAME : NAME_START - Math.min(length, LONGEST));
+/** Names that begin with what is typed or hold it, spaces left out; best with its spaces right. */
+function names({ names: { spaced, close: tight, items } }, { name, close }, give) {
+  if (!close) return;
+  eachAt(tight, close.length < LEAST_INSIDE ? `\n${close}` : close, (line, isBeginning) => {
+    const size = lengthOf(tight, line);
+    if (!isBeginning) {
+      give(items[line], INSIDE - Math.min(size, LONGEST_AROUND));
+      return;
+    }
+    const score = size === close.length ? NAME : NAME_START - Math.min(size, LONGEST);
+    give(items[line], spaced.text.startsWith(name, spaced.starts[line]) ? score : score - 1);
   });
-  eachAt(tight, `\n${close}`, (item, end, length) => {
-    give(item, tight.text[end] === "\n" ? NAME - 1 : NAME_START - 1 - Math.min(length, LONGEST));
-  });
-  everyWord(lines, words, (item, length) => give(item, WORD_START - Math.min(length, LONGEST)));
-  if (close.length < 3) return;
-  eachAt(tight, close, (item, _, length) => give(item, INSIDE - Math.min(length, 40)));
 }
 
-function facts(index, { words }, give) {
-  everyWord(index.facts, words, (item) => give(item, FACTS));
-}
-
-/** Calls `visit(item, end, lineLength)` for every line that holds `piece`, at its first place. */
-function eachAt({ text, items, starts }, piece, visit) {
+/** Calls `visit(line, isBeginning)` for every line that holds `piece`, at its first place. */
+function eachAt({ text, starts }, piece, visit) {
   const shift = piece[0] === "\n" ? 1 : 0;
   let line = 0;
   for (let at = text.indexOf(piece); at >= 0; at = text.indexOf(piece, starts[line + 1] - 1)) {
     line = lineAt(starts, at + shift, line);
-    visit(items[line], at + piece.length, starts[line + 1] - starts[line] - 1);
+    visit(line, at + shift === starts[line]);
   }
 }
 
-/** Calls `visit(item, lineLength)` for every line in which each word begins a word. */
-function everyWord({ text, items, starts }, words, visit) {
-  if (!words.length) return;
-  const longest = words.reduce((a, b) => (b.length > a.length ? b : a));
-  const others = words.filter((word) => word !== longest);
-  let line = 0;
-  for (let at = text.indexOf(longest); at >= 0; at = text.indexOf(longest, at + 1)) {
-    if (text[at - 1] !== " " && text[at - 1] !== "\n") continue;
-    line = lineAt(starts, at, line);
-    const end = starts[line + 1] - 1;
-    if (others.length && !everyStarts(` ${text.slice(starts[line], end)}`, others)) continue;
-    visit(items[line], end - starts[line]);
-    at = end - 1;
+/** Items of which every word typed begins a word: of one name, or else of all names and facts. */
+function words(index, query, give) {
+  if (!query.words.length) return;
+  const { spaced, items } = index.names;
+  const metByLine = new Uint16Array(items.length);
+  const metByItem = new Uint16Array(index.total);
+  query.words.forEach((word, nth) => {
+    eachLineWith(index.vocabulary, word, (line) => {
+      step(metByLine, line, nth);
+      step(metByItem, items[line], nth);
+    });
+    eachWithFact(index, word, (item) => step(metByItem, item, nth));
+  });
+  const all = query.words.length;
+  metByLine.forEach((met, line) => {
+    if (met === all) give(items[line], WORD_START - Math.min(lengthOf(spaced, line), LONGEST));
+  });
+  metByItem.forEach((met, item) => met === all && give(item, FACTS));
+}
+
+/** Calls `visit(item)` for every compound whose shape, point group, polarity or tag has such a word. */
+function eachWithFact({ facts, columns }, word, visit) {
+  for (const [key, texts] of Object.entries(facts)) {
+    const fits = texts.map((parts) => parts.some((part) => part.startsWith(word)));
+    if (!fits.includes(true)) continue;
+    const has = key === "tags" ? (tags) => tags && tags.some((tag) => fits[tag]) : (fact) => fits[fact];
+    columns[key].forEach((held, item) => has(held) && visit(item));
   }
 }
 
-function everyStarts(line, words) {
-  return words.every((word) => line.includes(` ${word}`));
+/** One more word met, where all before it were. */
+function step(met, at, nth) {
+  if (met[at] === nth) met[at] = nth + 1;
+}
+
+function lengthOf({ starts }, line) {
+  return starts[line + 1] - starts[line] - 1;
 }
 
 /** The line that an offset is in; offsets only grow, so the search goes on from `line`. */

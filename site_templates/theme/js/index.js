@@ -3,8 +3,11 @@
 import { loadData } from "./data.js";
 import { formulaKey, readFormula } from "./formula.js";
 import { foldCode, foldLines, foldName } from "./normalise.js";
+import { slipsOf } from "./slips.js";
+import { wordsIn } from "./words.js";
 
 const USUAL_KEY_END = "-UHFFFAOYSA-N";
+const FACTS = ["shape", "group", "polarity", "tags"];
 const LIKE_A_FORMULA = /^(?:[A-Z][a-z]?\d*|[()[\]]\d*)+$/;
 
 let pending = null;
@@ -18,17 +21,39 @@ export function loadIndex(root) {
   return pending;
 }
 
-/** Compounds and all other entries numbered through, with what each is found by beside them. */
+/** What queries are held against, each part made when it is first wanted. */
+const PARTS = {
+  names: namesOf,
+  vocabulary: ({ names }) => wordsIn(names.spaced.text.slice(1, -1)),
+  exact: exactOf,
+  facts: factsOf,
+  digits: ({ columns }) => columns.cas.map((cas) => cas.replace(/-/g, "")),
+  formulas: formulasOf,
+  slips: slipsOf,
+};
+
+/** Compounds and all other entries numbered through, with what each is found by. */
 export function prepare(data) {
   const columns = data.compounds;
   const compounds = columns.id.length;
-  const total = compounds + data.entries.length;
-  const index = { data, columns, words: data.words, compounds, total, formulas: null, slips: null };
-  index.names = namesOf(index);
-  index.facts = factsOf(index, index.names);
-  index.exact = exactOf(index);
-  index.digits = columns.cas.map((cas) => cas.replace(/-/g, ""));
+  const index = { data, columns, words: data.words, compounds, total: compounds + data.entries.length };
+  for (const [name, make] of Object.entries(PARTS)) {
+    Object.defineProperty(index, name, {
+      configurable: true,
+      get() {
+        const value = make(index);
+        Object.defineProperty(index, name, { value });
+        return value;
+      },
+    });
+  }
   return index;
+}
+
+/** Make every part in a quiet moment of its own, before a query asks for it. */
+export function prepareLater(index) {
+  const idle = globalThis.requestIdleCallback ?? setTimeout;
+  for (const name of Object.keys(PARTS)) idle(() => index[name]);
 }
 
 /** One compound or other entry as a plain object. */
@@ -59,17 +84,13 @@ export function keyAt(index, item) {
   return key.length === 14 ? key + USUAL_KEY_END : key;
 }
 
-/** Compounds by composition, made when a formula is first asked for. */
-export function formulasOf(index) {
-  index.formulas ??= readFormulas(index);
-  return index.formulas;
-}
-
-function readFormulas({ columns, compounds }) {
+/** Compounds by composition. */
+function formulasOf({ columns, compounds }) {
   const found = new Map();
   const add = (key, item, charge) => {
-    if (!found.has(key)) found.set(key, []);
-    found.get(key).push([item, charge]);
+    const held = found.get(key);
+    if (held) held.push([item, charge]);
+    else found.set(key, [[item, charge]]);
   };
   for (let item = 0; item < compounds; item += 1) {
     add(formulaKey(columns.formula[item]), item, columns.charge[item]);
@@ -80,7 +101,7 @@ function readFormulas({ columns, compounds }) {
   return found;
 }
 
-/** Every name of every item, one a line. */
+/** Every name of every item, one a line, with spaces between words and without; whose each is. */
 function namesOf({ columns, compounds, data, total }) {
   const texts = [];
   const items = [];
@@ -93,30 +114,30 @@ function namesOf({ columns, compounds, data, total }) {
     }
   }
   const text = `\n${foldLines(texts.join("\n"))}\n`.replace(/ *\n */g, "\n");
-  return { ...linesIn(text, items), close: linesIn(text.replace(/ /g, ""), items) };
+  const count = items.length;
+  return { items, spaced: linesIn(text, count), close: linesIn(text.replace(/ /g, ""), count) };
 }
 
-/** One line an item: all its names, then shape, point group, polarity and tags. */
-function factsOf({ columns, compounds, words, total }, { text, items }) {
-  const folded = Object.fromEntries(Object.entries(words).map(([key, list]) => [key, list.map(foldName)]));
-  const parts = Array.from({ length: total }, () => []);
-  text.slice(1, -1).split("\n").forEach((line, at) => parts[items[at]].push(line));
-  for (let item = 0; item < compounds; item += 1) {
-    for (const key of ["shape", "group", "polarity"]) parts[item].push(folded[key][columns[key][item]]);
-    for (const tag of columns.tags[item] || []) parts[item].push(folded.tags[tag]);
-  }
-  return linesIn(`\n${parts.map((part) => part.join(" ")).join("\n")}\n`, parts.map((_, item) => item));
+/** How every shape, point group, polarity and tag may begin, in the order of the index's lists. */
+function factsOf({ words }) {
+  return Object.fromEntries(FACTS.map((key) => [key, words[key].map(beginnings)]));
 }
 
-/** Text with a line end before and after every line, where each begins, and whose each is. */
-function linesIn(text, items) {
-  const starts = new Int32Array(items.length + 1);
+/** `see-saw`: see, saw and seesaw. */
+function beginnings(text) {
+  const words = foldName(text).split(" ");
+  return [...words, words.join("")];
+}
+
+/** Text with a line end before and after every line, and where each begins. */
+function linesIn(text, count) {
+  const starts = new Int32Array(count + 1);
   let at = 0;
-  for (let line = 0; line <= items.length; line += 1) {
+  for (let line = 0; line <= count; line += 1) {
     starts[line] = at + 1;
     at = text.indexOf("\n", at + 1);
   }
-  return { text, items, starts };
+  return { text, starts };
 }
 
 /** Identifiers that are asked for whole: codes, ids, symbols, SMILES. */
@@ -124,9 +145,9 @@ function exactOf({ columns, compounds, data }) {
   const codes = new Map();
   const smiles = new Map();
   const add = (map, text, item) => {
-    if (!text) return;
-    if (!map.has(text)) map.set(text, []);
-    map.get(text).push(item);
+    const held = map.get(text);
+    if (held) held.push(item);
+    else if (text) map.set(text, [item]);
   };
   for (let item = 0; item < compounds; item += 1) {
     add(codes, foldCode(columns.id[item]), item);
@@ -138,5 +159,5 @@ function exactOf({ columns, compounds, data }) {
     if (entry.kind === "term") return;
     for (const text of entry.also) add(codes, foldCode(text), compounds + at);
   });
-  return { codes, smiles };
+  return { codes, codeList: [...codes.keys()].sort(), smiles };
 }

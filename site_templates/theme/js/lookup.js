@@ -7,14 +7,15 @@ import { loadData, pageAddress } from "./data.js";
 import { filterBy, prepareFacets } from "./facets.js";
 import { findItems } from "./find.js";
 import { showGlyphs } from "./glyphs.js";
-import { itemAt, loadIndex } from "./index.js";
+import { itemAt, loadIndex, prepareLater } from "./index.js";
 import { copyTable, downloadTable } from "./lookup-output.js";
 import { make } from "./nodes.js";
 import { compareAddress, keepPicks, MOST, pickedIds } from "./picks.js";
 import { RANGE_KEYS, rangeSet } from "./ranges.js";
-import { readyForSlips } from "./slips.js";
 import { isFiltered, searchFor, stateFrom } from "./state.js";
 import { AT_ONCE, drawMore, drawTable } from "./table.js";
+
+const A_PAUSE_MS = 150;
 
 export async function lookupPage(section) {
   if (!section) return;
@@ -62,13 +63,14 @@ function open(page, index, facets) {
   answer(page);
   drawNow(page);
   page.section.dataset.ready = "";
-  (globalThis.requestIdleCallback ?? setTimeout)(() => readyForSlips(index));
+  prepareLater(index);
 }
 
 function listen(page) {
   page.input.addEventListener("input", () => changed(page));
   page.input.form.addEventListener("submit", (event) => {
     event.preventDefault();
+    keep(page);
     page.table.querySelector("tbody a")?.click();
   });
   page.ranges.addEventListener("input", () => changed(page));
@@ -82,13 +84,14 @@ function listen(page) {
   addEventListener("popstate", () => restore(page));
 }
 
-/** Read what stands in the fields and answer; the address follows with the next frame. */
+/** Read what stands in the fields and answer. */
 function changed(page) {
   const asked = {};
   for (const key of RANGE_KEYS) {
     const text = page.ranges.elements[key]?.value.trim();
     if (text) asked[key] = text;
   }
+  if (!asked.signals) delete asked.nucleus;
   page.state = {
     text: page.input.value,
     chosen: page.choices.read(),
@@ -99,7 +102,8 @@ function changed(page) {
   draw(page);
 }
 
-function keep({ state }) {
+function keep({ state, pause }) {
+  clearTimeout(pause);
   history.replaceState(null, "", location.pathname + searchFor(state) + location.hash);
 }
 
@@ -110,12 +114,13 @@ function restore(page) {
   draw(page);
 }
 
-/** Answer at once, draw with the next frame: typing never waits for the table. */
+/** Answer at once, draw with the next frame: typing never waits for the table, nor for the address. */
 function draw(page) {
   answer(page);
+  clearTimeout(page.pause);
+  page.pause = setTimeout(() => keep(page), A_PAUSE_MS);
   page.frame ??= requestAnimationFrame(() => {
     page.frame = null;
-    keep(page);
     drawNow(page);
   });
 }
@@ -174,7 +179,8 @@ function tell(page) {
   page.status.textContent = length === 1 ? "1 compound" : `${length} compounds`;
   const drawn = page.table.tBodies[0].rows.length;
   page.more.hidden = drawn >= length;
-  page.more.textContent = `Show ${Math.min(AT_ONCE, length - drawn)} more of ${length - drawn}`;
+  const left = length - drawn;
+  page.more.textContent = left > AT_ONCE ? `Show ${AT_ONCE} more of ${left}` : `Show ${left} more`;
   page.clear.hidden = !isFiltered(page.state) && !page.state.text;
   tellPicks(page);
 }

@@ -7,7 +7,7 @@ const GREEK = {
 };
 
 const ASCII = /^[\0-\x7f]*$/;
-const OUTSIDE_ASCII = /[^\n]*[^\0-\x7f][^\n]*/g;
+const OUTSIDE_ASCII = /[^\0-\x7f]+/g;
 
 const SPELLINGS = [
   [/sulph/g, "sulf"],
@@ -30,9 +30,9 @@ export function foldLines(text) {
   return folded.replace(/'/g, "").replace(/[^a-z0-9\n]+/g, " ");
 }
 
-/** A line with letters beyond ASCII; most lines have none and are spared this. */
-function foldLetters(line) {
-  const spelled = line.toLowerCase().replace(/[α-ωµ]/gu, (letter) => GREEK[letter] ?? letter);
+/** Letters beyond ASCII in plain ones; most text has none and is spared this. */
+function foldLetters(letters) {
+  const spelled = letters.toLowerCase().replace(/[α-ωµ]/gu, (letter) => GREEK[letter] ?? letter);
   return plainDigits(spelled).normalize("NFKD").replace(/[\p{M}\u2019\u2032]/gu, "");
 }
 

@@ -7,14 +7,14 @@ const A_WORD_LEFT = 1;
 /** Gives items whose words, or whose name written as one word, are within a slip or two. */
 export function misspelt(index, { words, close }, give) {
   if (close.length < 4) return;
-  readyForSlips(index);
-  byWords(index.slips, words, give);
-  byWhole(index.names, index.slips, close, give);
+  byWords(index, words, give);
+  byWhole(index, close, give);
 }
 
-/** Make what misspelt names are held against, ahead of the first of them. */
-export function readyForSlips(index) {
-  index.slips ??= vocabularyOf(index.names);
+/** What misspelt names are held against: the letters of every word, and names without spaces. */
+export function slipsOf({ vocabulary, names }) {
+  const wholes = names.close.text.slice(1, -1).split("\n");
+  return { masks: masksOf(vocabulary.list), wholes, wholeMasks: masksOf(wholes) };
 }
 
 function slipsFor(word) {
@@ -23,17 +23,14 @@ function slipsFor(word) {
 }
 
 /** Every query word must be like a word of the same line; the fewer slips the better. */
-function byWords({ words: known, masks, lines, items, sizes }, words, give) {
+function byWords({ vocabulary, names, slips: { masks } }, words, give) {
+  const { list, from, lines, sizes } = vocabulary;
   let open = null;
   for (const word of words) {
     const best = new Map();
-    const limit = slipsFor(word);
-    const mask = maskOf(word);
-    known.forEach((held, at) => {
-      if (held.length < word.length - limit || bits(mask & ~masks[at]) > limit) return;
-      const slips = distance(word, held, limit);
-      if (slips > limit) return;
-      for (const line of lines[at]) {
+    eachLike(word, list, masks, (n, slips) => {
+      for (let at = from[n]; at < from[n + 1]; at += 1) {
+        const line = lines[at];
         if (open && !open.has(line)) continue;
         const sum = slips + (open ? open.get(line) : 0);
         if (sum < (best.get(line) ?? Infinity)) best.set(line, sum);
@@ -41,45 +38,33 @@ function byWords({ words: known, masks, lines, items, sizes }, words, give) {
     });
     open = best;
   }
-  for (const [line, slips] of open ?? []) {
-    const left = Math.min(sizes[line] - words.length, 8);
-    give(items[line], Math.max(1, BEST - A_SLIP * slips - A_WORD_LEFT * left));
-  }
+  for (const [line, slips] of open ?? []) give(names.items[line], scoreOf(slips, sizes[line] - words.length));
 }
 
 /** The query without its spaces against names without theirs, for words run together or parted. */
-function byWhole({ items }, { wholes, wholeMasks }, close, give) {
-  const limit = slipsFor(close);
-  const mask = maskOf(close);
-  wholes.forEach((held, line) => {
-    if (held.length < close.length - limit || bits(mask & ~wholeMasks[line]) > limit) return;
-    const slips = distance(close, held, limit);
-    if (slips > limit) return;
-    const left = Math.min(8, Math.max(0, held.length - close.length));
-    give(items[line], Math.max(1, BEST - A_SLIP * slips - A_WORD_LEFT * left));
+function byWhole({ names, slips: { wholes, wholeMasks } }, close, give) {
+  eachLike(close, wholes, wholeMasks, (line, slips) => {
+    give(names.items[line], scoreOf(slips, Math.max(0, wholes[line].length - close.length)));
   });
 }
 
-function vocabularyOf({ text, items }) {
-  const numbers = new Map();
-  const lines = [];
-  const sizes = [];
-  const wholes = [];
-  text.slice(1, -1).split("\n").forEach((line, number) => {
-    const parts = line.split(" ");
-    sizes.push(parts.length);
-    wholes.push(parts.join(""));
-    for (const part of parts) {
-      if (!numbers.has(part)) {
-        numbers.set(part, lines.length);
-        lines.push([]);
-      }
-      const held = lines[numbers.get(part)];
-      if (held.at(-1) !== number) held.push(number);
-    }
-  });
-  const words = [...numbers.keys()];
-  return { words, masks: words.map(maskOf), lines, items, sizes, wholes, wholeMasks: wholes.map(maskOf) };
+/** Calls `visit(n, slips)` for each text of a list that begins like `typed`, a slip or two aside. */
+function eachLike(typed, list, masks, visit) {
+  const limit = slipsFor(typed);
+  const mask = maskOf(typed);
+  for (let n = 0; n < list.length; n += 1) {
+    if (list[n].length < typed.length - limit || bits(mask & ~masks[n]) > limit) continue;
+    const slips = distance(typed, list[n], limit);
+    if (slips <= limit) visit(n, slips);
+  }
+}
+
+function scoreOf(slips, left) {
+  return Math.max(1, BEST - A_SLIP * slips - A_WORD_LEFT * Math.min(left, 8));
+}
+
+function masksOf(texts) {
+  return Int32Array.from(texts, maskOf);
 }
 
 /** One bit a letter, digits sharing six, so that hopeless words are passed over quickly. */

@@ -23,8 +23,8 @@ export function drawMore(table, { columns, compounds, root, picks }, most = AT_O
 }
 
 function headLine(columns, sort, sortBy) {
-  const cells = columns.map(({ key, label }) => {
-    const button = make("button", { type: "button", class: "sorter" }, label);
+  const cells = columns.map(({ key, label, term }) => {
+    const button = make("button", { type: "button", class: "sorter", "data-term": term }, label);
     button.addEventListener("click", () => sortBy(key));
     return make("th", { scope: "col", "aria-sort": sortState(key, sort) }, button);
   });

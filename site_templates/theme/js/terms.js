@@ -4,47 +4,70 @@ import { loadData } from "./data.js";
 import { make } from "./nodes.js";
 
 const NOTE = "term-note";
+const TERMS = "a.term, [data-term]";
+const REST_MS = 250;
+const ROOM = 8;
 
-/** Watches every link to a term of the glossary; `root` is the way to the site's root. */
+/** Watches everything that stands for a term of the glossary; `root` is the way to the site's root. */
 export function explainTerms(root) {
-  const state = { root, note: null, link: null };
-  for (const kind of ["mouseover", "focusin"]) {
-    document.addEventListener(kind, (event) => {
-      const link = event.target.closest?.("a.term");
-      if (link) show(state, link);
-      else if (kind === "focusin" || !event.target.closest?.(`#${NOTE}`)) hide(state);
-    });
-  }
+  const state = { root, note: null, place: null, resting: null };
+  passRepeatedBadges();
+  document.addEventListener("pointerover", ({ target, pointerType }) => pointerType === "mouse" && rest(state, target));
+  document.addEventListener("focusin", ({ target }) => {
+    const place = target.closest(TERMS);
+    if (place?.matches(":focus-visible")) show(state, place);
+    else hide(state);
+  });
   document.addEventListener("keydown", (event) => event.key === "Escape" && hide(state));
-  addEventListener("scroll", () => hide(state), { passive: true, capture: true });
+  addEventListener("scroll", () => stand(state), { passive: true, capture: true });
 }
 
-async function show(state, link) {
-  if (state.link === link) return;
+/** A page has many badges of one kind: the tab key stops at the first. */
+export function passRepeatedBadges() {
+  const met = new Set();
+  for (const badge of document.querySelectorAll("a.basis")) {
+    if (met.has(badge.hash)) badge.tabIndex = -1;
+    met.add(badge.hash);
+  }
+}
+
+/** The pointer has to rest, so that nothing flashes up on its way across a page. */
+function rest(state, target) {
+  clearTimeout(state.resting);
+  if (target.closest?.(`#${NOTE}`)) return;
+  const place = target.closest?.(TERMS);
+  if (place !== state.place) hide(state);
+  if (place) state.resting = setTimeout(() => show(state, place), REST_MS);
+}
+
+async function show(state, place) {
+  if (state.place === place) return;
   hide(state);
-  state.link = link;
+  state.place = place;
   const texts = await loadData(state.root, "glossary").catch(() => ({}));
-  const text = texts[link.hash.slice(1)];
-  if (!text || state.link !== link) return;
+  const text = texts[place.dataset.term ?? place.hash.slice(1)];
+  if (!text || state.place !== place) return;
   state.note = make("div", { id: NOTE, class: "term-note", role: "tooltip" }, text);
   document.body.append(state.note);
-  place(state.note, link.getBoundingClientRect());
-  link.setAttribute("aria-describedby", NOTE);
+  stand(state);
+  place.setAttribute("aria-describedby", NOTE);
 }
 
 function hide(state) {
+  clearTimeout(state.resting);
   state.note?.remove();
-  state.link?.removeAttribute("aria-describedby");
+  state.place?.removeAttribute("aria-describedby");
   state.note = null;
-  state.link = null;
+  state.place = null;
 }
 
-/** Below the term, within the window; above it where there is no room below. */
-function place(note, at) {
-  const room = 8;
+/** Above the term wherever that scrolls, clear of what is read next; below it where there is no room. */
+function stand({ note, place }) {
+  if (!note) return;
+  const at = place.getBoundingClientRect();
   const { width, height } = note.getBoundingClientRect();
-  const left = Math.max(room, Math.min(at.left, document.documentElement.clientWidth - width - room));
-  const below = at.bottom + height + room <= innerHeight;
+  const left = Math.max(ROOM, Math.min(at.left, document.documentElement.clientWidth - width - ROOM));
+  const above = at.top - height - 2;
   note.style.left = `${left}px`;
-  note.style.top = `${below ? at.bottom + 2 : Math.max(room, at.top - height - 2)}px`;
+  note.style.top = `${above >= ROOM ? above : at.bottom + 2}px`;
 }
