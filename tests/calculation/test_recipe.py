@@ -142,6 +142,11 @@ def test_a_saddle_is_left():
     assert abs(height) > 1.0
 
 
+def test_a_flat_motion_ends_symmetric():
+    """Methyl groups that turn freely stop anywhere; the symmetric structure lies no higher."""
+    assert calculate(read_smiles("C[Al](C)C"), Level.XTB, quietly).point_group == "C3h"
+
+
 def test_close_placements_are_compared():
     """Xenon tetrafluoride: the see-saw that the model ranks second lies far above the square."""
     record = calculate(read_smiles("F[Xe](F)(F)F"), Level.XTB, quietly)

@@ -3,7 +3,7 @@
 C1  Starts come from the domain model (starting.py); the lowest conformer of a flexible molecule
     (conformers.py) is one more, and the only one at GFN2-xTB level.
 C2  Every start is optimised roughly; the lowest goes on (methods.py says how, for each level).
-C3  It is optimised finely.
+C3  It is optimised finely; where a structure of higher symmetry nearby lies no higher, that one.
 C4  Second derivatives there, its symmetry made exact, give wavenumbers and infrared intensities,
     and prove the minimum; an imaginary mode is followed downhill and C3 repeated.
 C5  The dipole moment comes from a single point with diffuse functions.
@@ -36,6 +36,7 @@ from shapeshelf.calculation.units import BOHR_ANGSTROM, DEBYE_PER_ATOMIC_UNIT
 from shapeshelf.calculation.vibrations import labelled, masses, vibrations
 from shapeshelf.domains.analysis import analyse
 from shapeshelf.geometry.assembly import assemble
+from shapeshelf.geometry.model import Symmetry
 from shapeshelf.geometry.symmetry import find_symmetry
 from shapeshelf.geometry.vectors import Array
 from shapeshelf.structure.molecule import Molecule, Vector
@@ -48,6 +49,12 @@ DESCENT_BOHR, DESCENT_GROWTH = 0.3, 3.0
 """A short way down a steep mode; a long one where a shallow saddle held the optimisation."""
 SYMMETRY_TOLERANCE_ANGSTROM = 0.02
 """Above what optimising leaves of the shaking, far below a distortion worth a page."""
+NEARLY_SYMMETRIC_ANGSTROM = 0.2
+"""How far a motion with next to no force may have stopped short of a symmetric structure."""
+UNCERTAIN_HARTREE = 1e-3
+"""A symmetric structure that lies higher before its lengths have settled is not worth a try."""
+SAME_HARTREE = 2e-6
+"""Two minima this near in energy are one."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -116,7 +123,7 @@ def _calculated(
     told("dipole moment")
     dipole = method.dipole(place)
     points = place * BOHR_ANGSTROM
-    symmetry = find_symmetry(system.elements, points, SYMMETRY_TOLERANCE_ANGSTROM)
+    symmetry = _symmetry_of(system, place, SYMMETRY_TOLERANCE_ANGSTROM)
     return replace(
         record,
         coordinates_angstrom=_rows(points),
@@ -151,12 +158,11 @@ def _proven(method: Method, system: System, rough: Minimum, told: Told) -> Prove
     place, hessian = rough.coordinates, rough.hessian
     for descents in range(MOST_DESCENTS + 1):
         told("optimisation" if not descents else "optimisation, downhill from a saddle")
-        fine = method.finely(place, hessian)
+        fine = _completed(method, system, method.finely(place, hessian))
         if not fine.converged:
             raise UnusableError(Outcome.NO_MINIMUM, f"not found in {fine.steps} steps")
         told("vibrations")
-        points = fine.coordinates * BOHR_ANGSTROM
-        symmetry = find_symmetry(system.elements, points, SYMMETRY_TOLERANCE_ANGSTROM)
+        symmetry = _symmetry_of(system, fine.coordinates, SYMMETRY_TOLERANCE_ANGSTROM)
         exact = np.array(symmetry.coordinates_angstrom) / BOHR_ANGSTROM
         hessian, slopes = method.second_derivatives(exact, symmetry)
         modes, moves = vibrations(system.elements, exact, hessian, slopes)
@@ -164,6 +170,28 @@ def _proven(method: Method, system: System, rough: Minimum, told: Told) -> Prove
             return Proven(replace(fine, coordinates=exact), modes, moves, descents)
         place = exact + _downhill(moves[0], descents)
     raise UnusableError(Outcome.NO_MINIMUM, f"{MOST_DESCENTS + 1} saddles in a row")
+
+
+def _completed(method: Method, system: System, fine: Minimum) -> Minimum:
+    """Return the minimum of higher symmetry near ``fine`` where it lies no higher, else ``fine``.
+
+    A motion with next to no force, such as the turning of a methyl group, ends anywhere.
+    """
+    near = _symmetry_of(system, fine.coordinates, NEARLY_SYMMETRIC_ANGSTROM)
+    found = _symmetry_of(system, fine.coordinates, SYMMETRY_TOLERANCE_ANGSTROM)
+    if not fine.converged or len(near.operations) <= len(found.operations):
+        return fine
+    place = np.array(near.coordinates_angstrom) / BOHR_ANGSTROM
+    if method.energy(place) > fine.energy + UNCERTAIN_HARTREE:
+        return fine
+    better = method.finely(place, fine.hessian)
+    lower = better.converged and better.energy <= fine.energy + SAME_HARTREE
+    return better if lower else fine
+
+
+def _symmetry_of(system: System, place: Array, tolerance_angstrom: float) -> Symmetry:
+    """Return the symmetry of coordinates (n, 3) in bohr."""
+    return find_symmetry(system.elements, place * BOHR_ANGSTROM, tolerance_angstrom)
 
 
 def _downhill(move: Array, descents: int) -> Array:
