@@ -2,15 +2,18 @@
 
     python tests/benchmarks/accuracy_of_methods.py compute [--most N]
     python tests/benchmarks/accuracy_of_methods.py table
+    python tests/benchmarks/accuracy_of_methods.py lengths
 
-The first computes with PBE0 what ``tests/data/methods/`` lacks, cheapest first, and takes over
-records of the same structure from ``compounds/records/``. The second computes GFN2-xTB afresh (a
+The first computes with PBE0 what neither ``tests/data/methods/`` nor the demo's records hold,
+cheapest first. The second computes GFN2-xTB afresh (a
 minute or two), prints the averages and the outliers, and writes ``parity.csv`` of the calculation
-room, which the site's page draws.
+room, which the site's page draws. The third holds bond lengths of every record, and of GFN2-xTB,
+against ``tests/data/lengths.csv``.
 """
 
 import argparse
 import csv
+import re
 from collections.abc import Iterator
 from dataclasses import dataclass
 from functools import cache
@@ -27,7 +30,7 @@ from shapeshelf.calculation.model import CalculationRecord, Level, Outcome
 from shapeshelf.calculation.recipe import calculate
 from shapeshelf.calculation.records import read_record, write_record
 from shapeshelf.domains.analysis import analyse
-from shapeshelf.geometry.vectors import angle_degrees
+from shapeshelf.geometry.vectors import angle_degrees, distance
 from shapeshelf.report.building import report_on_structure
 from shapeshelf.structure.molecule import Molecule
 from shapeshelf.structure.reading import read_smiles
@@ -63,13 +66,15 @@ class Measured:
 def main() -> None:
     """Run the part that is asked for."""
     parser = argparse.ArgumentParser()
-    parser.add_argument("part", choices=["compute", "table"])
+    parser.add_argument("part", choices=["compute", "table", "lengths"])
     parser.add_argument("--most", type=int, default=10_000)
     options = parser.parse_args()
     if options.part == "compute":
         compute(options.most)
-    else:
+    elif options.part == "table":
         write_table()
+    else:
+        print_lengths()
 
 
 def measured_values() -> list[Measured]:
@@ -82,16 +87,11 @@ def compute(most: int) -> None:
     molecules = {one.smiles: read_smiles(one.smiles) for one in measured_values()}
     fitting = [m for m in molecules.values() if len(m.atoms) <= MOST_ATOMS[Level.DFT]]
     for molecule in sorted(fitting, key=lambda m: cost_of(m, Level.DFT)):
-        path = _path(molecule)
-        if path.exists():
-            continue
-        record = _from_demo(molecule)
-        if record is None and most > 0:
+        if most and _record(molecule) is None:
             most -= 1
             record = calculate(molecule, Level.DFT, lambda stage: None)
-        if record is not None:
-            write_record(path, record)
-            print(path.stem, record.outcome.value, record.point_group, flush=True)
+            write_record(_path(molecule), record)
+            print(_path(molecule).stem, record.outcome.value, record.point_group, flush=True)
 
 
 def write_table() -> None:
@@ -106,6 +106,40 @@ def write_table() -> None:
     for quantity in ("angle", "dipole"):
         for most_atoms in (8, 12):
             _print_averages(flat, quantity, most_atoms)
+
+
+def print_lengths() -> None:
+    """Print, for each level, how far calculated bond lengths are from the measured ones."""
+    records = [read_record(path) for folder in (DEMO, KEPT) for path in folder.glob("*.json")]
+    known = {record.key.digest: record for record in records if _minimum(record)}
+    errors: dict[Level, list[tuple[float, str, str]]] = {level: [] for level in Level}
+    with (DATA / "lengths.csv").open(encoding="utf-8") as file:
+        for row in csv.DictReader(file):
+            molecule = read_smiles(row["smiles"])
+            for record in (known.get(_digest(molecule)), _with_xtb(row["smiles"])):
+                found = _lengths(molecule, record, row["bond"]) if record else []
+                if found and record:
+                    error = min((x - float(row["length_angstrom"]) for x in found), key=abs)
+                    errors[record.level].append((error, row["name"], row["bond"]))
+    for level, rows in errors.items():
+        sizes = np.abs([error for error, *_ in rows])
+        if rows:
+            print(f"{level}: {len(rows)} bonds, mean {sizes.mean():.3f} Å, ", end="")
+            print(f"68 % {np.quantile(sizes, 0.68):.3f} Å, largest {sizes.max():.3f} Å")
+        for error, name, bond in sorted(rows, key=lambda row: -abs(row[0]))[:6]:
+            print(f"    {error:+.3f}  {name}  {bond}")
+
+
+def _lengths(molecule: Molecule, record: CalculationRecord, bond: str) -> list[float]:
+    """Return the calculated lengths of the bonds between two elements, ``S-F`` or ``S=O``."""
+    wanted = sorted(re.split("[-=#:]", bond))
+    there = settled(molecule)
+    points = record.coordinates_angstrom
+    return [
+        distance(points[one.begin], points[one.end])
+        for one in there.bonds
+        if sorted(there.atoms[atom].element for atom in (one.begin, one.end)) == wanted
+    ]
 
 
 def _angles(name: str) -> Iterator[Measured]:
@@ -140,13 +174,15 @@ def _digest(molecule: Molecule) -> str:
     return structure_key(molecule, analyse(molecule)[0].multiplicity).digest
 
 
-def _from_demo(molecule: Molecule) -> CalculationRecord | None:
-    digest = _digest(molecule)
-    for path in sorted(DEMO.glob("*.json")):
-        record = read_record(path)
-        if record and record.level is Level.DFT and record.key.digest == digest:
-            return record
-    return None
+def _record(molecule: Molecule) -> CalculationRecord | None:
+    """Return the PBE0 record of a molecule, from here or from the demo."""
+    return read_record(_path(molecule)) or _demo_records().get(_digest(molecule))
+
+
+@cache
+def _demo_records() -> dict[str, CalculationRecord]:
+    records = [read_record(path) for path in sorted(DEMO.glob("*.json"))]
+    return {one.key.digest: one for one in records if one and one.level is Level.DFT}
 
 
 def _groups(measured: list[Measured]) -> list[list[Measured]]:
@@ -159,7 +195,7 @@ def _groups(measured: list[Measured]) -> list[list[Measured]]:
 
 def _row(group: list[Measured]) -> list[dict[str, object]]:
     molecule = read_smiles(group[0].smiles)
-    records = (_with_xtb(group[0].smiles), _minimum(read_record(_path(molecule))))
+    records = (_with_xtb(group[0].smiles), _minimum(_record(molecule)))
     wanted = [one.value for one in group]
     if group[0].quantity == "dipole":
         columns = [_moments(record) * len(group) for record in records]

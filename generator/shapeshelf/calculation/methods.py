@@ -77,6 +77,7 @@ def settings_of(level: Level) -> tuple[tuple[str, str], ...]:
             "optimisation",
             f"{_treatment_text(FINE[level])}, {_tolerances_text(FINE_TOLERANCES)}",
         ),
+        ("gradient", f"of the grid too from period {dft.CORE_POTENTIAL_FROM_PERIOD} down"),
         (
             "hessian",
             f"{_treatment_text(FINE[level])}, analytic, free of translation, response on grid "
