@@ -16,6 +16,7 @@ import numpy as np
 
 from shapeshelf.calculation.units import BOHR_ANGSTROM
 from shapeshelf.geometry.model import Symmetry, SymmetryOperation
+from shapeshelf.geometry.operations import carried
 from shapeshelf.geometry.vectors import Array
 
 Evaluated = Callable[[Array], tuple[Array, Array]]
@@ -73,14 +74,11 @@ def differentiate(
     moves, answers, moments = [], [], []
     for one in displacements_of(place, symmetry):
         gradient, dipole = _slope(evaluated, place, one, step)
+        move = _move(place, one)
         for operation in symmetry.operations:
-            matrix, images = np.array(operation.matrix), list(operation.permutation)
-            move, answer = np.zeros_like(place), np.empty_like(place)
-            move[images[one.atom]] = matrix @ one.direction
-            answer[images] = gradient @ matrix.T
-            moves.append(move.ravel())
-            answers.append(answer.ravel())
-            moments.append(matrix @ dipole)
+            moves.append(carried(move, operation).ravel())
+            answers.append(carried(gradient, operation).ravel())
+            moments.append(np.array(operation.matrix) @ dipole)
     inverse = np.linalg.pinv(np.array(moves))
     hessian, slopes = inverse @ np.array(answers), inverse @ np.array(moments)
     return (hessian + hessian.T) / 2, slopes
@@ -105,17 +103,21 @@ def _slope(
     evaluated: Evaluated, place: Array, displacement: Displacement, step: float
 ) -> tuple[Array, Array]:
     """Return how gradient (n, 3) and dipole (3,) change along a displacement."""
-    move = np.zeros_like(place)
-    move[displacement.atom] = step * displacement.direction
+    move = step * _move(place, displacement)
     gradient, dipole = evaluated(place + move)
     if displacement.turned_round_by is None:
         behind, dipole_behind = evaluated(place - move)
     else:
-        matrix = np.array(displacement.turned_round_by.matrix)
-        behind = np.empty_like(gradient)
-        behind[list(displacement.turned_round_by.permutation)] = gradient @ matrix.T
-        dipole_behind = matrix @ dipole
+        behind = carried(gradient, displacement.turned_round_by)
+        dipole_behind = np.array(displacement.turned_round_by.matrix) @ dipole
     return (gradient - behind) / (2 * step), (dipole - dipole_behind) / (2 * step)
+
+
+def _move(place: Array, displacement: Displacement) -> Array:
+    """Return a displacement of unit length as the vectors of all atoms (n, 3)."""
+    move = np.zeros_like(place)
+    move[displacement.atom] = displacement.direction
+    return move
 
 
 def _own_axes(outward: Array, axes: Array) -> Array:

@@ -15,7 +15,7 @@ from shapeshelf.reference.elements import ELEMENTS
 from shapeshelf.structure.molecule import Molecule
 from shapeshelf.structure.reading import read_structure
 
-COST_OF_LEVEL = {Level.DFT: 1.0, Level.DFT_SMALL: 0.15, Level.XTB: 0.0005}
+COST_OF_LEVEL = {Level.DFT: 1.0, Level.DFT_SMALL: 0.4, Level.XTB: 0.004}
 """Time a level takes, relative to ``dft``; only the estimate of the time left uses it."""
 
 

@@ -17,6 +17,7 @@ import numpy as np
 from numpy.typing import NDArray
 from scipy.spatial import cKDTree
 
+from shapeshelf.geometry.model import SymmetryOperation
 from shapeshelf.geometry.vectors import Array, best_orthogonal
 
 Indices = NDArray[np.int64]
@@ -65,6 +66,13 @@ def averaged(points: Array, matrices: Array, permutations: Indices) -> Array:
     for image, permutation in zip(images, permutations, strict=True):
         total[permutation] += image
     return total / len(matrices)
+
+
+def carried(vectors: Array, operation: SymmetryOperation) -> Array:
+    """Return vectors that sit on atoms, (..., n, 3), where ``operation`` takes them."""
+    moved = np.empty_like(vectors)
+    moved[..., list(operation.permutation), :] = vectors @ np.array(operation.matrix).T
+    return moved
 
 
 def _alike(numbers: Indices, points: Array, tolerance: float) -> NDArray[np.bool_]:

@@ -15,6 +15,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from shapeshelf.geometry.model import Symmetry
+from shapeshelf.geometry.operations import carried
 from shapeshelf.properties.species import linear_name, species_of
 
 Array = NDArray[np.float64]
@@ -29,10 +30,8 @@ def species_of_modes(symmetry: Symmetry, displacements: Array) -> tuple[str | No
     """
     linear = symmetry.point_group in ("Cinfv", "Dinfh")
     species = species_of(symmetry)
-    carried = np.array(
-        [_carried(one.matrix, one.permutation, displacements) for one in symmetry.operations]
-    )
-    overlaps = np.einsum("kmax,max->km", carried, displacements)
+    images = np.array([carried(displacements, one) for one in symmetry.operations])
+    overlaps = np.einsum("kmax,max->km", images, displacements)
     norms = (displacements**2).sum(axis=(1, 2))
     shares = np.array(
         [
@@ -66,10 +65,3 @@ def stretching_shares(
     weighted = (displacements * roots).reshape(len(displacements), -1)
     weighted /= np.linalg.norm(weighted, axis=1, keepdims=True)
     return np.asarray(((weighted @ basis.T) ** 2).sum(axis=1))
-
-
-def _carried(matrix: object, permutation: Sequence[int], displacements: Array) -> Array:
-    """Return the displacements (modes, n, 3) after one operation."""
-    moved = np.empty_like(displacements)
-    moved[:, list(permutation)] = displacements @ np.array(matrix).T
-    return moved
