@@ -35,6 +35,13 @@ def test_model_value_is_rounded_to_the_decimals_of_its_unit() -> None:
     assert value_view(_model(0.63, 0.3), DEBYE, {}).text == "0.63\xa0D"
 
 
+def test_what_symmetry_fixes_says_so_in_place_of_a_half_width() -> None:
+    """A half-width of nought is no number to print."""
+    view = value_view(_model(109.4712, 0.0), DEGREE, {})
+    assert (view.text, view.plus_minus) == ("109.5°", "by\xa0symmetry")
+    assert view.others == {"model": "109.5\xa0by\xa0symmetry"}
+
+
 def test_supplied_value_has_a_basis_of_its_own() -> None:
     """Coordinates that an entry supplies are neither measured nor a model."""
     supplied = replace(_model(109.5, 1.0), basis=Basis.SUPPLIED, supplied=110.2, value=110.2)

@@ -84,6 +84,27 @@ def test_calculated_beats_model(report):
     assert [band.wavenumber_per_cm for band in found.frequencies.bands] == [1623.4, 3852.2, 3960.3]
 
 
+def test_what_the_point_group_fixes_has_a_half_width_of_nought(report):
+    """Carbon dioxide: its angle and its lack of a moment, in the record and in the model."""
+    line = ((0.0, 0.0, 0.0), (0.0, 0.0, -1.16), (0.0, 0.0, 1.16))
+    record = water_record(
+        key=structure_key(read_smiles("O=C=O"), 1),
+        elements=("C", "O", "O"),
+        coordinates_angstrom=line,
+        dipole_debye=(0.0, 0.0, 1e-6),
+        modes=(),
+        point_group="Dinfh",
+    )
+    found = report(record, "O=C=O")
+    angle, moment = found.centres[0].angles[0].degrees, found.dipole_debye
+    assert (angle.basis, angle.calculated_uncertainty, angle.model_uncertainty) == (
+        Basis.CALCULATED,
+        0.0,
+        0.0,
+    )
+    assert (moment.basis, moment.value, moment.uncertainty) == (Basis.CALCULATED, 0.0, 0.0)
+
+
 def test_measured_beats_calculated(report):
     """The calculated value stays beside it."""
     value = report(water_record(), measured=(MEASURED,)).centres[0].angles[0].degrees

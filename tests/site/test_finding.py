@@ -31,9 +31,9 @@ FIND_ALL = """
 FIND_WORDS = """
   import { prepare } from "./js/index.js";
   import { find } from "./js/find.js";
-  import { foldName } from "./js/normalise.js";
+  import { foldedWords } from "./js/lines.js";
   const index = prepare(given.index);
-  const words = (text) => foldName(text).split(" ");
+  const words = foldedWords;
   const facts = ({ shape, group, polarity, tags }) => [shape, group, polarity, ...tags];
   const wordsOf = (one, also) => [
     ...[one.name, ...also].flatMap(words),

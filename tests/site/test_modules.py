@@ -71,24 +71,73 @@ def test_slips_of_the_pen_are_counted(in_node: Run):
 )
 def test_names_are_folded_to_one_spelling(in_node: Run, text: str, folded: str):
     """Greek letters spelled out, accents and scripts plain, one spelling of sulfur."""
-    script = 'import { foldName } from "./js/normalise.js"; tell(foldName(given));'
+    script = 'import { foldedWords } from "./js/lines.js"; tell(foldedWords(given).join(" "));'
     assert in_node(script, text) == folded
 
 
 @pytest.mark.parametrize(
-    ("start", "lines"),
-    [("ethyl", [0, 1]), ("eth", [0, 1, 2]), ("acetate", [1]), ("a", [0, 1]), ("yl", []), ("z", [])],
+    ("start", "found"),
+    [
+        ("ethyl", [0, 1]),
+        ("eth", [0, 1, 3]),
+        ("acetate", [1]),
+        ("a", [0, 1]),
+        ("yl", []),
+        ("z", []),
+        ("2", [3, 4]),
+    ],
 )
-def test_words_are_found_by_their_beginning(in_node: Run, start: str, lines: list[int]):
+def test_words_are_found_by_their_beginning(in_node: Run, start: str, found: list[int]):
     """Every line with such a word, none where it only stands inside one."""
     script = """
-      import { eachLineWith, wordsIn } from "./js/words.js";
-      const found = new Set();
-      eachLineWith(wordsIn(given.text), given.start, (line) => found.add(line));
-      tell([...found].sort());
+      import { eachLineWith, linesOf } from "./js/lines.js";
+      const { marked, starts } = linesOf(given.lines);
+      const found = [];
+      const begun = linesOf([given.start]).marked.trim();
+      eachLineWith(marked, starts, begun, (line) => found.push(line));
+      tell(found);
     """
-    text = "ethyl alcohol\nethyl acetate\nmethanol ether methanol"
-    assert in_node(script, {"text": text, "start": start}) == lines
+    lines = ["ethyl alcohol", "ethyl acetate", "", "methanol ether\nmethanol 2", "2,2-"]
+    assert in_node(script, {"lines": lines, "start": start}) == found
+
+
+def test_lines_are_the_letters_of_many_texts(in_node: Run):
+    """Run together, and with the beginnings of words marked; a text is always one line."""
+    script = """
+      import { linesOf, markedWords, unmarked } from "./js/lines.js";
+      const { plain, marked, starts } = linesOf(given);
+      tell([plain, marked, [...starts], markedWords(marked).map(unmarked)]);
+    """
+    plain, marked, starts, words = in_node(script, ["Xenon-difluoride", "′", "2\nα 9a", "O'Neill"])
+    assert plain == "\nxenondifluoride\n\n2alpha9a\noneill\n"
+    assert marked == "\nXenonDifluoride\n\n#Alpha*a\nOneill\n"
+    assert starts == [1, 17, 18, 27, 34]
+    assert words == ["xenon", "difluoride", "2", "alpha", "9a", "oneill"]
+
+
+def test_words_are_held_with_their_lines(in_node: Run):
+    """Each word once, with every line it is in; how many words a line has."""
+    script = """
+      import { linesOf } from "./js/lines.js";
+      import { wordsIn } from "./js/words.js";
+      const { list, from, lines, sizes } = wordsIn(linesOf(given).marked);
+      const held = list.map((word, n) => [word, [...lines.slice(from[n], from[n + 1])]]);
+      tell([Object.fromEntries(held), sizes]);
+    """
+    held, sizes = in_node(script, ["ethyl alcohol", "", "ethyl ethyl 2"])
+    assert held == {"ethyl": [0, 2, 2], "alcohol": [0], "2": [2]}
+    assert sizes == [2, 0, 3]
+
+
+@pytest.mark.parametrize(
+    ("one", "other", "same"),
+    [("F4S1", "SF4", True), ("C2H6O", "OC2H6", True), ("SF4", "SF5", False), ("Co", "CO", False)],
+)
+def test_a_composition_has_one_weight(in_node: Run, one: str, other: str, same: bool):
+    """Whatever the order, and whether a single atom is counted or not."""
+    script = 'import { weightOf } from "./js/formula.js"; tell(given.map(weightOf));'
+    left, right = in_node(script, [one, other])
+    assert (left == right) is same
 
 
 def test_sets_of_compounds(in_node: Run):

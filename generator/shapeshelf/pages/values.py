@@ -24,6 +24,9 @@ class Unit:
     """Of measured ones, which keep the decimals they were stated with."""
 
 
+BY_SYMMETRY = f"by{NO_BREAK}symmetry"
+"""In place of a half-width of nought."""
+
 DEGREE = Unit("°", 1, 2)
 ANGSTROM = Unit(NO_BREAK + "Å", 3, 4)
 DEBYE = Unit(NO_BREAK + "D", 2, 3)
@@ -35,7 +38,7 @@ class ValueView:
 
     text: str
     plus_minus: str
-    """``± 0.5°``, empty where no uncertainty is known."""
+    """``± 0.5°``, ``by symmetry`` of what the point group fixes, empty where it is not known."""
     basis: str
     recalled: bool
     """The measured value was set down from memory of its source."""
@@ -111,6 +114,8 @@ def _number(number: float, basis: Basis, unit: Unit) -> str:
 def _plus_minus(uncertainty: float | None, unit: Unit, symbol: str | None = None) -> str:
     if uncertainty is None:
         return ""
+    if uncertainty == 0:
+        return BY_SYMMETRY
     shown = unit.symbol if symbol is None else symbol
     text = as_stated_text(uncertainty, min(1, unit.decimals), unit.decimals)
     if float(text) == 0:

@@ -55,7 +55,7 @@ def dipole(
     charges = partial_charges(graph, moved, COEFFICIENTS)
     bonds = tuple(_bond_polarity(graph, bond.begin, bond.end) for bond in molecule.bonds)
     allowed = symmetry_projection(symmetry)
-    polar = bool(np.abs(allowed).max() > ALLOWED)
+    polar = can_be_polar(symmetry)
     coordinates = np.array(symmetry.coordinates_angstrom)
     vector = allowed @ _free_moment(graph, charges, coordinates) if polar else np.zeros(3)
     uncertainty = UNCERTAINTY_DEBYE[dipole_class(graph, COEFFICIENTS)] if polar else 0.0
@@ -72,6 +72,11 @@ def dipole(
         partial_charges=rounded,
         bonds=bonds,
     )
+
+
+def can_be_polar(symmetry: Symmetry) -> bool:
+    """Tell whether the point group allows a dipole moment."""
+    return bool(np.abs(symmetry_projection(symmetry)).max() > ALLOWED)
 
 
 def symmetry_projection(symmetry: Symmetry) -> Array:

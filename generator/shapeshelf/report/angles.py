@@ -4,6 +4,8 @@ from collections.abc import Mapping, Sequence
 
 from shapeshelf.catalogue.model import Measurement, Quantity
 from shapeshelf.domains.model import Centre
+from shapeshelf.geometry.fixed import is_fixed
+from shapeshelf.geometry.model import StructureBasis
 from shapeshelf.report.labels import Names, angle_label
 from shapeshelf.report.matching import Named, kind_of, match
 from shapeshelf.report.model import Analysis, AngleRow
@@ -63,6 +65,8 @@ def _row(
 ) -> AngleRow:
     domain = {frozenset((a.atoms[0], a.atoms[2])): a for a in centre.angles}
     own = [domain[pair] for m in row.members if (pair := frozenset((m[0], m[2]))) in domain]
+    own_structure = analysis.structure.basis is StructureBasis.MODEL
+    fixed = own_structure and is_fixed(analysis.symmetry, row.members)
     return AngleRow(
         of=row.of,
         atoms=row.members[0],
@@ -71,7 +75,7 @@ def _row(
         degrees=structure_value(
             analysis.structure,
             row.mean_degrees,
-            _mean([angle.uncertainty_degrees for angle in own]),
+            0.0 if fixed else _mean([angle.uncertainty_degrees for angle in own]),
             _mean([angle.model_degrees for angle in own]),
             measurement,
         ),

@@ -4,6 +4,8 @@ K1  Rows of angles and bonds stay those of the model, so that labels do not depe
     record is there; a calculated value is the mean over the members of its row.
 K2  The structure, its point group and what follows from it are the calculated ones: a record
     counts only where it is a proven minimum of the structure as it is drawn now.
+K3  What that point group fixes, a tetrahedron's angle or a moment of nought, has a half-width
+    of nought.
 """
 
 from collections.abc import Callable, Mapping, Sequence
@@ -14,9 +16,11 @@ import numpy as np
 from shapeshelf.calculation.accuracy import ACCURACY, Accuracy
 from shapeshelf.calculation.mapping import laid_onto
 from shapeshelf.calculation.model import CalculationRecord, Mode
+from shapeshelf.geometry.fixed import is_fixed
 from shapeshelf.geometry.model import Structure, StructureBasis, Symmetry
 from shapeshelf.geometry.symmetry import find_symmetry
 from shapeshelf.geometry.vectors import angle_degrees, distance
+from shapeshelf.properties.polarity import can_be_polar
 from shapeshelf.report.model import (
     Analysis,
     AngleRow,
@@ -68,7 +72,11 @@ def with_calculated_angles(
             replace(
                 row,
                 degrees=_merged(
-                    row.degrees, row.members, found, angle_degrees, found.accuracy.angle_degrees
+                    row.degrees,
+                    row.members,
+                    found,
+                    angle_degrees,
+                    0.0 if is_fixed(found.symmetry, row.members) else found.accuracy.angle_degrees,
                 ),
             )
             for row in own
@@ -95,10 +103,15 @@ def with_calculated_moment(value: Value, found: Calculated) -> Value:
     record = found.record
     if record.dipole_debye is None:
         return value
-    moment = float(np.linalg.norm(record.dipole_debye))
+    half_width = found.accuracy.dipole_debye
     if record.conformers is not None and record.level is record.conformers.level:
-        moment = record.conformers.mean_dipole_debye
-    return with_calculated(value, moment, found.accuracy.dipole_debye, record.method)
+        return with_calculated(
+            value, record.conformers.mean_dipole_debye, half_width, record.method
+        )
+    moment = float(np.linalg.norm(record.dipole_debye))
+    if not can_be_polar(found.symmetry):
+        moment, half_width = 0.0, 0.0
+    return with_calculated(value, moment, half_width, record.method)
 
 
 def vibrations_of(record: CalculationRecord) -> CalculatedVibrations | None:

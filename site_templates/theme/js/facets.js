@@ -2,6 +2,7 @@
 
 import { all, common, either, none, put, shared } from "./bits.js";
 import { cornersOf } from "./corners.js";
+import { lazily } from "./parts.js";
 
 /**
  * The groups of choices. Choices of one group widen it (`any`) or narrow it (`every`); groups
@@ -44,7 +45,7 @@ export function prepareFacets(index, facets) {
     for (const site of facets.compounds.sites[item]) put(kinds[site], item);
   }
   const sites = facets.words.sites.map((site) => site.map(siteText));
-  facets.angles ??= cornersOf(facets);
+  lazily(facets, { angles: cornersOf });
   return { size, held, kinds, sites, facets, values: valuesOf(held, sites) };
 }
 

@@ -3,7 +3,8 @@
 import { pageAddress } from "./data.js";
 import { find } from "./find.js";
 import { showGlyphs } from "./glyphs.js";
-import { loadIndex, prepareLater } from "./index.js";
+import { loadIndex } from "./index.js";
+import { prepareLater } from "./parts.js";
 import { resultParts } from "./results.js";
 
 const MOST = 8;

@@ -1,10 +1,10 @@
 // Which items answer a query, best first. An exact identifier always stands before any likeness.
 
 import { readFormula } from "./formula.js";
-import { itemAt, keyAt } from "./index.js";
-import { casDigits, foldCode, foldName } from "./normalise.js";
+import { compoundsOf, itemAt, keyAt } from "./index.js";
+import { eachLineWith, lengthOf, linesOf, markedWords, unmarked } from "./lines.js";
+import { casDigits } from "./normalise.js";
 import { misspelt } from "./slips.js";
-import { beginning, eachLineWith } from "./words.js";
 
 const EXACT = 1000;
 const FORMULA = 900;
@@ -45,14 +45,15 @@ export function findItems(index, text) {
 }
 
 function read(text) {
-  const name = foldName(text);
+  const { marked, plain } = linesOf([text]);
+  const marks = markedWords(marked);
   return {
     empty: text.trim() === "",
     text: text.trim(),
-    name,
-    words: name.split(" ").filter(Boolean),
-    close: name.replace(/ /g, ""),
-    code: foldCode(text),
+    marked: marked.trim(),
+    close: plain.trim(),
+    marks,
+    words: marks.map(unmarked),
     digits: casDigits(text),
     formulas: readFormula(text),
   };
@@ -69,17 +70,19 @@ function ordered(scores) {
 }
 
 function identifiers(index, query, give) {
-  const { codes, codeList, smiles } = index.exact;
-  for (const item of codes.get(query.code) ?? []) give(item, EXACT);
+  codes(index.codes, query.close, give);
   const plain = /^[A-Za-z0-9]*$/.test(query.text);
-  for (const item of smiles.get(query.text) ?? []) give(item, plain ? PLAIN_SMILES : EXACT);
+  for (const item of index.smiles.get(query.text) ?? []) give(item, plain ? PLAIN_SMILES : EXACT);
   starting(index.digits, query.digits, give);
-  if (query.code.length > 1) {
-    for (const code of codeList.slice(...beginning(codeList, query.code))) {
-      for (const item of codes.get(code)) give(item, IDENTIFIER_START);
-    }
-  }
   keys(index, query.text.toUpperCase(), give);
+}
+
+function codes({ plain, starts, items }, code, give) {
+  if (!code) return;
+  eachLineWith(plain, starts, `\n${code}`, (line) => {
+    if (lengthOf(starts, line) === code.length) give(items[line], EXACT);
+    else if (code.length > 1) give(items[line], IDENTIFIER_START);
+  });
 }
 
 function starting(column, start, give) {
@@ -102,44 +105,35 @@ function keys(index, start, give) {
 
 function formulas(index, query, give) {
   for (const { key, charge } of query.formulas) {
-    for (const [item, its] of index.formulas.get(key) ?? []) {
-      give(item, (charge ?? 0) === its ? FORMULA : FORMULA_OTHER_CHARGE);
+    for (const item of compoundsOf(index, key)) {
+      give(item, (charge ?? 0) === index.columns.charge[item] ? FORMULA : FORMULA_OTHER_CHARGE);
     }
   }
 }
 
-/** Names that begin with what is typed or hold it, spaces left out; best with its spaces right. */
-function names({ names: { spaced, close: tight, items } }, { name, close }, give) {
+/** Names that begin with what is typed or hold it, spaces left out; best with its words right. */
+function names({ names: { plain, marked, starts, items } }, query, give) {
+  const { close } = query;
   if (!close) return;
-  eachAt(tight, close.length < LEAST_INSIDE ? `\n${close}` : close, (line, isBeginning) => {
-    const size = lengthOf(tight, line);
+  eachLineWith(plain, starts, close.length < LEAST_INSIDE ? `\n${close}` : close, (line, isBeginning) => {
+    const size = lengthOf(starts, line);
     if (!isBeginning) {
       give(items[line], INSIDE - Math.min(size, LONGEST_AROUND));
       return;
     }
     const score = size === close.length ? NAME : NAME_START - Math.min(size, LONGEST);
-    give(items[line], spaced.text.startsWith(name, spaced.starts[line]) ? score : score - 1);
+    give(items[line], marked.startsWith(query.marked, starts[line]) ? score : score - 1);
   });
-}
-
-/** Calls `visit(line, isBeginning)` for every line that holds `piece`, at its first place. */
-function eachAt({ text, starts }, piece, visit) {
-  const shift = piece[0] === "\n" ? 1 : 0;
-  let line = 0;
-  for (let at = text.indexOf(piece); at >= 0; at = text.indexOf(piece, starts[line + 1] - 1)) {
-    line = lineAt(starts, at + shift, line);
-    visit(line, at + shift === starts[line]);
-  }
 }
 
 /** Items of which every word typed begins a word: of one name, or else of all names and facts. */
 function words(index, query, give) {
   if (!query.words.length) return;
-  const { spaced, items } = index.names;
+  const { marked, starts, items } = index.names;
   const metByLine = new Uint16Array(items.length);
   const metByItem = new Uint16Array(index.total);
   query.words.forEach((word, nth) => {
-    eachLineWith(index.vocabulary, word, (line) => {
+    eachLineWith(marked, starts, query.marks[nth], (line) => {
       step(metByLine, line, nth);
       step(metByItem, items[line], nth);
     });
@@ -147,7 +141,7 @@ function words(index, query, give) {
   });
   const all = query.words.length;
   metByLine.forEach((met, line) => {
-    if (met === all) give(items[line], WORD_START - Math.min(lengthOf(spaced, line), LONGEST));
+    if (met === all) give(items[line], WORD_START - Math.min(lengthOf(starts, line), LONGEST));
   });
   metByItem.forEach((met, item) => met === all && give(item, FACTS));
 }
@@ -165,25 +159,4 @@ function eachWithFact({ facts, columns }, word, visit) {
 /** One more word met, where all before it were. */
 function step(met, at, nth) {
   if (met[at] === nth) met[at] = nth + 1;
-}
-
-function lengthOf({ starts }, line) {
-  return starts[line + 1] - starts[line] - 1;
-}
-
-/** The line that an offset is in; offsets only grow, so the search goes on from `line`. */
-function lineAt(starts, at, line) {
-  let step = 1;
-  let low = line;
-  while (low + step < starts.length - 1 && starts[low + step] <= at) {
-    low += step;
-    step *= 2;
-  }
-  let high = Math.min(low + step, starts.length - 1);
-  while (high - low > 1) {
-    const middle = (low + high) >> 1;
-    if (starts[middle] <= at) low = middle;
-    else high = middle;
-  }
-  return low;
 }

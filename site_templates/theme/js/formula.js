@@ -38,6 +38,28 @@ export function formulaKey(formula) {
   return keyOf(counts);
 }
 
+/** A number for a composition, whatever the order of a plain formula; few others share it. */
+export function weightOf(formula) {
+  let [sum, element, count] = [0, 0, 0];
+  for (let at = 0; at < formula.length; at += 1) {
+    const code = formula.charCodeAt(at);
+    if (code < 65) {
+      count = 10 * count + code - 48;
+    } else if (code < 97) {
+      sum += spread(element) * (count || 1);
+      [element, count] = [code, 0];
+    } else {
+      element = 128 * element + code;
+    }
+  }
+  return sum + spread(element) * (count || 1);
+}
+
+/** Multiplicative hashing by the golden ratio. */
+function spread(element) {
+  return Math.imul(element, 0x9e3779b1) >>> 0;
+}
+
 /** One spelling for a composition: elements in alphabetical order with their numbers. */
 export function keyOf(counts) {
   return [...counts.entries()]

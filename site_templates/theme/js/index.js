@@ -1,8 +1,9 @@
 // The lookup's index: read once, when it is first wanted, and made ready to be asked.
 
 import { loadData } from "./data.js";
-import { formulaKey, readFormula } from "./formula.js";
-import { foldCode, foldLines, foldName } from "./normalise.js";
+import { formulaKey, readFormula, weightOf } from "./formula.js";
+import { foldedWords, linesOf } from "./lines.js";
+import { lazily } from "./parts.js";
 import { slipsOf } from "./slips.js";
 import { wordsIn } from "./words.js";
 
@@ -24,11 +25,12 @@ export function loadIndex(root) {
 /** What queries are held against, each part made when it is first wanted. */
 const PARTS = {
   names: namesOf,
-  vocabulary: ({ names }) => wordsIn(names.spaced.text.slice(1, -1)),
-  exact: exactOf,
-  facts: factsOf,
+  codes: codesOf,
+  smiles: smilesOf,
   digits: ({ columns }) => columns.cas.map((cas) => cas.replace(/-/g, "")),
   formulas: formulasOf,
+  facts: factsOf,
+  vocabulary: ({ names }) => wordsIn(names.marked),
   slips: slipsOf,
 };
 
@@ -37,23 +39,7 @@ export function prepare(data) {
   const columns = data.compounds;
   const compounds = columns.id.length;
   const index = { data, columns, words: data.words, compounds, total: compounds + data.entries.length };
-  for (const [name, make] of Object.entries(PARTS)) {
-    Object.defineProperty(index, name, {
-      configurable: true,
-      get() {
-        const value = make(index);
-        Object.defineProperty(index, name, { value });
-        return value;
-      },
-    });
-  }
-  return index;
-}
-
-/** Make every part in a quiet moment of its own, before a query asks for it. */
-export function prepareLater(index) {
-  const idle = globalThis.requestIdleCallback ?? setTimeout;
-  for (const name of Object.keys(PARTS)) idle(() => index[name]);
+  return lazily(index, PARTS);
 }
 
 /** One compound or other entry as a plain object. */
@@ -84,24 +70,28 @@ export function keyAt(index, item) {
   return key.length === 14 ? key + USUAL_KEY_END : key;
 }
 
-/** Compounds by composition. */
+/** A weight for every compound's composition, and the names that are formulas by their keys. */
 function formulasOf({ columns, compounds }) {
-  const found = new Map();
-  const add = (key, item, charge) => {
-    const held = found.get(key);
-    if (held) held.push([item, charge]);
-    else found.set(key, [[item, charge]]);
-  };
+  const names = new Map();
   for (let item = 0; item < compounds; item += 1) {
-    add(formulaKey(columns.formula[item]), item, columns.charge[item]);
     for (const name of columns.also[item] || []) {
-      if (LIKE_A_FORMULA.test(name)) for (const { key } of readFormula(name)) add(key, item, columns.charge[item]);
+      if (LIKE_A_FORMULA.test(name)) for (const { key } of readFormula(name)) hold(names, key, item);
     }
   }
+  return { weights: Float64Array.from(columns.formula, weightOf), names };
+}
+
+/** The compounds of a composition, by its key. */
+export function compoundsOf({ formulas: { weights, names }, columns }, key) {
+  const found = new Set(names.get(key));
+  const weight = weightOf(key);
+  weights.forEach((its, item) => {
+    if (its === weight && formulaKey(columns.formula[item]) === key) found.add(item);
+  });
   return found;
 }
 
-/** Every name of every item, one a line, with spaces between words and without; whose each is. */
+/** Every name of every item, one a line; whose each is. */
 function namesOf({ columns, compounds, data, total }) {
   const texts = [];
   const items = [];
@@ -109,13 +99,11 @@ function namesOf({ columns, compounds, data, total }) {
     const entry = data.entries[item - compounds];
     const name = entry ? entry.name : columns.name[item];
     for (const text of [name, ...((entry ? entry.also : columns.also[item]) || [])]) {
-      texts.push(text.includes("\n") ? text.replace(/\n/g, " ") : text);
+      texts.push(text);
       items.push(item);
     }
   }
-  const text = `\n${foldLines(texts.join("\n"))}\n`.replace(/ *\n */g, "\n");
-  const count = items.length;
-  return { items, spaced: linesIn(text, count), close: linesIn(text.replace(/ /g, ""), count) };
+  return { items, ...linesOf(texts) };
 }
 
 /** How every shape, point group, polarity and tag may begin, in the order of the index's lists. */
@@ -125,39 +113,33 @@ function factsOf({ words }) {
 
 /** `see-saw`: see, saw and seesaw. */
 function beginnings(text) {
-  const words = foldName(text).split(" ");
+  const words = foldedWords(text);
   return [...words, words.join("")];
 }
 
-/** Text with a line end before and after every line, and where each begins. */
-function linesIn(text, count) {
-  const starts = new Int32Array(count + 1);
-  let at = 0;
-  for (let line = 0; line <= count; line += 1) {
-    starts[line] = at + 1;
-    at = text.indexOf("\n", at + 1);
-  }
-  return { text, starts };
+/** Ids, codes and symbols, one a line, nothing but letters and digits; whose each is. */
+function codesOf({ columns, compounds, data }) {
+  const every = columns.id.map((_, item) => item);
+  const others = data.entries.flatMap(({ kind, also }, at) =>
+    kind === "term" ? [] : also.map((text) => [text, compounds + at]),
+  );
+  return {
+    items: [...every, ...every, ...others.map(([, item]) => item)],
+    ...linesOf([...columns.id, ...columns.code, ...others.map(([text]) => text)]),
+  };
 }
 
-/** Identifiers that are asked for whole: codes, ids, symbols, SMILES. */
-function exactOf({ columns, compounds, data }) {
-  const codes = new Map();
-  const smiles = new Map();
-  const add = (map, text, item) => {
-    const held = map.get(text);
-    if (held) held.push(item);
-    else if (text) map.set(text, [item]);
-  };
+/** Compounds by SMILES, as the entry spells it and canonical. */
+function smilesOf({ columns, compounds }) {
+  const found = new Map();
   for (let item = 0; item < compounds; item += 1) {
-    add(codes, foldCode(columns.id[item]), item);
-    add(codes, foldCode(columns.code[item]), item);
-    add(smiles, columns.smiles[item], item);
-    add(smiles, columns.spelling[item], item);
+    for (const text of new Set([columns.smiles[item], columns.spelling[item]])) if (text) hold(found, text, item);
   }
-  data.entries.forEach((entry, at) => {
-    if (entry.kind === "term") return;
-    for (const text of entry.also) add(codes, foldCode(text), compounds + at);
-  });
-  return { codes, codeList: [...codes.keys()].sort(), smiles };
+  return found;
+}
+
+function hold(map, key, item) {
+  const held = map.get(key);
+  if (held) held.push(item);
+  else map.set(key, [item]);
 }

@@ -7,9 +7,10 @@ import { loadData, pageAddress } from "./data.js";
 import { filterBy, prepareFacets } from "./facets.js";
 import { findItems } from "./find.js";
 import { showGlyphs } from "./glyphs.js";
-import { itemAt, loadIndex, prepareLater } from "./index.js";
+import { itemAt, loadIndex } from "./index.js";
 import { copyTable, downloadTable } from "./lookup-output.js";
 import { make } from "./nodes.js";
+import { prepareLater } from "./parts.js";
 import { compareAddress, keepPicks, MOST, pickedIds } from "./picks.js";
 import { RANGE_KEYS, rangeSet } from "./ranges.js";
 import { isFiltered, searchFor, stateFrom } from "./state.js";
@@ -61,9 +62,11 @@ function open(page, index, facets) {
   listen(page);
   page.fold.open = matchMedia("(min-width: 64rem)").matches;
   answer(page);
-  drawNow(page);
+  drawRows(page);
+  showCounts(page);
   page.section.dataset.ready = "";
   prepareLater(index);
+  prepareLater(facets);
 }
 
 function listen(page) {
@@ -114,21 +117,29 @@ function restore(page) {
   draw(page);
 }
 
-/** Answer at once, draw with the next frame: typing never waits for the table, nor for the address. */
+/**
+ * Answer at once, draw the rows with the next frame and the counts after them: typing never waits
+ * for the table, the rows never for the counts, nothing for the address.
+ */
 function draw(page) {
   answer(page);
   clearTimeout(page.pause);
   page.pause = setTimeout(() => keep(page), A_PAUSE_MS);
   page.frame ??= requestAnimationFrame(() => {
     page.frame = null;
-    drawNow(page);
+    drawRows(page);
+    clearTimeout(page.counting);
+    page.counting = setTimeout(() => showCounts(page));
   });
 }
 
-function drawNow(page) {
-  page.choices.show(page.state.chosen, page.counts);
+function drawRows(page) {
   drawTable(page.table, drawing(page));
   tell(page);
+}
+
+function showCounts(page) {
+  page.choices.show(page.state.chosen, page.counts);
 }
 
 function answer(page) {
@@ -169,7 +180,7 @@ function sortBy(page, key) {
   page.state.sort = page.state.sort in next ? next[page.state.sort] : key;
   keep(page);
   answer(page);
-  drawNow(page);
+  drawRows(page);
   page.table.tHead.rows[0].cells[1 + columnsFor(page.state.columns).findIndex((one) => one.key === key)]
     ?.querySelector("button").focus();
 }

@@ -16,18 +16,13 @@ const SPELLINGS = [
   [/oxid\b/g, "oxide"],
   [/fluorid\b/g, "fluoride"],
   [/chlorid\b/g, "chloride"],
+  [/'/g, ""],
 ];
 
-/** Names: lower case, no accents, Greek letters spelled out, one spelling, words apart. */
-export function foldName(text) {
-  return foldLines(text.replace(/\n/g, " ")).trim();
-}
-
-/** Many names at once, one a line: the same as each folded alone, but for its outer spaces. */
-export function foldLines(text) {
-  let folded = text.replace(OUTSIDE_ASCII, foldLetters).toLowerCase();
-  for (const [from, to] of SPELLINGS) folded = folded.replace(from, to);
-  return folded.replace(/'/g, "").replace(/[^a-z0-9\n]+/g, " ");
+/** Lower case, no accents, Greek letters spelled out, one spelling of what has several. */
+export function folded(text) {
+  const plain = text.replace(OUTSIDE_ASCII, foldLetters).toLowerCase();
+  return SPELLINGS.reduce((spelled, [from, to]) => spelled.replace(from, to), plain);
 }
 
 /** Letters beyond ASCII in plain ones; most text has none and is spared this. */
@@ -43,11 +38,6 @@ export function plainDigits(text) {
     .normalize("NFKC")
     .replace(/[\u2010-\u2015\u2212]/g, "-")
     .replace(/∞/g, "inf");
-}
-
-/** Codes and identifiers: letters and digits alone. */
-export function foldCode(text) {
-  return plainDigits(text).toLowerCase().replace(/[^a-z0-9]/g, "");
 }
 
 /** The digits of a CAS number, with or without its hyphens; empty where it cannot be one. */

@@ -13,7 +13,7 @@ export function misspelt(index, { words, close }, give) {
 
 /** What misspelt names are held against: the letters of every word, and names without spaces. */
 export function slipsOf({ vocabulary, names }) {
-  const wholes = names.close.text.slice(1, -1).split("\n");
+  const wholes = names.plain.slice(1, -1).split("\n");
   return { masks: masksOf(vocabulary.list), wholes, wholeMasks: masksOf(wholes) };
 }
 

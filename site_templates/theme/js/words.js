@@ -1,23 +1,20 @@
-// The words of many lines in alphabetical order, and which lines each is in.
+// The words of many lines, each once, and which lines each is in.
+
+import { markedWords, unmarked } from "./lines.js";
 
 /**
- * `{ list, from, lines, sizes }` of a text, line by line: word `n` of the list is in the lines
- * `lines[from[n]]` up to `lines[from[n + 1]]`; `sizes` are the numbers of words of the lines.
+ * `{ list, from, lines, sizes }` of a marked text of `linesOf`: word `n` of the list is in the
+ * lines `lines[from[n]]` up to `lines[from[n + 1]]`; `sizes` are the numbers of words of the lines.
  */
-export function wordsIn(text) {
+export function wordsIn(marked) {
   const numbers = new Map();
   const said = [];
-  const sizes = text.split("\n").map((line) => {
-    const words = line.split(" ");
+  const sizes = marked.slice(1, -1).split("\n").map((line) => {
+    const words = markedWords(line);
     for (const word of words) said.push(numberOf(word, numbers));
     return words.length;
   });
-  const list = [...numbers.keys()].sort();
-  const ranks = new Uint32Array(list.length);
-  list.forEach((word, rank) => {
-    ranks[numbers.get(word)] = rank;
-  });
-  return { list, ...sortedOut(said.map((number) => ranks[number]), sizes, list.length), sizes };
+  return { list: [...numbers.keys()].map(unmarked), ...sortedOut(said, sizes, numbers.size), sizes };
 }
 
 function numberOf(word, numbers) {
@@ -41,26 +38,4 @@ function sortedOut(words, sizes, count) {
     }
   });
   return { from, lines };
-}
-
-/** Calls `visit(line)` for every line with a word that begins so, once each time it is there. */
-export function eachLineWith({ list, from, lines }, start, visit) {
-  const [first, last] = beginning(list, start);
-  for (let at = from[first]; at < from[last]; at += 1) visit(lines[at]);
-}
-
-/** Where the texts that begin so stand in a sorted list: the first, and the one after the last. */
-export function beginning(list, start) {
-  return [firstNotBefore(list, start), firstNotBefore(list, `${start}\uffff`)];
-}
-
-function firstNotBefore(list, text) {
-  let low = 0;
-  let high = list.length;
-  while (low < high) {
-    const middle = (low + high) >> 1;
-    if (list[middle] < text) low = middle + 1;
-    else high = middle;
-  }
-  return low;
 }
