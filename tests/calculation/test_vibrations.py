@@ -1,5 +1,7 @@
 """Normal modes against cases that can be worked out by hand, and the units behind them."""
 
+from dataclasses import replace
+
 import numpy as np
 import pytest
 
@@ -10,7 +12,7 @@ from shapeshelf.calculation.units import (
     HARTREE_KJ_MOL,
     INTENSITY_KM_MOL,
 )
-from shapeshelf.calculation.vibrations import vibrations
+from shapeshelf.calculation.vibrations import measured_again, vibrations
 
 WAVENUMBER = 0.05
 """1/cm, rounding of the worked values."""
@@ -76,3 +78,24 @@ def test_number_of_modes(points, count):
     """3n - 5 for a linear molecule, 3n - 6 for a bent one."""
     modes, _ = vibrations(("O", "H", "H"), np.array(points, float), np.eye(9), np.zeros((9, 3)))
     assert len(modes) == count
+
+
+@pytest.mark.parametrize(
+    ("first", "constant", "expected"),
+    [(-50.0, 1e-5, 16.42), (-50.0, -1e-5, -16.42), (-150.0, 1e-5, -150.0), (40.0, -1e-5, 40.0)],
+)
+def test_a_soft_imaginary_mode_is_measured_by_energies(first, constant, expected):
+    """HCl on a weak spring, by hand: sqrt(k/m)/(2 pi c) of 1e-5 hartree/bohr² is 16.42 1/cm.
+
+    2989.2 1/cm belong to 0.331429 hartree/bohr². Steep modes and real ones stay as they are.
+    """
+    coordinates, hessian, slopes = diatomic(0.331429)
+    (mode,), moves = vibrations(("H", "Cl"), coordinates, hessian, slopes)
+    (again,), same = measured_again(
+        (replace(mode, wavenumber_per_cm=first),),
+        moves,
+        coordinates,
+        lambda points: constant / 2 * (np.linalg.norm(points[1] - points[0]) - 2.4) ** 2,
+    )
+    assert again.wavenumber_per_cm == pytest.approx(expected, abs=WAVENUMBER)
+    assert same == pytest.approx(moves)

@@ -3,9 +3,11 @@
 C1  Starts come from the domain model (starting.py); the lowest conformer of a flexible molecule
     (conformers.py) is one more, and the only one at GFN2-xTB level.
 C2  Every start is optimised roughly; the lowest goes on (methods.py says how, for each level).
-C3  It is optimised finely; where a structure of higher symmetry nearby lies no higher, that one.
+C3  It is optimised finely. A structure of higher symmetry that lies no higher takes its place:
+    one nearby or, where groups of atoms turn, the one that the model's leads to.
 C4  Second derivatives there, its symmetry made exact, give wavenumbers and infrared intensities,
-    and prove the minimum; an imaginary mode is followed downhill and C3 repeated.
+    and prove the minimum; a soft imaginary mode is measured again by energies along it, and one
+    that stays imaginary is followed downhill and C3 repeated.
 C5  The dipole moment comes from a single point with diffuse functions.
 C7  What fails is a record that says why.
 """
@@ -33,7 +35,7 @@ from shapeshelf.calculation.model import (
 from shapeshelf.calculation.placements import ends_of, energies_of, placement_results
 from shapeshelf.calculation.starting import Start, shaken, starts_of, with_fitted_lengths
 from shapeshelf.calculation.units import BOHR_ANGSTROM, DEBYE_PER_ATOMIC_UNIT
-from shapeshelf.calculation.vibrations import labelled, masses, vibrations
+from shapeshelf.calculation.vibrations import labelled, masses, measured_again, vibrations
 from shapeshelf.domains.analysis import analyse
 from shapeshelf.geometry.assembly import assemble
 from shapeshelf.geometry.model import Symmetry
@@ -116,7 +118,8 @@ def _calculated(
         told("first optimisation, lowest conformer")
         other = method.roughly(shaken(conformers[0].minimum.coordinates))
         rough = min(rough, other, key=lambda one: one.energy)
-    proven = _proven(method, system, rough, told)
+    model = starts[0].coordinates if _has_turning_groups(molecule) else None
+    proven = _proven(method, system, rough, model, told)
     place = _centred(system, proven.minimum.coordinates)
     check_bonds(molecule, starts[0].coordinates, place)
     check_spin(system, method.spin_squared())
@@ -153,12 +156,14 @@ def _lowest(
     return minima[energies.index(min(energies))], results
 
 
-def _proven(method: Method, system: System, rough: Minimum, told: Told) -> Proven:
+def _proven(
+    method: Method, system: System, rough: Minimum, model: Array | None, told: Told
+) -> Proven:
     """Return the fine minimum (C3), proven (C4). Raises UnusableError where none is found."""
     place, hessian = rough.coordinates, rough.hessian
     for descents in range(MOST_DESCENTS + 1):
         told("optimisation" if not descents else "optimisation, downhill from a saddle")
-        fine = _completed(method, system, method.finely(place, hessian))
+        fine = _completed(method, system, method.finely(place, hessian), model)
         if not fine.converged:
             raise UnusableError(Outcome.NO_MINIMUM, f"not found in {fine.steps} steps")
         told("vibrations")
@@ -166,27 +171,48 @@ def _proven(method: Method, system: System, rough: Minimum, told: Told) -> Prove
         exact = np.array(symmetry.coordinates_angstrom) / BOHR_ANGSTROM
         hessian, slopes = method.second_derivatives(exact, symmetry)
         modes, moves = vibrations(system.elements, exact, hessian, slopes)
+        modes, moves = measured_again(modes, moves, exact, method.energy)
         if not imaginary(modes):
             return Proven(replace(fine, coordinates=exact), modes, moves, descents)
         place = exact + _downhill(moves[0], descents)
     raise UnusableError(Outcome.NO_MINIMUM, f"{MOST_DESCENTS + 1} saddles in a row")
 
 
-def _completed(method: Method, system: System, fine: Minimum) -> Minimum:
-    """Return the minimum of higher symmetry near ``fine`` where it lies no higher, else ``fine``.
+def _completed(method: Method, system: System, fine: Minimum, model: Array | None) -> Minimum:
+    """Return a minimum of higher symmetry than ``fine`` that lies no higher, else ``fine``.
 
-    A motion with next to no force, such as the turning of a methyl group, ends anywhere.
+    A motion with next to no force, such as the turning of a methyl group, ends anywhere. Tried
+    are the symmetric structure near ``fine`` and the one that ``model`` (n, 3) leads to.
     """
-    near = _symmetry_of(system, fine.coordinates, NEARLY_SYMMETRIC_ANGSTROM)
     found = _symmetry_of(system, fine.coordinates, SYMMETRY_TOLERANCE_ANGSTROM)
-    if not fine.converged or len(near.operations) <= len(found.operations):
+    near = _symmetry_of(system, fine.coordinates, NEARLY_SYMMETRIC_ANGSTROM)
+    if not fine.converged:
         return fine
-    place = np.array(near.coordinates_angstrom) / BOHR_ANGSTROM
-    if method.energy(place) > fine.energy + UNCERTAIN_HARTREE:
+    if len(near.operations) > len(found.operations):
+        place = np.array(near.coordinates_angstrom) / BOHR_ANGSTROM
+        if method.energy(place) > fine.energy + UNCERTAIN_HARTREE:
+            return fine
+        return _lower(fine, method.finely(place, fine.hessian))
+    if model is None:
         return fine
-    better = method.finely(place, fine.hessian)
-    lower = better.converged and better.energy <= fine.energy + SAME_HARTREE
-    return better if lower else fine
+    drawn = _symmetry_of(system, model, SYMMETRY_TOLERANCE_ANGSTROM)
+    if len(drawn.operations) <= len(found.operations):
+        return fine
+    rough = method.roughly(np.array(drawn.coordinates_angstrom) / BOHR_ANGSTROM)
+    return _lower(fine, method.finely(rough.coordinates, rough.hessian))
+
+
+def _lower(fine: Minimum, symmetric: Minimum) -> Minimum:
+    lies_no_higher = symmetric.energy <= fine.energy + SAME_HARTREE
+    return symmetric if symmetric.converged and lies_no_higher else fine
+
+
+def _has_turning_groups(molecule: Molecule) -> bool:
+    """Tell whether a bond joins two atoms that each have further neighbours."""
+    return any(
+        min(len(molecule.neighbours(bond.begin)), len(molecule.neighbours(bond.end))) > 1
+        for bond in molecule.bonds
+    )
 
 
 def _symmetry_of(system: System, place: Array, tolerance_angstrom: float) -> Symmetry:

@@ -1,6 +1,6 @@
 """Normal modes from a Hessian: wavenumbers and infrared intensities, double-harmonic."""
 
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import replace
 
 import numpy as np
@@ -17,6 +17,11 @@ from shapeshelf.geometry.vectors import Array
 from shapeshelf.properties.mode_labels import species_of_modes, stretching_shares
 from shapeshelf.reference.elements import ELEMENTS
 from shapeshelf.structure.molecule import Molecule
+
+SOFT_IMAGINARY_PER_CM = -100.0
+"""Steeper ones lead downhill, whatever the noise."""
+ALONG_BOHR = 0.15
+"""Length of a step along a mode: its energy far above noise, bonds hardly stretched."""
 
 
 def vibrations(
@@ -37,6 +42,26 @@ def vibrations(
     strengths = ((moves @ dipole_derivatives) ** 2).sum(axis=1) * INTENSITY_KM_MOL
     modes = tuple(Mode(float(w), float(s)) for w, s in zip(wavenumbers, strengths, strict=True))
     return modes, moves.reshape(len(modes), -1, 3)
+
+
+def measured_again(
+    modes: tuple[Mode, ...], moves: Array, coordinates: Array, energy: Callable[[Array], float]
+) -> tuple[tuple[Mode, ...], Array]:
+    """Return modes and moves, lowest first, soft imaginary ones measured by energies along them.
+
+    Second derivatives of a motion with next to no force, such as the turning of a methyl group,
+    are mostly noise; three energies of points (n, 3) on a line are not.
+    """
+    found = list(modes)
+    for number, mode in enumerate(modes):
+        if SOFT_IMAGINARY_PER_CM < mode.wavenumber_per_cm < 0:
+            step = ALONG_BOHR / np.linalg.norm(moves[number])
+            here, *beside = (energy(coordinates + k * step * moves[number]) for k in (0, 1, -1))
+            value = (sum(beside) - 2 * here) / step**2
+            wavenumber = np.sign(value) * np.sqrt(abs(value)) * WAVENUMBER_PER_ROOT
+            found[number] = replace(mode, wavenumber_per_cm=float(wavenumber))
+    order = sorted(range(len(found)), key=lambda k: found[k].wavenumber_per_cm)
+    return tuple(found[k] for k in order), moves[order]
 
 
 def labelled(
