@@ -131,7 +131,8 @@ TERMS: tuple[Term, ...] = (
     Term(
         "half-width",
         "The ± of a value. For the model, two of three predictions of molecules that it had not been"
-        " fitted to, of the same class, were within it.",
+        " fitted to, of the same class, were within it. In its place stands “by symmetry” where the"
+        " point group shown alone gives the number.",
         ("uncertainty", "plus minus", "error bar"),
     ),
     Term(
