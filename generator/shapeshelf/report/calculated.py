@@ -34,8 +34,10 @@ from shapeshelf.structure.molecule import Vector
 
 SYMMETRY_TOLERANCE_ANGSTROM = 0.02
 """Above what an optimisation leaves, far below a distortion worth a page."""
-SAME_BAND_PER_CM = 0.5
-"""Members of a degenerate mode differ by no more; the structure of a record is symmetric."""
+SAME_BAND_PER_CM = 5.0
+"""Members of a degenerate mode differ by no more: soft ones are measured one by one."""
+MEMBERS = {"E": 2, "T": 3, "G": 4, "H": 5, "Π": 2, "Δ": 2, "Φ": 2}
+"""Modes of one band, by the letter of the species."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -140,8 +142,10 @@ def vibrations_of(record: CalculationRecord) -> CalculatedVibrations | None:
 
 def _same_band(band: Band, mode: Mode) -> bool:
     """Tell whether a mode is one more member of a degenerate band."""
+    if mode.species is None or mode.species != band.species:
+        return False
     near = mode.wavenumber_per_cm - band.wavenumber_per_cm <= SAME_BAND_PER_CM
-    return near and mode.species is not None and mode.species == band.species
+    return near and band.degeneracy < MEMBERS.get(mode.species[0], 1)
 
 
 def _merged(
