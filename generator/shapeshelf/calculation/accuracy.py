@@ -22,7 +22,7 @@ class Accuracy:
 
 
 ACCURACY = {
-    Level.DFT: Accuracy(0.75, 0.012, 0.08),
-    Level.DFT_SMALL: Accuracy(1.5, 0.03, 0.15),
-    Level.XTB: Accuracy(2.8, 0.036, 0.55),
+    Level.DFT: Accuracy(0.7, 0.012, 0.11),
+    Level.DFT_SMALL: Accuracy(1.5, 0.035, 0.2),
+    Level.XTB: Accuracy(2.8, 0.036, 0.7),
 }
