@@ -48,7 +48,7 @@ HEADER = """\
 #   electron-diffraction and microwave literature), degrees; rows marked "crystal" do not count.
 # dipoles: tests/data/dipoles.csv and those rows of dipoles_fit.csv that a published table holds
 #   (NIST CCCBDB, SRD 101, and others as carried by the package chemicals), rigid molecules only,
-#   debye; a moment of nought, which symmetry decides, does not count.
+#   debye; a moment of nought, which symmetry decides, is left out.
 """
 DIPOLES = {
     "dipoles.csv": {"": "NIST CCCBDB"},
@@ -210,10 +210,9 @@ def _dipoles() -> Iterator[Measured]:
             molecule = read_smiles(row["smiles"])
             if row["rotors"] != "0" or not source or turning_bonds(molecule):
                 continue
-            digest = _digest(molecule)
-            if digest not in seen:
-                value = float(row["dipole_D"])
-                yield Measured("dipole", row["name"], row["smiles"], "", value, source, value != 0)
+            digest, value = _digest(molecule), float(row["dipole_D"])
+            if value and digest not in seen:
+                yield Measured("dipole", row["name"], row["smiles"], "", value, source, True)
             seen.add(digest)
 
 
