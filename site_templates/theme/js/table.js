@@ -7,9 +7,11 @@ import { make } from "./nodes.js";
 
 export const AT_ONCE = 50;
 
-/** Draw head and first rows. `picks` is a set of ids; `sortBy(key)` is called by a heading. */
+/** Draw the first rows, and the head where it is another. `picks` is a set of ids; `sortBy(key)` is called by a heading. */
 export function drawTable(table, { columns, sort, compounds, root, picks, sortBy }) {
-  table.tHead.replaceChildren(headLine(columns, sort, sortBy));
+  const headed = `${columns.map(({ key }) => key)} ${sort}`;
+  if (table.dataset.headed !== headed) table.tHead.replaceChildren(headLine(columns, sort, sortBy));
+  table.dataset.headed = headed;
   table.tBodies[0].replaceChildren();
   drawMore(table, { columns, compounds, root, picks });
 }
