@@ -105,6 +105,14 @@ def test_what_the_point_group_fixes_has_a_half_width_of_nought(report):
     assert (moment.basis, moment.value, moment.uncertainty) == (Basis.CALCULATED, 0.0, 0.0)
 
 
+def test_the_half_width_reaches_every_member_of_a_row(report):
+    """Water bent out of shape: bonds of 0.958 and 1.058 Å are one row, 0.05 Å from its mean."""
+    stretched = (WATER[0], tuple(1.1044 * h - 0.1044 * o for h, o in zip(*WATER[1:], strict=True)))
+    value = report(water_record(coordinates_angstrom=(*stretched, WATER[2]))).lengths[0].angstrom
+    assert value.calculated == pytest.approx(1.008, abs=SHAPE_ANGSTROM)
+    assert value.uncertainty == pytest.approx(0.05, abs=SHAPE_ANGSTROM)
+
+
 def test_measured_beats_calculated(report):
     """The calculated value stays beside it."""
     value = report(water_record(), measured=(MEASURED,)).centres[0].angles[0].degrees

@@ -1,7 +1,8 @@
 """What a record of quantum chemistry adds to a report: a structure, angles, lengths, a moment.
 
 K1  Rows of angles and bonds stay those of the model, so that labels do not depend on whether a
-    record is there; a calculated value is the mean over the members of its row.
+    record is there; a calculated value is the mean over the members of its row, and its half-width
+    reaches all of them.
 K2  The structure, its point group and what follows from it are the calculated ones: a record
     counts only where it is a proven minimum of the structure as it is drawn now.
 K3  What that point group fixes, a tetrahedron's angle or a moment of nought, has a half-width
@@ -156,5 +157,8 @@ def _merged(
     half_width: float,
 ) -> Value:
     points: Sequence[Vector] = found.structure.coordinates_angstrom
-    mean = sum(measure(*(points[atom] for atom in one)) for one in members) / len(members)
-    return with_calculated(value, mean, half_width, found.record.method)
+    found_here = [measure(*(points[atom] for atom in one)) for one in members]
+    mean = sum(found_here) / len(found_here)
+    spread = (max(found_here) - min(found_here)) / 2
+    apart = spread if spread > half_width > 0 else half_width
+    return with_calculated(value, mean, apart, found.record.method)
