@@ -114,24 +114,18 @@ def print_small(most: int) -> None:
             record = calculate(molecule, Level.DFT_SMALL, lambda stage: None)
             if _minimum(record):
                 records[_digest(molecule)] = record
-    errors: dict[str, list[tuple[float, str]]] = {"angle": [], "dipole": []}
+    errors: dict[str, list[float]] = {"angle": [], "dipole": []}
     for group in _groups(measured_values()):
         molecule = read_smiles(group[0].smiles)
         record = records.get(_digest(molecule))
         if record and group[0].counts:
-            wanted = [one.value for one in group]
-            moments = _moments(record) * len(group)
-            angle = group[0].quantity == "angle"
-            found = _calculated(molecule, record, group[0].of, wanted) if angle else moments
             errors[group[0].quantity] += [
-                (one - own, group[0].name)
-                for one, own in zip(found, wanted, strict=True)
-                if one is not None
+                found - one.value
+                for found, one in zip(_said(molecule, record, group), group, strict=True)
+                if found is not None
             ]
-    for quantity, rows in errors.items():
-        sizes = np.abs([error for error, _ in rows])
-        print(f"{quantity}: {len(rows)} values, mean {sizes.mean():.3f}, ", end="")
-        print(f"68 % within {np.quantile(sizes, 0.68):.3f}, largest {sizes.max():.2f}")
+    for quantity, found in errors.items():
+        print(f"{quantity}: {len(found)} values, {_spread(found)}")
 
 
 def write_table() -> None:
@@ -161,10 +155,8 @@ def print_lengths() -> None:
                 error = min((x - float(row["length_angstrom"]) for x in found), key=abs)
                 errors[record.level].append((error, row["name"], row["bond"]))
     for level, rows in errors.items():
-        sizes = np.abs([error for error, *_ in rows])
         if rows:
-            print(f"{level}: {len(rows)} bonds, mean {sizes.mean():.3f} Å, ", end="")
-            print(f"68 % {np.quantile(sizes, 0.68):.3f} Å, largest {sizes.max():.3f} Å")
+            print(f"{level}: {len(rows)} bonds, {_spread([error for error, *_ in rows])} (Å)")
         for error, name, bond in sorted(rows, key=lambda row: -abs(row[0]))[:6]:
             print(f"    {error:+.3f}  {name}  {bond}")
 
@@ -252,12 +244,11 @@ def _groups(measured: list[Measured]) -> list[list[Measured]]:
 def _row(group: list[Measured]) -> list[dict[str, object]]:
     molecule = read_smiles(group[0].smiles)
     records = (_with_xtb(group[0].smiles), _minimum(_record(molecule)))
-    wanted = [one.value for one in group]
+    columns = [_said(molecule, record, group) for record in records]
     if group[0].quantity == "dipole":
-        columns = [_moments(record) * len(group) for record in records]
         model = _model_moment(group[0].smiles) * len(group)
     else:
-        columns = [_calculated(molecule, record, group[0].of, wanted) for record in records]
+        wanted = [one.value for one in group]
         model = _matched(_model_angles(group[0].smiles, group[0].of), wanted)
     return [
         {
@@ -287,6 +278,23 @@ def _with_xtb(smiles: str) -> CalculationRecord | None:
 
 def _minimum(record: CalculationRecord | None) -> CalculationRecord | None:
     return record if record and record.outcome is Outcome.MINIMUM else None
+
+
+def _said(
+    molecule: Molecule, record: CalculationRecord | None, group: list[Measured]
+) -> list[float | None]:
+    """Return what a record says of the values of one kind in a molecule."""
+    if group[0].quantity == "dipole":
+        return _moments(record) * len(group)
+    return _calculated(molecule, record, group[0].of, [one.value for one in group])
+
+
+def _spread(errors: list[float]) -> str:
+    sizes = np.abs(errors)
+    return (
+        f"mean {sizes.mean():.3f}, median {np.median(sizes):.3f}, "
+        f"68 % within {np.quantile(sizes, 0.68):.3f}, largest {sizes.max():.3f}"
+    )
 
 
 def _moments(record: CalculationRecord | None) -> list[float | None]:
@@ -367,13 +375,9 @@ def _print_averages(rows: list[dict[str, object]], quantity: str, most_atoms: in
         ]
         if not pairs:
             continue
-        errors = np.abs([error for _, error in pairs])
         molecules = len({row["smiles"] for row, _ in pairs})
-        print(
-            f"  {method:6}{len(pairs):4} values of {molecules:3} molecules: "
-            f"mean {errors.mean():.3f}, median {np.median(errors):.3f}, "
-            f"68 % within {np.quantile(errors, 0.68):.3f}, largest {errors.max():.2f}"
-        )
+        print(f"  {method:6}{len(pairs):4} values of {molecules:3} molecules: ", end="")
+        print(_spread([error for _, error in pairs]))
         for row, error in sorted(pairs, key=lambda pair: -abs(pair[1]))[:8]:
             print(f"         {row['name']:28}{row['of']:10}{row['measured']:>8}{error:+8.2f}")
 

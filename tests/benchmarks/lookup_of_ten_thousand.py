@@ -6,11 +6,14 @@ Names, CAS numbers, formulas, SMILES and InChIKeys are those of real compounds, 
 identifiers that the PyPI package ``chemicals`` carries (PubChem). Shapes, angles, dipole
 moments and spectra come from real reports on REPORTS of them (300 unless told), shared out to
 the rest with every angle moved a little, so that repetition does not flatter the compression.
-Codes, tags and H-statements are invented.
+Codes, tags and H-statements are invented. ``tests/data/queries.csv`` is asked of the demo's
+compounds among them, by opening what stands first in the header's field.
 """
 
+import csv
 import gzip
 import random
+import re
 import statistics
 import sys
 import tempfile
@@ -24,11 +27,14 @@ from chemicals.identifiers import pubchem_db
 
 from shapeshelf.catalogue.model import Entry, StructureInput
 from shapeshelf.errors import ShapeshelfError
-from shapeshelf.pages.lookup_index import lookup_facets, lookup_index
+from shapeshelf.pages.finding import entries
+from shapeshelf.pages.lookup_index import lookup_facets, lookup_index, lookup_rows
 from shapeshelf.pages.lookup_rows import LookupRow, lookup_row
 from shapeshelf.plugin import build_site
 from shapeshelf.report.building import report_on_structure
+from shapeshelf.report.checking import report_on_catalogue
 
+ROOT = Path(__file__).parents[2]
 COMPOUNDS, REPORTS, SEED = 10_000, 300, 20262
 MOST_LETTERS = 60
 CONFIG = """\
@@ -175,6 +181,8 @@ def main() -> None:
         (site / "lookup-index.json").write_bytes(index)
         (site / "lookup-facets.json").write_bytes(facets)
         measure(site, [row.name for row in chance.sample(rows, 20)])
+        (site / "lookup-index.json").write_bytes(index_with_demo(rows))
+        ask(site)
 
 
 def rows_of(count: int, reports: int, chance: random.Random) -> list[LookupRow]:
@@ -234,6 +242,33 @@ def _row(one: Any, number: int, patterns: list[LookupRow], chance: random.Random
         dipole_debye=None if one.charge else round(chance.uniform(0, 5), 2),
         molar_mass_g_mol=round(one.MW, 2),
     )
+
+
+def index_with_demo(rows: list[LookupRow]) -> bytes:
+    """Return the index of the demo among ``rows``, those that it holds itself left out."""
+    catalogue, reports = report_on_catalogue(ROOT / "compounds")
+    own = lookup_rows(reports)
+    keys = {row.inchikey for row in own}
+    mixed = [*own, *(row for row in rows if row.inchikey not in keys)]
+    mixed.sort(key=lambda row: (row.name.casefold(), row.id))
+    return lookup_index(mixed, entries(catalogue, reports))
+
+
+def ask(site: Path) -> None:
+    """Print how many queries open what is expected, and those that do not."""
+    cases = list(csv.DictReader((ROOT / "tests/data/queries.csv").read_text("utf-8").splitlines()))
+    missed = []
+    with served(site) as home, launched() as browser:
+        page = browser.new_page()
+        for case in cases:
+            page.goto(f"{home}compounds/water/")
+            page.locator("#find").fill(case["query"])
+            with page.expect_navigation(wait_until="commit"):
+                page.locator("#find").press("Enter")
+            last = re.split(r"[/=#]", page.url.rstrip("/"))[-1]
+            if last != case["expected"]:
+                missed.append(f"{case['query']}: {page.url}")
+    print(f"{len(cases) - len(missed)} of {len(cases)} queries open what is expected", *missed)
 
 
 def small_site(folder: Path) -> Path:

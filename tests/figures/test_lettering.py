@@ -102,8 +102,15 @@ def test_lengths_and_moments():
 
 @pytest.mark.parametrize(
     ("plus_minus", "expected"),
-    [(None, ""), (0.5, " ± 0.5"), (2.13, " ± 2"), (0.04, " ± 0.04"), (12.0, " ± 12")],
+    [
+        (None, ""),
+        (0.5, " ± 0.5"),
+        (2.13, " ± 2"),
+        (0.04, " ± 0.04"),
+        (12.0, " ± 12"),
+        (1.2, " ± 1.2"),
+    ],
 )
 def test_plus_minus(plus_minus, expected):
-    """± has one significant digit below one, whole numbers above."""
+    """± has one significant digit, two where it begins with a 1, and no decimals from ten up."""
     assert plus_minus_text(plus_minus) == expected

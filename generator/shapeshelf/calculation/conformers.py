@@ -53,7 +53,23 @@ class Conformer:
 
 def turning_bonds(molecule: Molecule) -> tuple[Bond, ...]:
     """Return the bonds whose turning makes other conformers (N1)."""
-    return tuple(bond for bond in molecule.bonds if _turns(molecule, bond))
+    return tuple(
+        bond
+        for bond in bonds_with_turning_ends(molecule)
+        if _makes_conformers(molecule, bond.begin, bond.end)
+        and _makes_conformers(molecule, bond.end, bond.begin)
+    )
+
+
+def bonds_with_turning_ends(molecule: Molecule) -> tuple[Bond, ...]:
+    """Return the single bonds in no ring between atoms that each have further neighbours."""
+    return tuple(
+        bond
+        for bond in molecule.bonds
+        if bond.order == 1
+        and min(len(molecule.neighbours(end)) for end in (bond.begin, bond.end)) > 1
+        and not _in_ring(molecule, bond)
+    )
 
 
 def conformers_of(molecule: Molecule, system: System, assembled: Array) -> tuple[Conformer, ...]:
@@ -99,18 +115,11 @@ def averaged(conformers: Sequence[Conformer]) -> ConformerResult | None:
     )
 
 
-def _turns(molecule: Molecule, bond: Bond) -> bool:
-    if bond.order != 1 or _in_ring(molecule, bond):
-        return False
-    ends = ((bond.begin, bond.end), (bond.end, bond.begin))
-    return all(_makes_conformers(molecule, atom, other) for atom, other in ends)
-
-
 def _makes_conformers(molecule: Molecule, atom: int, other: int) -> bool:
     """Tell whether turning the far side of ``atom`` gives another structure."""
     beyond = [one for one in molecule.neighbours(atom) if one != other]
     alike = len({molecule.classes[one] for one in beyond}) == 1
-    return bool(beyond) and not (alike and len(beyond) >= SAME_THRICE)
+    return not (alike and len(beyond) >= SAME_THRICE)
 
 
 def _in_ring(molecule: Molecule, bond: Bond) -> bool:

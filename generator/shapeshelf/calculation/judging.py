@@ -15,6 +15,8 @@ IMAGINARY_PER_CM = -20.0
 """An imaginary mode below this is a way downhill; above it, noise of the grid in a flat one."""
 MOST_CONTAMINATION = 0.1
 """Largest excess of <S²> over S(S+1) (common practice, no source)."""
+SYMMETRY_TOLERANCE_ANGSTROM = 0.02
+"""Above what optimising leaves of the shaking, far below a distortion worth a page."""
 BROKEN = 1.45
 """A bond longer than the start's times this is broken."""
 

@@ -17,10 +17,16 @@ from dataclasses import dataclass, replace
 
 import numpy as np
 
-from shapeshelf.calculation.conformers import averaged, conformers_of
+from shapeshelf.calculation.conformers import averaged, bonds_with_turning_ends, conformers_of
 from shapeshelf.calculation.engines import engine_versions
 from shapeshelf.calculation.failing import UnusableError
-from shapeshelf.calculation.judging import check_bonds, check_spin, check_system, imaginary
+from shapeshelf.calculation.judging import (
+    SYMMETRY_TOLERANCE_ANGSTROM,
+    check_bonds,
+    check_spin,
+    check_system,
+    imaginary,
+)
 from shapeshelf.calculation.keys import settled, structure_key
 from shapeshelf.calculation.methods import NAMES, Method, method_for, settings_of
 from shapeshelf.calculation.minimising import Minimum
@@ -49,8 +55,6 @@ Told = Callable[[str], None]
 MOST_DESCENTS = 3
 DESCENT_BOHR, DESCENT_GROWTH = 0.3, 3.0
 """A short way down a steep mode; a long one where a shallow saddle held the optimisation."""
-SYMMETRY_TOLERANCE_ANGSTROM = 0.02
-"""Above what optimising leaves of the shaking, far below a distortion worth a page."""
 NEARLY_SYMMETRIC_ANGSTROM = 0.2
 """How far a motion with next to no force may have stopped short of a symmetric structure."""
 UNCERTAIN_HARTREE = 1e-3
@@ -118,7 +122,7 @@ def _calculated(
         told("first optimisation, lowest conformer")
         other = method.roughly(shaken(conformers[0].minimum.coordinates))
         rough = min(rough, other, key=lambda one: one.energy)
-    model = starts[0].coordinates if _has_turning_groups(molecule) else None
+    model = starts[0].coordinates if bonds_with_turning_ends(molecule) else None
     proven = _proven(method, system, rough, model, told)
     place = _centred(system, proven.minimum.coordinates)
     check_bonds(molecule, starts[0].coordinates, place)
@@ -184,10 +188,10 @@ def _completed(method: Method, system: System, fine: Minimum, model: Array | Non
     A motion with next to no force, such as the turning of a methyl group, ends anywhere. Tried
     are the symmetric structure near ``fine`` and the one that ``model`` (n, 3) leads to.
     """
-    found = _symmetry_of(system, fine.coordinates, SYMMETRY_TOLERANCE_ANGSTROM)
-    near = _symmetry_of(system, fine.coordinates, NEARLY_SYMMETRIC_ANGSTROM)
     if not fine.converged:
         return fine
+    found = _symmetry_of(system, fine.coordinates, SYMMETRY_TOLERANCE_ANGSTROM)
+    near = _symmetry_of(system, fine.coordinates, NEARLY_SYMMETRIC_ANGSTROM)
     if len(near.operations) > len(found.operations):
         place = np.array(near.coordinates_angstrom) / BOHR_ANGSTROM
         if method.energy(place) > fine.energy + UNCERTAIN_HARTREE:
@@ -205,14 +209,6 @@ def _completed(method: Method, system: System, fine: Minimum, model: Array | Non
 def _lower(fine: Minimum, symmetric: Minimum) -> Minimum:
     lies_no_higher = symmetric.energy <= fine.energy + SAME_HARTREE
     return symmetric if symmetric.converged and lies_no_higher else fine
-
-
-def _has_turning_groups(molecule: Molecule) -> bool:
-    """Tell whether a bond joins two atoms that each have further neighbours."""
-    return any(
-        min(len(molecule.neighbours(bond.begin)), len(molecule.neighbours(bond.end))) > 1
-        for bond in molecule.bonds
-    )
 
 
 def _symmetry_of(system: System, place: Array, tolerance_angstrom: float) -> Symmetry:

@@ -38,7 +38,7 @@ def vibrations(
     values, inner = np.linalg.eigh(basis.T @ ((weighted + weighted.T) / 2) @ basis)
     vectors = basis @ inner
     moves = (vectors * weights[:, None]).T
-    wavenumbers = np.sign(values) * np.sqrt(np.abs(values)) * WAVENUMBER_PER_ROOT
+    wavenumbers = _wavenumbers(values)
     strengths = ((moves @ dipole_derivatives) ** 2).sum(axis=1) * INTENSITY_KM_MOL
     modes = tuple(Mode(float(w), float(s)) for w, s in zip(wavenumbers, strengths, strict=True))
     return modes, moves.reshape(len(modes), -1, 3)
@@ -52,14 +52,17 @@ def measured_again(
     Second derivatives of a motion with next to no force, such as the turning of a methyl group,
     are mostly noise; three energies of points (n, 3) on a line are not.
     """
-    found = list(modes)
-    for number, mode in enumerate(modes):
-        if SOFT_IMAGINARY_PER_CM < mode.wavenumber_per_cm < 0:
-            step = ALONG_BOHR / np.linalg.norm(moves[number])
-            here, *beside = (energy(coordinates + k * step * moves[number]) for k in (0, 1, -1))
-            value = (sum(beside) - 2 * here) / step**2
-            wavenumber = np.sign(value) * np.sqrt(abs(value)) * WAVENUMBER_PER_ROOT
-            found[number] = replace(mode, wavenumber_per_cm=float(wavenumber))
+    soft = [k for k, one in enumerate(modes) if SOFT_IMAGINARY_PER_CM < one.wavenumber_per_cm < 0]
+    if not soft:
+        return modes, moves
+    found, here = list(modes), energy(coordinates)
+    for number in soft:
+        step = ALONG_BOHR / np.linalg.norm(moves[number])
+        beside = [energy(coordinates + way * step * moves[number]) for way in (1, -1)]
+        value = (sum(beside) - 2 * here) / step**2
+        found[number] = replace(
+            modes[number], wavenumber_per_cm=float(_wavenumbers(np.array(value)))
+        )
     order = sorted(range(len(found)), key=lambda k: found[k].wavenumber_per_cm)
     return tuple(found[k] for k in order), moves[order]
 
@@ -87,6 +90,11 @@ def masses(elements: Sequence[str]) -> Array:
     return np.array([ELEMENTS[symbol].atomic_weight for symbol in elements]) * (
         DALTON_ELECTRON_MASSES
     )
+
+
+def _wavenumbers(values: Array) -> Array:
+    """Return wavenumbers from mass-weighted force constants, negative where imaginary."""
+    return np.asarray(np.sign(values) * np.sqrt(np.abs(values)) * WAVENUMBER_PER_ROOT)
 
 
 def _internal_basis(elements: Sequence[str], coordinates: Array) -> Array:

@@ -38,10 +38,15 @@ def debye_text(value: Value) -> str:
 
 
 def plus_minus_text(uncertainty: float | None) -> str:
-    """Return `` ± 0.5`` with one or two significant digits, nothing where it is not known."""
+    """Return `` ± 0.5``, nothing where it is not known: one significant digit, of a 1 two.
+
+    Rounding ± 1.2 to ± 1 would hide a fifth of it (common practice, no source).
+    """
     if not uncertainty:
         return ""
-    decimals = max(0, -math.floor(math.log10(uncertainty)))
+    magnitude = math.floor(math.log10(uncertainty))
+    leads_with_one = uncertainty < 2 * 10.0**magnitude
+    decimals = max(0, leads_with_one - magnitude)
     return f" ± {uncertainty:.{decimals}f}"
 
 

@@ -15,6 +15,7 @@ from dataclasses import dataclass, replace
 import numpy as np
 
 from shapeshelf.calculation.accuracy import ACCURACY, Accuracy
+from shapeshelf.calculation.judging import SYMMETRY_TOLERANCE_ANGSTROM
 from shapeshelf.calculation.mapping import laid_onto
 from shapeshelf.calculation.model import CalculationRecord, Mode
 from shapeshelf.geometry.fixed import is_fixed
@@ -33,8 +34,6 @@ from shapeshelf.report.model import (
 from shapeshelf.report.values import with_calculated
 from shapeshelf.structure.molecule import Vector
 
-SYMMETRY_TOLERANCE_ANGSTROM = 0.02
-"""Above what an optimisation leaves, far below a distortion worth a page."""
 SAME_BAND_PER_CM = 5.0
 """Members of a degenerate mode differ by no more: soft ones are measured one by one."""
 MEMBERS = {"E": 2, "T": 3, "G": 4, "H": 5, "Π": 2, "Δ": 2, "Φ": 2}
@@ -106,13 +105,10 @@ def with_calculated_moment(value: Value, found: Calculated) -> Value:
     record = found.record
     if record.dipole_debye is None:
         return value
-    half_width = found.accuracy.dipole_debye
+    moment, half_width = float(np.linalg.norm(record.dipole_debye)), found.accuracy.dipole_debye
     if record.conformers is not None and record.level is record.conformers.level:
-        return with_calculated(
-            value, record.conformers.mean_dipole_debye, half_width, record.method
-        )
-    moment = float(np.linalg.norm(record.dipole_debye))
-    if not can_be_polar(found.symmetry):
+        moment = record.conformers.mean_dipole_debye
+    elif not can_be_polar(found.symmetry):
         moment, half_width = 0.0, 0.0
     return with_calculated(value, moment, half_width, record.method)
 
@@ -157,8 +153,7 @@ def _merged(
     half_width: float,
 ) -> Value:
     points: Sequence[Vector] = found.structure.coordinates_angstrom
-    found_here = [measure(*(points[atom] for atom in one)) for one in members]
-    mean = sum(found_here) / len(found_here)
-    spread = (max(found_here) - min(found_here)) / 2
-    apart = spread if spread > half_width > 0 else half_width
-    return with_calculated(value, mean, apart, found.record.method)
+    measures = [measure(*(points[atom] for atom in one)) for one in members]
+    if half_width:
+        half_width = max(half_width, (max(measures) - min(measures)) / 2)
+    return with_calculated(value, sum(measures) / len(measures), half_width, found.record.method)
