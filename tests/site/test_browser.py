@@ -66,7 +66,8 @@ def test_every_kind_of_page_of_the_demo_is_quiet(demo_visit: Visit) -> None:
     page.set_viewport_size(PHONE)
     for path in (
         "", "lookup/", "shapes/", "shapes/see-saw/", "compounds/", "compounds/sf4/",
-        "compounds/dppe/", "compounds/nitrate/", "sources/", "protocols/", "protocols/tb-p01/",
+        "compounds/dppe/", "compounds/nitrate/", "compounds/s2f10/",
+        "compounds/oxidohexafluorotellurate/", "sources/", "protocols/", "protocols/tb-p01/",
         "methods/",
         "start/", "glossary/", "compare/?ids=sf4,clf3,xef4", "lookup/?shape=see-saw",
     ):  # fmt: skip
